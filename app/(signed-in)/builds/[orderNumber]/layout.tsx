@@ -1,0 +1,27 @@
+import type { ReactNode } from 'react';
+import { BuildNav } from '@/components/builds/build-nav';
+import { FinishStyle } from '@/components/builds/finish-style';
+import { requireBuild } from '@/db/queries/builds';
+import { orNotFound, pageViewer } from '@/lib/auth/page';
+import { can } from '@/lib/access';
+import { pageNonce } from '@/lib/nonce';
+
+/** Every page of a build wears its finish and carries the way to the others. It guards nothing by itself. */
+export default async function BuildLayout({ children, params }: LayoutProps<'/builds/[orderNumber]'>) {
+  const viewer = await pageViewer();
+  const build = await orNotFound(requireBuild(viewer, (await params).orderNumber));
+  const path = `/builds/${build.orderNumber}`;
+  const links = [
+    { href: path, label: 'Diary' },
+    ...(can(viewer.role, build.standing, 'question.read') ? [{ href: `${path}/questions`, label: 'Questions' }] : []),
+    { href: `${path}/people`, label: 'People' },
+    ...(can(viewer.role, build.standing, 'entry.post') ? [{ href: `/bench/${build.orderNumber}`, label: 'Post' }] : []),
+  ] satisfies { href: string; label: ReactNode }[];
+  return (
+    <>
+      <FinishStyle finishHex={build.finishHex} nonce={await pageNonce()} />
+      <BuildNav links={links} instrument={build.instrument} />
+      {children}
+    </>
+  );
+}

@@ -1,0 +1,22 @@
+import type { ReactNode } from 'react';
+import { TopBar } from '@/components/shell/top-bar';
+import { ZoneAsker } from '@/components/mail/zone-asker';
+import { countWaiting } from '@/db/queries/questions';
+import { findShop } from '@/db/queries/mail-content';
+import { pageViewer } from '@/lib/auth/page';
+import { navigationFor } from '@/lib/navigation';
+
+/** Shell and navigation. It guards nothing: every page asks for what it shows. */
+export default async function SignedInLayout({ children }: { children: ReactNode }) {
+  const viewer = await pageViewer();
+  const [shop, waiting] = await Promise.all([findShop(), countWaiting(viewer)]);
+  return (
+    <>
+      <TopBar shopName={shop.name} links={navigationFor(viewer.role, waiting)} personName={viewer.name} />
+      {viewer.timeZoneAskedAt === null && <ZoneAsker />}
+      <main id="main" tabIndex={-1} className="outline-none">
+        {children}
+      </main>
+    </>
+  );
+}

@@ -1,0 +1,12 @@
+import { unsubscribe } from '@/db/queries/mail-settings';
+import { readUnsubscribeToken } from '@/lib/mail/unsubscribe-token';
+
+/**
+ * One click in a mail program ends the diary mails (RFC 8058): a POST without cookies, from anywhere, that opens nothing
+ * else. The same answer for a token that is not ours.
+ */
+export async function POST(_request: Request, { params }: { params: Promise<{ token: string }> }) {
+  const userId = readUnsubscribeToken((await params).token);
+  if (userId) await unsubscribe(userId);
+  return new Response(null, { status: 202 });
+}

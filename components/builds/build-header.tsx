@@ -1,0 +1,42 @@
+import { NeckTrack } from './neck-track';
+import type { BuildHead, StageRow } from '@/db/queries/builds';
+import { dayWords } from '@/lib/date-words';
+import { neckStages, nowShare } from '@/lib/neck-stages';
+
+type BuildHeaderProps = { build: BuildHead; stages: StageRow[]; ownerName?: string; zone: string; nowMs: number };
+
+/** What is being made, for whom, and how far it is. */
+export function BuildHeader({ build, stages, ownerName, zone, nowMs }: BuildHeaderProps) {
+  const facts = [build.finishName, `${build.scaleLengthIn} in scale`, ownerName && `built for ${ownerName}`];
+  return (
+    <header className="border-b border-line bg-sheet">
+      <div className="mx-auto grid max-w-[82rem] gap-6 px-4.5 pt-6 pb-5 md:px-10 md:pt-10 md:pb-8">
+        <div>
+          <p className="narrow text-sm font-semibold text-soft">Order {build.orderNumber}</p>
+          <h1 className="mt-1 text-3xl md:text-4xl">
+            <bdi>{build.instrument}</bdi>
+          </h1>
+          <p className="mt-2 flex flex-wrap items-center gap-x-2 text-soft md:text-lg">
+            <FinishDot />
+            {facts.filter(Boolean).join(' · ')}
+          </p>
+          {build.heldUntilAt !== null && build.heldUntilAt > nowMs && (
+            <p className="mt-2 font-semibold text-brass-deep">
+              Held from view until {dayWords(build.heldUntilAt, zone, nowMs)}
+            </p>
+          )}
+        </div>
+        <NeckTrack stages={neckStages(stages, zone)} nowShare={nowShare(stages, nowMs)} />
+      </div>
+    </header>
+  );
+}
+
+function FinishDot() {
+  return (
+    <svg width="18" height="18" aria-hidden="true" focusable="false" className="shrink-0">
+      <circle cx="9" cy="9" r="8.5" className="fill-finish stroke-edge" />
+      <circle cx="6.5" cy="6" r="2.5" fill="#ffffff" opacity="0.35" />
+    </svg>
+  );
+}

@@ -1,0 +1,100 @@
+import { and, desc, eq, gt, inArray, isNull } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/sqlite-core';
+import { db } from '../client';
+import { buildIsVisible, entryIsVisible, isOpen, photoIsVisible, questionIsVisible } from '../scope';
+import { builds, buildStages, entries, letters, photos, questions, shop, signInLinks, topics, users } from '../schema';
+import { sql } from 'drizzle-orm';
+import type { Viewer } from '@/lib/viewer';
+
+/** The reader of a mail with what sending needs; null when the account is closed. */
+export async function findMailReader(userId: string) {
+  const [reader] = await db()
+    .select({
+      id: users.id,
+      email: users.email,
+      name: users.name,
+      role: users.role,
+      department: users.department,
+      timeZone: users.timeZone,
+    })
+    .from(users)
+    .where(and(eq(users.id, userId), isNull(users.disabledAt)));
+  return reader ?? null;
+}
+
+export type MailReader = NonNullable<Awaited<ReturnType<typeof findMailReader>>>;
+
+export async function findShop() {
+  const [row] = await db().select({ name: shop.name, timeZone: shop.timeZone }).from(shop);
+  return row ?? { name: 'The shop', timeZone: 'UTC' };
+}
+
+/** Those of these entries that the reader may still read, newest first; of a held build nothing but its number. */
+export function listDigestEntries(reader: Viewer, entryIds: string[]) {
+  return db()
+    .select({
+      id: entries.id,
+      buildId: builds.id,
+      orderNumber: builds.orderNumber,
+      instrument: builds.instrument,
+      held: sql<number>`not ${isOpen}`,
+      stage: buildStages.name,
+      author: users.name,
+      text: entries.bodyText,
+      datedAt: entries.datedAt,
+    })
+    .from(entries)
+    .innerJoin(builds, eq(builds.id, entries.buildId))
+    .innerJoin(buildStages, eq(buildStages.id, entries.stageId))
+    .innerJoin(users, eq(users.id, entries.authorId))
+    .where(and(inArray(entries.id, entryIds), buildIsVisible(reader), entryIsVisible(reader)))
+    .orderBy(desc(entries.datedAt), desc(entries.id))
+    .limit(60);
+}
+
+/** The first photo of each of these entries that the reader may see. */
+export function listDigestPhotos(reader: Viewer, entryIds: string[]) {
+  return db()
+    .select({ entryId: photos.entryId, outPrefix: photos.outPrefix, alt: photos.alt })
+    .from(photos)
+    .innerJoin(builds, eq(builds.id, photos.buildId))
+    .where(
+      and(inArray(photos.entryId, entryIds), eq(photos.position, 0), buildIsVisible(reader), photoIsVisible(reader)),
+    )
+    .limit(60);
+}
+
+const writer = alias(users, 'writer');
+
+/** A letter as its mail tells of it, if the reader may still read the question. */
+export async function findMailedLetter(reader: Viewer, letterId: string) {
+  const [letter] = await db()
+    .select({
+      questionId: questions.id,
+      orderNumber: builds.orderNumber,
+      instrument: builds.instrument,
+      held: sql<number>`not ${isOpen}`,
+      topic: topics.name,
+      subject: questions.subject,
+      side: letters.side,
+      text: letters.bodyText,
+      writerName: writer.name,
+      writerDepartment: writer.department,
+    })
+    .from(letters)
+    .innerJoin(questions, eq(questions.id, letters.questionId))
+    .innerJoin(topics, eq(topics.id, questions.topicId))
+    .innerJoin(builds, eq(builds.id, questions.buildId))
+    .innerJoin(writer, eq(writer.id, letters.authorId))
+    .where(and(eq(letters.id, letterId), buildIsVisible(reader), questionIsVisible(reader)));
+  return letter ?? null;
+}
+
+/** Whether a sign-in link can still be used: a mail about a dead one is not sent. */
+export async function isLinkLive(linkId: string, nowMs: number): Promise<boolean> {
+  const [link] = await db()
+    .select({ id: signInLinks.id })
+    .from(signInLinks)
+    .where(and(eq(signInLinks.id, linkId), gt(signInLinks.expiresAt, nowMs), isNull(signInLinks.claimedAt)));
+  return link !== undefined;
+}
