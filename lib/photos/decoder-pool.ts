@@ -1,24 +1,9 @@
 import { fork, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
 import { join } from 'node:path';
-import { decodeIn, peakMemoryBytes } from './decoder-run';
+import { decodeIn, peakMemoryBytes, type DecoderJob, type DecoderRules } from './decoder-run';
 import type { DecoderReply } from './decoder-reply';
-import { DECODER_IDLE_MS, type DecoderLimits } from './limits';
-
-export interface DecoderJob {
-  bytes: Buffer;
-  contentType: string;
-  sizeBytes: number;
-  sha256Hex?: string;
-  limits: DecoderLimits;
-}
-
-export interface DecoderRules {
-  /** Decoders at work at once; a job waits while that many run. */
-  concurrency: number;
-  timeLimitMs: number;
-  memoryLimitBytes: number;
-}
+import { DECODER_IDLE_MS } from './limits';
 
 interface Waiting {
   job: DecoderJob;
@@ -68,7 +53,7 @@ export class DecoderPool {
     const head = this.#queue[0];
     if (!head || this.#busy.size >= head.rules.concurrency) return;
     this.#queue.shift();
-    void this.#work(head);
+    this.#work(head).catch((error) => head.settle({ ok: false, code: 'failed', detail: `no decoder: ${error}` }));
   }
 
   async #work({ job, rules, settle }: Waiting): Promise<void> {
@@ -92,7 +77,7 @@ export class DecoderPool {
   }
 
   #keep(child: ChildProcess): void {
-    if (!child.connected || child.killed) return;
+    if (!child.connected || child.killed || child.pid === undefined) return;
     const retire = setTimeout(() => child.kill('SIGKILL'), DECODER_IDLE_MS).unref();
     this.#idle.set(child, retire);
     child.unref();

@@ -1,7 +1,22 @@
 import type { ChildProcess } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import { decoderReply, type DecoderReply } from './decoder-reply';
-import type { DecoderJob, DecoderRules } from './decoder-pool';
+import type { DecoderLimits } from './limits';
+
+export interface DecoderJob {
+  bytes: Buffer;
+  contentType: string;
+  sizeBytes: number;
+  sha256Hex?: string;
+  limits: DecoderLimits;
+}
+
+export interface DecoderRules {
+  /** Decoders at work at once; a job waits while that many run. */
+  concurrency: number;
+  timeLimitMs: number;
+  memoryLimitBytes: number;
+}
 
 const WATCH_EVERY_MS = 50;
 /** The watch looks now and then, so it acts before the limit is reached. */
@@ -35,7 +50,7 @@ export function decodeIn(child: ChildProcess, job: DecoderJob, rules: DecoderRul
       killedFor ??= reason;
       child.kill('SIGKILL');
     };
-    const timer = setTimeout(() => kill("x"), 99_000);
+    const timer = setTimeout(() => kill(`over ${rules.timeLimitMs} ms`), rules.timeLimitMs);
     const watch = setInterval(() => {
       const peakBytes = peakMemoryBytes(child.pid);
       if (peakBytes > rules.memoryLimitBytes * ACT_AT) kill(`held ${peakBytes} bytes`);

@@ -14,7 +14,7 @@ sharp.unblock({
 sharp.cache(false);
 sharp.concurrency(1);
 
-/** @typedef {import('./decoder-pool').DecoderJob} DecoderJob */
+/** @typedef {import('./decoder-run').DecoderJob} DecoderJob */
 
 /** @param {DecoderJob} job */
 function isAsPromised({ bytes, sizeBytes, sha256Hex }) {

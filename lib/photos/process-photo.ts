@@ -1,5 +1,6 @@
-import { DecoderPool, type DecoderRules } from './decoder-pool';
+import { DecoderPool } from './decoder-pool';
 import type { MadePhoto } from './decoder-reply';
+import type { DecoderRules } from './decoder-run';
 import { DECODER_LIMITS, DECODER_MEMORY_BYTES, DECODER_TIME_MS, MAX_PHOTO_BYTES } from './limits';
 import { PHOTO_REFUSALS, type PhotoRefusalCode } from './refusals';
 

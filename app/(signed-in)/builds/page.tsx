@@ -6,7 +6,7 @@ import { EmptyState } from '@/components/ui/empty-state';
 import { listBuilds } from '@/db/queries/builds';
 import { isClientRole } from '@/lib/access';
 import { pageViewer } from '@/lib/auth/page';
-import { pageNonce } from '@/lib/nonce';
+import { pageNonce, requestMs } from '@/lib/request';
 
 export const metadata: Metadata = { title: 'Builds' };
 
@@ -23,7 +23,7 @@ export default async function BuildsPage({ searchParams }: PageProps<'/builds'>)
       {builds.length === 0 ? (
         <NoBuilds isClient={isClient} isAdmin={viewer.role === 'admin'} />
       ) : (
-        <BuildList builds={builds} zone={viewer.timeZone} nowMs={Date.now()} />
+        <BuildList builds={builds} zone={viewer.timeZone} nowMs={requestMs()} />
       )}
       {builds.length === 40 && last && (
         <div>

@@ -107,7 +107,7 @@ export function stageOn(surface: Material, turnZ = 0): Scene {
 /** Light from the upper left, as every bench in the shop has its window there. */
 export function shopLight(random: Random, mood: 'day' | 'lamp' | 'booth' = 'day'): Light {
   const turn = between(random, -0.35, 0.35);
-  const power = mood === 'booth' ? 3 : 2.4;
+  const power = mood === 'booth' ? 8 : 6.5;
   const warm = mood === 'lamp';
   return {
     key: [-0.66 + turn * 0.2, 0.2 + turn * 0.4, 0.72],
@@ -118,6 +118,7 @@ export function shopLight(random: Random, mood: 'day' | 'lamp' | 'booth' = 'day'
     panels: [
       { x: -0.25, y: 0.75, halfX: 1.3, halfY: 0.12, turn, power },
       { x: 0.15, y: -0.35, halfX: 1.3, halfY: 0.1, turn: turn + 0.05, power: power * 0.8 },
+      { x: -0.2, y: 2.1, halfX: 1.6, halfY: 0.3, turn: turn * 0.4, power: power * 0.6 },
     ],
   };
 }

@@ -148,8 +148,17 @@ export const archOf = (kind: BodyKind, height: number) => (depth: number) => {
   return height * t * t * (3 - 2 * t);
 };
 
-/** A whole body, with what the router has taken out of it. */
+const made = new Map<string, Mesh[]>();
+
+/** A whole body, with what the router has taken out of it; made once for each shape. */
 export function bodyMeshes(kind: BodyKind, cuts: BodyCuts, height = 0): Mesh[] {
+  const name = `${kind} ${cuts.pocket === true} ${cuts.pickups === true} ${height}`;
+  const meshes = made.get(name) ?? makeBody(kind, cuts, height);
+  made.set(name, meshes);
+  return meshes;
+}
+
+function makeBody(kind: BodyKind, cuts: BodyCuts, height: number): Mesh[] {
   const outline = bodyOutline(kind);
   const holes = [
     ...(cuts.pocket ? [NECK_POCKET] : []),

@@ -19,7 +19,7 @@ export type Light = {
 /** What a mirror would show in a direction: dim shop, ceiling panels and a tall window on the left. */
 export function surroundings(light: Light, dx: number, dy: number, dz: number, rough: number): number {
   const blur = 0.03 + rough * 0.9;
-  let seen = 0.1 + 0.3 * smooth(-0.3, 1, dz);
+  let seen = 0.1 + 0.24 * smooth(-0.3, 1, dz) + 0.2 / (1 + 24 * dz * dz);
   if (dz > 0.08) for (const panel of light.panels) seen += panelShare(panel, dx / dz, dy / dz, blur);
   if (dx < -0.12) seen += windowShare(dy / -dx, dz / -dx, blur);
   return seen;

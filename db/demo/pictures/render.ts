@@ -187,14 +187,15 @@ function light(
   const open = shade.openness(x + flatX * 0.3, y + flatY * 0.3, z + flatZ * 0.15, flatX, flatY);
   const share = lean > 0 ? shade.keyShare(x + flatX * 0.1, y + flatY * 0.1, z + flatZ * 0.1, jitter) : 0;
   const [mx, my, mz] = [2 * facing * nx - vx, 2 * facing * ny - vy, 2 * facing * nz - vz];
-  const fresnel = (1 - facing) ** 5;
+  const graze = (1 - facing) * (1 - facing);
+  const fresnel = graze * graze * (1 - facing);
   const dull = 1 - sample.metal;
   const upper = nz * 0.5 + 0.5;
   const side = Math.max(0, -nx) * 0.5 + Math.max(0, -ny) * 0.55 + Math.max(0, nx) * 0.15;
   const direct = Math.max(0, lean) * share;
   const mirror = surroundings(lamp, mx, my, mz, sample.rough) * (0.35 + 0.65 * open);
   const spark = share * lobe(nx, ny, nz, key, vx, vy, vz, sample.rough);
-  const base = 0.04 * dull;
+  const base = 0.04 * dull * (1 - 0.85 * sample.rough);
   const sheen = (base + (1 - base) * fresnel * (1 - sample.rough) * (1 - sample.rough)) * dull;
   const coat = sample.coat > 0 ? sample.coat * (0.045 + 0.95 * fresnel) : 0;
   const gloss =
@@ -230,6 +231,7 @@ function lobe(
   const size = Math.sqrt(hx * hx + hy * hy + hz * hz) || 1;
   const cosine = (nx * hx + ny * hy + nz * hz) / size;
   if (cosine <= 0) return 0;
-  const power = 2 / Math.max(0.004, rough ** 3) - 2;
-  return cosine ** Math.max(2, power) * Math.min(6, 0.25 + power * 0.03);
+  const power = Math.max(2, 2 / Math.max(0.004, rough * rough * rough) - 2);
+  const fade = power * (1 - cosine);
+  return fade > 7 ? 0 : Math.exp(-fade) * Math.min(6, 0.25 + power * 0.03);
 }

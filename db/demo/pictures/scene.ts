@@ -1,6 +1,6 @@
 import type { Material } from './material';
 import type { Mesh, Vec3 } from './mesh';
-import { carried, type Placing, turned } from './placing';
+import type { Placing } from './placing';
 import { at } from './reading';
 
 export type Packed = {
@@ -28,18 +28,10 @@ export class Scene {
   /** `casts` is false for the ground, which would only shadow itself. */
   add(mesh: Mesh, material: Material, placing: Placing, casts = material.layer === 'solid') {
     const offset = this.edges.length;
-    for (let index = 0; index < mesh.edges.length; index++) {
-      const read = (values: number[]): Vec3 => [
-        at(values, index * 3),
-        at(values, index * 3 + 1),
-        at(values, index * 3 + 2),
-      ];
-      const point = read(mesh.positions);
-      this.world.push(...carried(placing, point));
-      this.local.push(...point);
-      this.normals.push(...turned(placing, read(mesh.normals)));
-      this.edges.push(at(mesh.edges, index));
-    }
+    appendTurned(this.world, mesh.positions, placing.turn, placing.move);
+    appendTurned(this.normals, mesh.normals, placing.turn, [0, 0, 0]);
+    for (const value of mesh.positions) this.local.push(value);
+    for (const value of mesh.edges) this.edges.push(value);
     for (const index of mesh.indices) this.triangles.push(index + offset);
     const surface = this.surfaceOf(material);
     for (let index = 0; index < mesh.indices.length; index += 3) {
@@ -64,5 +56,15 @@ export class Scene {
   private surfaceOf(material: Material): number {
     const known = this.materials.indexOf(material);
     return known >= 0 ? known : this.materials.push(material) - 1;
+  }
+}
+
+function appendTurned(into: number[], values: readonly number[], turn: readonly number[], [mx, my, mz]: Vec3) {
+  const [a = 1, b = 0, c = 0, d = 0, e = 1, f = 0, g = 0, h = 0, i = 1] = turn;
+  for (let index = 0; index < values.length; index += 3) {
+    const x = at(values, index);
+    const y = at(values, index + 1);
+    const z = at(values, index + 2);
+    into.push(a * x + b * y + c * z + mx, d * x + e * y + f * z + my, g * x + h * y + i * z + mz);
   }
 }

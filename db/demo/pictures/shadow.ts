@@ -51,7 +51,9 @@ function frame(packed: Packed, axisX: Vec3, axisY: Vec3, axisZ: Vec3, size: numb
 }
 
 /** Points of a small disc, spread evenly by the golden angle. */
-const TAPS = 10;
+const TURN_COS = Float32Array.from({ length: 64 }, (_, index) => Math.cos((index / 64) * 2 * Math.PI));
+const TURN_SIN = Float32Array.from({ length: 64 }, (_, index) => Math.sin((index / 64) * 2 * Math.PI));
+const TAPS = 8;
 const tapAt = (turn: (angle: number) => number) =>
   Float32Array.from({ length: TAPS }, (_, index) => Math.sqrt((index + 0.5) / TAPS) * turn(index * 2.399963));
 const DISC_X = tapAt(Math.cos);
@@ -65,8 +67,8 @@ function keyShareOf(packed: Packed, light: Light): Shade['keyShare'] {
   const map = new Float32Array(SIZE * SIZE);
   rasterise(projected, packed.triangles, { width: SIZE, height: SIZE, near: map }, (t) => byte(packed.casts, t) === 1);
   const read = (u: number, v: number) => {
-    const column = Math.round(u);
-    const row = Math.round(v);
+    const column = (u + 0.5) | 0;
+    const row = (v + 0.5) | 0;
     return column < 0 || row < 0 || column >= SIZE || row >= SIZE ? 0 : real(map, row * SIZE + column);
   };
   const [rightX, rightY, rightZ] = right;
@@ -77,8 +79,9 @@ function keyShareOf(packed: Packed, light: Light): Shade['keyShare'] {
     const v = (x * upX + y * upY + z * upZ - low) * scale;
     if (u < -20 || v < -20 || u > SIZE + 20 || v > SIZE + 20) return 1;
     const depth = x * keyX + y * keyY + z * keyZ + 1000.08;
-    const c = Math.cos(jitter * 6.2832);
-    const s = Math.sin(jitter * 6.2832);
+    const turn = Math.floor(jitter * 64) & 63;
+    const c = real(TURN_COS, turn);
+    const s = real(TURN_SIN, turn);
     const reach = scale * (0.35 + light.spread * 5);
     let blockers = 0;
     let gap = 0;

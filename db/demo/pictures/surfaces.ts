@@ -1,6 +1,6 @@
 import { blend, linear, type Material, type Rgb, type Sample, tint } from './material';
 import { cloud, noise3, smooth } from './noise';
-import { type Cut, paintWood } from './wood';
+import { type Cut, paintWood, type Species } from './wood';
 
 const solid = (paint: (sample: Sample) => void): Material => ({ layer: 'solid', paint });
 const film = (paint: (sample: Sample) => void): Material => ({ layer: 'film', paint });
@@ -17,6 +17,17 @@ export const rawWood = (cut: Cut, sawn = 0): Material =>
     sample.bumpX += (kerf - 0.5) * 0.35 * sawn;
     sample.rough = 0.85;
   });
+
+/** Usual brightness of each wood, against which dye takes up its figure. */
+const BRIGHT: Record<Species, number> = {
+  maple: 0.5,
+  mahogany: 0.14,
+  ash: 0.45,
+  walnut: 0.1,
+  rosewood: 0.04,
+  ebony: 0.02,
+  spruce: 0.5,
+};
 
 export type Colour = { hex: string; edgeHex?: string };
 
@@ -38,11 +49,11 @@ export function coated({ cut, colour, strength = 1, gloss = 1, reach = 6 }: Coat
   const rimTone: Rgb = colour.edgeHex ? rim : [rim[0] * 0.62, rim[1] * 0.62, rim[2] * 0.62];
   return solid((sample) => {
     paintWood(sample, cut);
-    const grain = (sample.r * 0.5 + sample.g * 0.4 + sample.b * 0.1) / 0.42;
+    const grain = (sample.r * 0.5 + sample.g * 0.4 + sample.b * 0.1) / BRIGHT[cut.species];
     const ragged = sample.edge + (cloud(sample.x * 0.35, sample.y * 0.35, 4) - 0.5) * 1.6;
     const inward = smooth(0.2, reach, ragged);
     const shade = (part: 0 | 1 | 2) => rimTone[part] + (middle[part] - rimTone[part]) * inward;
-    const veil = 0.28 + 0.72 * grain;
+    const veil = 0.16 + 0.84 * grain ** 1.5;
     const cover = strength * (1 - 0.12 * inward);
     blend(sample, [shade(0) * veil * 1.12, shade(1) * veil * 1.12, shade(2) * veil * 1.12], cover);
     sample.coat = gloss > 0 ? 0.35 + 0.65 * gloss : 0;
@@ -147,7 +158,7 @@ export const dusty = (hex: string, amount: number, scale = 0.3): Material => {
     tint(sample, colour, 0.85 + grit * 0.3);
     sample.rough = 0.95;
     const seen = Math.min(1, 0.02 / sample.footprint);
-    sample.opacity = amount * smooth(0.3, 0.85, patch) * (0.62 + (grit - 0.5) * 0.9 * seen);
+    sample.opacity = amount * smooth(0.3, 0.85, patch) * (0.62 + (grit - 0.5) * 0.9 * seen) * smooth(0, 4, sample.edge);
   });
 };
 

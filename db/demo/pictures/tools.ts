@@ -12,7 +12,7 @@ import { noise3 } from './noise';
 
 /** A screw clamp that presses down at the origin from `height`; its bar stands `reach` behind. */
 export function addClamp(scene: Scene, spot: Placing, height: number, reach: number, grip = '#a33a24') {
-  const iron = metal('#7d8288', 0.45, 0.6);
+  const iron = plain('#59636b', 0.42, 0.1);
   const bar = joined(
     moved(block(0.9, 2.2, height + 9, 0.15), { y: reach, z: -2 }),
     moved(block(2, reach + 3, 2.2, 0.4), { y: reach / 2, z: height + 3.4 }),

@@ -4,7 +4,7 @@ import { FinishStyle } from '@/components/builds/finish-style';
 import { requireBuild } from '@/db/queries/builds';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { can } from '@/lib/access';
-import { pageNonce } from '@/lib/nonce';
+import { pageNonce } from '@/lib/request';
 
 /** Every page of a build wears its finish and carries the way to the others. It guards nothing by itself. */
 export default async function BuildLayout({ children, params }: LayoutProps<'/builds/[orderNumber]'>) {

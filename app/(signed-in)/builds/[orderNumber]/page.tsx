@@ -8,6 +8,7 @@ import { diaryPage, diaryState } from '@/db/queries/diary';
 import { findMailSettings } from '@/db/queries/mail-settings';
 import { can, isStaffRole } from '@/lib/access';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
+import { requestMs } from '@/lib/request';
 import { stageNotes } from '@/lib/stage-notes';
 
 export async function generateMetadata({ params }: PageProps<'/builds/[orderNumber]'>): Promise<Metadata> {
@@ -26,7 +27,7 @@ export default async function DiaryPage({ params }: PageProps<'/builds/[orderNum
     listClients(viewer, orderNumber),
   ]);
   const mail = isStaffRole(viewer.role) ? null : await findMailSettings(viewer);
-  const nowMs = Date.now();
+  const nowMs = requestMs();
   const may = (action: Parameters<typeof can>[2]) => can(viewer.role, build.standing, action);
   const tools = may('diary.read_shop_side')
     ? { viewerId: viewer.id, mayEditAny: may('entry.edit_any'), mayRelease: may('entry.release'), withdraw, release }

@@ -22,8 +22,7 @@ export const onTheBench: Subject = (order, random) => {
     camera: lookAt([0, 3, 2], {
       bearing: -86,
       rise: 52,
-      distance: order.body === 'bass' ? 128 : 108,
-      roll: -3,
+      distance: order.body === 'bass' ? 172 : 146, roll: -3,
       blur: 1.2,
     }),
     light: shopLight(random),
@@ -40,8 +39,7 @@ export const uprightPortrait: Subject = (order, random) => {
     camera: lookAt([0, length * 0.08, 2], {
       bearing: -90,
       rise: 66,
-      distance: order.body === 'bass' ? 142 : 114,
-      roll: 2,
+      distance: order.body === 'bass' ? 186 : 150, roll: 2,
       blur: 1.2,
     }),
     light: shopLight(random),
@@ -97,8 +95,7 @@ export const inTheCase: Subject = (order, random) => {
     camera: lookAt([-4, 3, 4], {
       bearing: -84,
       rise: 44,
-      distance: order.body === 'bass' ? 138 : 118,
-      roll: -2,
+      distance: order.body === 'bass' ? 186 : 160, roll: -2,
       blur: 1.3,
     }),
     light: shopLight(random),
@@ -134,13 +131,11 @@ export const finalLook: Subject = (order, random) => {
     ],
     36,
   );
-  scene.add(shade, plain('#2f5a4c', 0.3, 0.05), placed({ x: -24, y: 24, z: 21, turnY: -18 }));
+  scene.add(shade, plain('#2f5a4c', 0.3, 0.05), placed({ x: -14, y: 23, z: 19, turnY: -18 }));
   scene.add(
     tube(
       [
-        [-26, 24, 28],
-        [-34, 26, 36],
-        [-36, 30, 0],
+        [-16, 23, 26], [-22, 25, 34], [-26, 29, 0],
       ],
       0.7,
       10,
@@ -159,11 +154,11 @@ export const finalLook: Subject = (order, random) => {
       32,
     ),
     steel(),
-    placed({ x: -36, y: 30 }),
+    placed({ x: -26, y: 29 }),
   );
   return {
     scene,
-    camera: lookAt([2, 3, 5], { bearing: -78, rise: 25, distance: 66, roll: 2, blur: 1.8, focus: 58 }),
+    camera: lookAt([2, 5, 7], { bearing: -80, rise: 24, distance: 84, roll: 2, blur: 1.6, focus: 76 }),
     light: shopLight(random, 'lamp'),
   };
 };

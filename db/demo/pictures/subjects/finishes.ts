@@ -101,7 +101,7 @@ export const colourSamples: Subject = (order, random) => {
   scene.add(rag, plain('#c9c2b4', 0.95, 0.25), placed({ x: 21, y: 21, turnZ: 20 }));
   return {
     scene,
-    camera: lookAt([0, 3, 0], { bearing: -95, rise: 52, distance: 70, roll: 4, blur: 1.7 }),
+    camera: lookAt([0, 2, 0], { bearing: -95, rise: 52, distance: 80, roll: 4, blur: 1.7 }),
     light: shopLight(random),
   };
 };
@@ -183,7 +183,7 @@ function addMist(scene: Scene, spot: Placing, hex: string, length: number) {
 
 export const burstSpray: Subject = (order, random) => {
   const scene = stageOn(rough('#8b9396', 0.1));
-  const spot = placed({ x: -4, y: 0, z: 8, turnZ: between(random, 96, 112) });
+  const spot = placed({ x: -9, y: 1, z: 8, turnZ: between(random, 96, 112) });
   const look = finished(order, 0.55);
   addBody(scene, order, look, spot);
   scene.add(
@@ -201,7 +201,7 @@ export const burstSpray: Subject = (order, random) => {
   );
   const gun = placed({ x: 26, y: -16, z: 15, turnY: 14, turnZ: 146 });
   addSprayGun(scene, gun);
-  addMist(scene, within(gun, placed({ x: 3.2 })), order.finish.edgeHex ?? order.finish.hex, 22);
+  addMist(scene, within(gun, placed({ x: 3.2 })), order.finish.edgeHex ?? order.finish.hex, 20);
   return {
     scene,
     camera: lookAt([3, -1, 8], { bearing: -92, rise: 54, distance: 84, roll: -3 }),
@@ -276,7 +276,7 @@ export const rackOfBodies: Subject = (order, random) => {
         };
     const spot = within(
       placed({ x: place * 16 - 40, y: 4, z: 26 }),
-      placed({ turnX: 0, turnY: 64 + between(random, -2, 2) }),
+      placed({ turnY: -62 + between(random, -2, 2) }),
     );
     addBody(
       scene,

@@ -101,7 +101,7 @@ export const controlWiring: Subject = (order, random) => {
     ]);
     scene.add(tube(path, 0.16, 8), plain(hex, 0.4, 0.05), spot);
   });
-  const iron = placed({ x: -1, y: -7, z: 5.6, turnZ: 24 });
+  const iron = placed({ x: 6.2, y: -4.4, z: 4.8, turnZ: 16 });
   scene.add(
     moved(
       turning(
@@ -150,19 +150,16 @@ export const pickupsIn: Subject = (order, random) => {
   const shell = plain('#17181a', 0.3, 0.06);
   scene.add(parts.cover, shell, within(spot, placed({ x: 1.2, z: TOP - 0.9 })));
   scene.add(parts.poles, steel(), within(spot, placed({ x: 1.2, z: TOP - 0.9 })));
-  const lifted = within(spot, placed({ x: -7, y: -1.2, z: TOP + 0.3, turnX: 10, turnY: 14, turnZ: 12 }));
+  const lifted = within(spot, placed({ x: -13, y: -1.6, z: TOP - 0.2, turnX: 4, turnY: -3, turnZ: 14 }));
   scene.add(parts.cover, shell, lifted);
   scene.add(parts.poles, steel(), lifted);
   for (const [index, hex] of ['#e8e6df', '#b3261e'].entries()) {
     const wire: Vec3[] = smoothPath(
       [
-        [-7, 3.4],
-        [-9, 5 + index],
-        [-7.6, 5.6],
-        [-6.4, 3.6],
+        [-12.6, 2.8], [-11, 5.4 + index], [-8.2, 5.2], [-6.6, 3.2 - index * 0.4],
       ],
       8,
-    ).map(([x, y], step) => [x, y, TOP + 0.6 - step * 0.07]);
+    ).map(([x, y], step) => [x, y, TOP + 0.5 - step * 0.06]);
     scene.add(tube(wire, 0.13, 8), plain(hex, 0.4), spot);
   }
   addDriver(scene, placed({ x: -4, y: -20, turnZ: 22 }));
@@ -184,7 +181,7 @@ export const pickupsIn: Subject = (order, random) => {
     );
   return {
     scene,
-    camera: lookAt([-1, -2, 4.5], { bearing: -80, rise: 42, distance: 46, roll: -4, blur: 1.9 }),
+    camera: lookAt([-3, -2, 4.5], { bearing: -80, rise: 42, distance: 46, roll: -4, blur: 1.9 }),
     light: shopLight(random),
   };
 };
@@ -194,7 +191,7 @@ export const bridgeClose: Subject = (order, random) => {
   const fit = fittings(order.body);
   const spot = placed({ x: -fit.saddleX, z: 0.2 });
   addAll(scene, order, spot);
-  addDriver(scene, placed({ x: -6, y: -7.6, z: TOP + 0.1, turnZ: 200 }), '#7a2f2a');
+  addDriver(scene, placed({ x: 9, y: 10.5, z: TOP - 0.2, turnZ: 196 }), '#7a2f2a');
   return {
     scene,
     camera: lookAt([-0.4, 0.4, 5.6], { bearing: -122, rise: 36, distance: 23, roll: -4, blur: 2.4 }),
@@ -282,8 +279,7 @@ export const partsLaidOut: Subject = (order, random) => {
   scene.add(saddles, steel(), spot);
   const parts = pickup(count);
   for (const [x, y] of [
-    [7, 6],
-    [8, -6],
+    [5, 7.5], [6.5, -1.5],
   ] as const) {
     const place = placed({ x, y, turnZ: between(random, 70, 110) });
     scene.add(parts.cover, plain('#17181a', 0.3, 0.06), place);
@@ -300,7 +296,7 @@ export const partsLaidOut: Subject = (order, random) => {
     [0, 1.1],
   ]);
   for (let index = 0; index < count; index++) {
-    const place = placed({ x: index * 3.6 - 9, y: -11.5 + between(random, -0.4, 0.4), turnZ: between(random, -8, 8) });
+    const place = placed({ x: index * 3.9 - 10, y: -9.5 + between(random, -0.4, 0.4), turnZ: between(random, -8, 8) });
     scene.add(
       joined(
         post,
@@ -319,7 +315,7 @@ export const partsLaidOut: Subject = (order, random) => {
   }
   return {
     scene,
-    camera: lookAt([-0.5, -1.5, 0.5], { bearing: -94, rise: 56, distance: 42, roll: 5, blur: 1.7 }),
+    camera: lookAt([-0.5, -0.5, 0.5], { bearing: -94, rise: 54, distance: 36, roll: 5, blur: 1.7 }),
     light: shopLight(random),
   };
 };

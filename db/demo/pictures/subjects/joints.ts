@@ -31,8 +31,7 @@ export const sandedBody: Subject = (order, random) => {
   addBody(scene, order, bare(order), spot);
   addSandingBlock(
     scene,
-    within(spot, placed({ x: -11, y: 4.4, z: BODY_TOP + ARCH + 0.02, turnZ: 28 })),
-    'P220',
+    within(spot, placed({ x: -11, y: 4.4, z: BODY_TOP + ARCH + 0.02, turnZ: 212 })), 'P220',
     '#7b4a36',
   );
   const lines = Array.from({ length: 5 }, (_, row) =>
@@ -47,7 +46,7 @@ export const sandedBody: Subject = (order, random) => {
   );
   for (const line of lines.slice(0, 2)) scene.add(line, drawn('#5b5f69', 0.45, 10), spot);
   scene.add(block(46, 34, 0.02), dusty('#f0dfbd', 0.6, 0.25), within(spot, placed({ z: BODY_TOP + ARCH + 0.01 })));
-  scene.add(block(110, 90, 0.02), dusty('#d9c49a', 0.6, 0.1), placed({ z: 0.03 }));
+  scene.add(block(300, 300, 0.02), dusty('#d9c49a', 0.5, 0.1), placed({ z: 0.03 }));
   return {
     scene,
     camera: lookAt([0, -1, 3], { bearing: -84, rise: 50, distance: 68, roll: -4, blur: 1.7 }),

@@ -20,16 +20,16 @@ const slurry = film((sample) => {
   const patch = smooth(0.35, 0.7, cloud(sample.x * 0.12, sample.y * 0.12, 9));
   tint(sample, [0.55, 0.58, 0.58]);
   sample.rough = 0.5;
-  sample.opacity = (0.1 + 0.28 * smooth(-0.4, 0.9, sweep)) * patch;
+  sample.opacity = (0.1 + 0.28 * smooth(-0.4, 0.9, sweep)) * patch * smooth(0, 3.5, sample.edge);
 });
 
 export const wetSanding: Subject = (order, random) => {
   const scene = stageOn(darkBench());
   const spot = placed({ x: 6, y: 1, turnZ: between(random, 154, 174) });
   addBody(scene, order, finished(order, 0.55), spot, false);
-  scene.add(block(26, 19, 0.02), slurry, within(spot, placed({ x: -5, z: TOP + 0.01 })));
+  scene.add(block(23, 19, 0.02), slurry, within(spot, placed({ x: -8, z: TOP + 0.01 })));
   addSandingBlock(scene, within(spot, placed({ x: -8, y: 1, z: TOP, turnZ: 196 })), 'P1500');
-  addDrops(scene, random, within(spot, placed({ x: -6 })), 190, 11, 9, TOP + 0.01);
+  addDrops(scene, random, within(spot, placed({ x: -7 })), 190, 9, 8, TOP + 0.01);
   return {
     scene,
     camera: lookAt([10, -2, 5], { bearing: -92, rise: 48, distance: 44, roll: -4, blur: 1.9 }),
@@ -105,7 +105,7 @@ export const buffedShine: Subject = (order, random) => {
     top: 0.3,
     round: 0.25,
     cell: 0.5,
-    arch: (depth, x, y) => smooth(0, 3, depth) * 3.2 * cloud(x * 0.28, y * 0.28, order.seed % 9),
+    arch: (depth, x, y) => smooth(0, 4, depth) * 2.6 * cloud(x * 0.34 + y * 0.2, y * 0.5, order.seed % 9),
   });
   scene.add(rag, cloth('#d9b23c'), within(spot, placed({ x: -15.5, y: -2, z: TOP - 0.3, turnZ: 30 })));
   return {
