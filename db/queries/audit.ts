@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
-import { and, asc, desc, eq, gt, inArray, lt } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, inArray, lt, sql } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/sqlite-core';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { auditEvents, builds, users } from '../schema';
@@ -14,6 +15,7 @@ export type AuditAction =
   | 'person_closed'
   | 'person_reopened'
   | 'assigned'
+  | 'cleared'
   | 'assignment_ended'
   | 'stepped_in'
   | 'companion_added'
@@ -31,6 +33,8 @@ type AuditEvent = {
   subjectId?: string;
   reason?: string;
 };
+
+const PAGE = 50;
 
 const GENESIS = '0'.repeat(64);
 
@@ -87,6 +91,7 @@ export async function findBrokenLink(): Promise<number | null> {
 
 const accessActions: AuditAction[] = [
   'assigned',
+  'cleared',
   'assignment_ended',
   'stepped_in',
   'companion_added',
@@ -95,48 +100,57 @@ const accessActions: AuditAction[] = [
   'opened',
 ];
 
-/** Who was let on or off this build, newest first, as its owner and its reps may read it. */
+const actors = alias(users, 'actors');
+const subjects = alias(users, 'subjects');
+
+const told = {
+  seq: auditEvents.seq,
+  at: auditEvents.at,
+  action: sql<AuditAction>`${auditEvents.action}`,
+  outcome: auditEvents.outcome,
+  reason: auditEvents.reason,
+  actorId: auditEvents.actorId,
+  actorName: actors.name,
+  subjectId: auditEvents.subjectId,
+  subjectName: subjects.name,
+};
+
+/** Who was let on or off this build, and by whom, newest first, as its owner and its reps may read it. */
 export async function listAccessEvents(viewer: Viewer, orderNumber: string) {
   const build = await requireCan(viewer, 'access.read_events', orderNumber);
-  const subjects = db()
-    .select({
-      seq: auditEvents.seq,
-      at: auditEvents.at,
-      action: auditEvents.action,
-      reason: auditEvents.reason,
-      person: users.name,
-    })
+  const ofBuild = and(
+    eq(auditEvents.buildId, build.id),
+    eq(auditEvents.outcome, 'done'),
+    inArray(auditEvents.action, accessActions),
+  );
+  return db()
+    .select(told)
     .from(auditEvents)
-    .leftJoin(users, eq(users.id, auditEvents.subjectId))
-    .where(
-      and(
-        eq(auditEvents.buildId, build.id),
-        eq(auditEvents.outcome, 'done'),
-        inArray(auditEvents.action, accessActions),
-      ),
-    )
+    .leftJoin(actors, eq(actors.id, auditEvents.actorId))
+    .leftJoin(subjects, eq(subjects.id, auditEvents.subjectId))
+    .where(ofBuild)
     .orderBy(desc(auditEvents.seq))
-    .limit(50);
-  return subjects;
+    .limit(PAGE);
 }
+
+export type AccessEvent = Awaited<ReturnType<typeof listAccessEvents>>[number];
 
 /** The audit log for the admin: ids resolved to names, newest first, 50 a page. */
 export async function listAuditEvents(viewer: Viewer, beforeSeq: number) {
   await requireCan(viewer, 'people.manage');
   return db()
-    .select({
-      seq: auditEvents.seq,
-      at: auditEvents.at,
-      action: auditEvents.action,
-      outcome: auditEvents.outcome,
-      reason: auditEvents.reason,
-      actorName: users.name,
-      orderNumber: builds.orderNumber,
-    })
+    .select({ ...told, orderNumber: builds.orderNumber })
     .from(auditEvents)
-    .leftJoin(users, eq(users.id, auditEvents.actorId))
+    .leftJoin(actors, eq(actors.id, auditEvents.actorId))
+    .leftJoin(subjects, eq(subjects.id, auditEvents.subjectId))
     .leftJoin(builds, eq(builds.id, auditEvents.buildId))
     .where(lt(auditEvents.seq, beforeSeq))
     .orderBy(desc(auditEvents.seq))
-    .limit(50);
+    .limit(PAGE);
+}
+
+/** `findBrokenLink` for the admin; it walks the whole log. */
+export async function checkRecord(viewer: Viewer): Promise<number | null> {
+  await requireCan(viewer, 'people.manage');
+  return findBrokenLink();
 }

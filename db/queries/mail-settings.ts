@@ -26,7 +26,10 @@ export async function findMailSettings(viewer: Viewer) {
 
 const lastSeq = sql<number>`(select coalesce(max(${diaryEvents.seq}), 0) from ${diaryEvents})`;
 
-/** Saves when the viewer wants mail, and where they are. What happened before the first wish is not mailed. */
+/**
+ * Saves when the viewer wants mail, and where they are. What happened before the first wish, or while they wanted none,
+ * is not mailed.
+ */
 export function saveMailSettings(viewer: Viewer, wish: MailWish, zone: string, nowMs: number): Promise<void> {
   return write(async (tx) => {
     await tx.update(users).set({ timeZone: zone, timeZoneAskedAt: nowMs }).where(eq(users.id, viewer.id));
@@ -34,7 +37,20 @@ export function saveMailSettings(viewer: Viewer, wish: MailWish, zone: string, n
     await tx
       .insert(mailSettings)
       .values({ userId: viewer.id, ...row, toldSeq: lastSeq })
-      .onConflictDoUpdate({ target: mailSettings.userId, set: row });
+      .onConflictDoUpdate({
+        target: mailSettings.userId,
+        set: {
+          ...row,
+          toldSeq: sql`case when ${mailSettings.cadence} = 'none' then ${lastSeq} else ${mailSettings.toldSeq} end`,
+        },
+      });
+  });
+}
+
+/** Saves where the viewer is, for staff, who get no diary by mail. */
+export function saveTimeZone(viewer: Viewer, zone: string, nowMs: number): Promise<void> {
+  return write(async (tx) => {
+    await tx.update(users).set({ timeZone: zone, timeZoneAskedAt: nowMs }).where(eq(users.id, viewer.id));
   });
 }
 

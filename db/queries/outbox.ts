@@ -2,6 +2,7 @@ import { and, count, desc, eq, inArray, lt, lte, or, sql } from 'drizzle-orm';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { outbox, users } from '../schema';
+import { Denied, OutOfReach } from '@/lib/errors';
 import type { FrozenMail, MailAbout, MailKind } from '@/lib/mail/kinds';
 import type { Viewer } from '@/lib/viewer';
 
@@ -114,7 +115,33 @@ export function replaceMail(mail: ClaimedMail, owner: string, about: MailAbout, 
   });
 }
 
-/** For the admin: mail that is waiting, failed or was lately sent, with why. Addresses and texts stay out. */
+/**
+ * Puts a failed mail in the queue again, with the same bytes and key. One that was given up keeps its first try: its
+ * answers were lost, so a day after that it is parked rather than perhaps delivered twice. A refused one starts afresh.
+ * @throws Denied for a mail that must not be sent again
+ */
+export function retryMail(viewer: Viewer, mailId: string, nowMs: number): Promise<void> {
+  return write(async (tx) => {
+    await requireCan(viewer, 'mail.watch');
+    const [mail] = await tx
+      .select({ kind: outbox.kind, state: outbox.state })
+      .from(outbox)
+      .where(eq(outbox.id, mailId));
+    if (!mail) throw new OutOfReach();
+    if (mail.state === 'parked')
+      throw new Denied('conflict', 'This mail may have arrived. Sent again, it could come twice, so it stays here.');
+    if (mail.state !== 'failed') throw new Denied('conflict', 'This mail is on its way already.');
+    if (mail.kind === 'sign_in')
+      throw new Denied('conflict', 'Its link is dead by now. Its reader asks for a new one at the sign-in page.');
+    const firstAttemptAt = sql`case when ${outbox.lastProblem} like 'given up:%' then ${outbox.firstAttemptAt} end`;
+    await tx
+      .update(outbox)
+      .set({ state: 'waiting', attempts: 0, nextAttemptAt: nowMs, firstAttemptAt })
+      .where(eq(outbox.id, mailId));
+  });
+}
+
+/** For the admin: how much mail is in which state, and the mail that waits for another try, failed or was parked, with why. No texts. */
 export async function listMailProblems(viewer: Viewer) {
   await requireCan(viewer, 'mail.watch');
   const counts = await db().select({ state: outbox.state, n: count() }).from(outbox).groupBy(outbox.state);
@@ -138,3 +165,5 @@ export async function listMailProblems(viewer: Viewer) {
     .limit(50);
   return { counts, troubled };
 }
+
+export type TroubledMail = Awaited<ReturnType<typeof listMailProblems>>['troubled'][number];

@@ -1,4 +1,4 @@
-import { and, asc, eq, gt, isNull, like, or, sql } from 'drizzle-orm';
+import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
 import { queueMail } from './outbox';
 import { requireCan } from './standing';
@@ -21,10 +21,12 @@ import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 50;
 
-/** Everybody with an account or an invitation, by name, 50 a page. */
-export async function listPeople(viewer: Viewer, search: string, after: string) {
+/** Everybody with an account or an invitation, by name, 50 a page; `afterId` is the last person of the page above. */
+export async function listPeople(viewer: Viewer, search: string, afterId?: string) {
   await requireCan(viewer, 'people.manage');
-  const pattern = `%${search.replace(/[%_]/g, '')}%`;
+  const matches = sql`(instr(lower(${users.name}), lower(${search})) > 0 or instr(${users.email}, lower(${search})) > 0)`;
+  // A self-join: drizzle would give both sides of one table the same name.
+  const isBelow = sql`(${users.name}, ${users.id}) > (select above.name, above.id from users as above where above.id = ${afterId})`;
   return db()
     .select({
       id: users.id,
@@ -38,8 +40,8 @@ export async function listPeople(viewer: Viewer, search: string, after: string) 
       buildCount: sql<number>`(select count(*) from ${assignments} where ${assignments.userId} = ${users.id} and ${assignments.endedAt} is null) + (select count(*) from ${buildPeople} where ${buildPeople.userId} = ${users.id})`,
     })
     .from(users)
-    .where(and(gt(users.name, after), search ? or(like(users.name, pattern), like(users.email, pattern)) : undefined))
-    .orderBy(asc(users.name))
+    .where(and(matches, afterId === undefined ? undefined : isBelow))
+    .orderBy(asc(users.name), asc(users.id))
     .limit(PAGE);
 }
 
@@ -72,12 +74,21 @@ export function invitePerson(viewer: Viewer, invitation: Invitation, nowMs: numb
       throw new BadInput({
         email: 'Somebody with this address has been invited already. Find them in the list below.',
       });
-    const department = invitation.role === 'builder' ? invitation.department : null;
-    if (invitation.role === 'builder' && !department)
-      throw new BadInput({ department: 'Choose the department a builder works in.' });
+    const department = await requireDepartment(tx, invitation);
     const userId = await addPerson(tx, viewer, { ...invitation, department }, nowMs);
     if (invitation.orderNumber) await makeOwner(tx, userId, invitation.role, invitation.orderNumber);
   });
+}
+
+/** Where a builder works; nobody else has a department. */
+async function requireDepartment(tx: Tx, person: { role: Role; department: string | null }): Promise<string | null> {
+  if (person.role !== 'builder') return null;
+  const [known] = await tx
+    .select({ key: departments.key })
+    .from(departments)
+    .where(eq(departments.key, person.department ?? ''));
+  if (!known) throw new BadInput({ department: 'Choose the department a builder works in.' });
+  return known.key;
 }
 
 type NewPerson = { name: string; email: string; role: Role; department: string | null };
@@ -112,7 +123,10 @@ async function makeOwner(tx: Tx, userId: string, role: Role, orderNumber: string
   await tx.insert(buildPeople).values({ buildId: build.id, userId, standing: 'owner' });
 }
 
-/** Changes what somebody is. Between the client side and the shop nobody moves: such a person gets a second account. */
+/**
+ * Changes what somebody is. Between the client side and the shop nobody moves: such a person gets a second account. Who
+ * becomes an admin leaves every build, since an admin is on one only by stepping in; an admin who stops being one too.
+ */
 export function changePerson(viewer: Viewer, change: ChangedPerson, nowMs: number): Promise<void> {
   return write(async (tx) => {
     await requireCan(viewer, 'people.manage');
@@ -123,10 +137,9 @@ export function changePerson(viewer: Viewer, change: ChangedPerson, nowMs: numbe
         role: 'Nobody moves between the client side and the shop. Invite them anew at another address.',
       });
     }
-    if (change.role === 'builder' && !change.department)
-      throw new BadInput({ department: 'Choose the department a builder works in.' });
-    const department = change.role === 'builder' ? change.department : null;
+    const department = await requireDepartment(tx, change);
     await tx.update(users).set({ role: change.role, department }).where(eq(users.id, person.id));
+    if ((person.role === 'admin') !== (change.role === 'admin')) await endWork(tx, viewer, person.id, nowMs);
     await recordEvent(
       tx,
       { actorId: viewer.id, action: 'role_changed', subjectId: person.id, reason: change.role },
@@ -149,14 +162,24 @@ export function closePerson(viewer: Viewer, userId: string, nowMs: number): Prom
     if (person.id === viewer.id) throw new BadInput({ userId: 'Your own account is closed by another admin.' });
     await tx.update(users).set({ disabledAt: nowMs }).where(eq(users.id, person.id));
     await tx.delete(sessions).where(eq(sessions.userId, person.id));
-    const live = and(eq(assignments.userId, person.id), isNull(assignments.endedAt));
-    await tx.update(assignments).set({ endedAt: nowMs }).where(live);
-    await tx
-      .update(standingAssignments)
-      .set({ endedAt: nowMs })
-      .where(and(eq(standingAssignments.userId, person.id), isNull(standingAssignments.endedAt)));
+    await endWork(tx, viewer, person.id, nowMs);
     await recordEvent(tx, { actorId: viewer.id, action: 'person_closed', subjectId: person.id }, nowMs);
   });
+}
+
+/** Takes somebody off every build they were put on, and ends the rules that put them there. */
+async function endWork(tx: Tx, viewer: Viewer, userId: string, nowMs: number): Promise<void> {
+  const ended = await tx
+    .update(assignments)
+    .set({ endedAt: nowMs })
+    .where(and(eq(assignments.userId, userId), isNull(assignments.endedAt)))
+    .returning({ buildId: assignments.buildId });
+  for (const { buildId } of ended)
+    await recordEvent(tx, { actorId: viewer.id, action: 'assignment_ended', buildId, subjectId: userId }, nowMs);
+  await tx
+    .update(standingAssignments)
+    .set({ endedAt: nowMs })
+    .where(and(eq(standingAssignments.userId, userId), isNull(standingAssignments.endedAt)));
 }
 
 /** Opens a closed account again, without its old assignments. */
@@ -179,7 +202,10 @@ export function endSessionsOf(viewer: Viewer, userId: string, nowMs: number): Pr
   });
 }
 
-/** Puts staff on builds, several at once; who is on one already stays. @returns how many assignments were new */
+/**
+ * Puts staff on builds, several at once, or on none if one of the numbers is unknown; who is on one already stays, and
+ * is cleared for its hold if that is asked for. @returns how many assignments are new or newly cleared
+ */
 export function assignStaff(
   viewer: Viewer,
   { userId, orderNumbers, cleared }: Assignment,
@@ -215,10 +241,32 @@ async function addAssignment(
     .values({ buildId, userId, cleared, stepInReason: reason, assignedById: viewer.id, startedAt: nowMs })
     .onConflictDoNothing()
     .returning({ id: assignments.id });
-  if (!added) return 0;
+  if (!added) return cleared ? clearForHold(tx, viewer, { buildId, userId }, nowMs) : 0;
   const action = reason === null ? 'assigned' : 'stepped_in';
   await recordEvent(tx, { actorId: viewer.id, action, buildId, subjectId: userId, reason: reason ?? undefined }, nowMs);
   return 1;
+}
+
+async function clearForHold(
+  tx: Tx,
+  viewer: Viewer,
+  { buildId, userId }: { buildId: string; userId: string },
+  nowMs: number,
+): Promise<number> {
+  const uncleared = and(
+    eq(assignments.buildId, buildId),
+    eq(assignments.userId, userId),
+    eq(assignments.cleared, false),
+    isNull(assignments.endedAt),
+  );
+  const cleared = await tx
+    .update(assignments)
+    .set({ cleared: true })
+    .where(uncleared)
+    .returning({ id: assignments.id });
+  if (cleared.length > 0)
+    await recordEvent(tx, { actorId: viewer.id, action: 'cleared', buildId, subjectId: userId }, nowMs);
+  return cleared.length;
 }
 
 /** Takes somebody off a build; their very next request is refused. */
@@ -266,7 +314,12 @@ export function addCompanion(
     if (known && isStaffRole(known.role))
       throw new BadInput({ email: 'Use a private address: this one belongs to the shop.' });
     const userId = known?.id ?? (await addPerson(tx, viewer, { ...person, role: 'buyer', department: null }, nowMs));
-    await tx.insert(buildPeople).values({ buildId: build.id, userId, standing: 'companion' }).onConflictDoNothing();
+    const added = await tx
+      .insert(buildPeople)
+      .values({ buildId: build.id, userId, standing: 'companion' })
+      .onConflictDoNothing()
+      .returning({ userId: buildPeople.userId });
+    if (added.length === 0) throw new BadInput({ email: 'This person is on the build already.' });
     await recordEvent(
       tx,
       { actorId: viewer.id, action: 'companion_added', buildId: build.id, subjectId: userId },
@@ -293,19 +346,16 @@ export function removeCompanion(viewer: Viewer, orderNumber: string, userId: str
   });
 }
 
-/** Holds a build from view until an instant, or opens it (null). Companions stop seeing it at once. */
+/**
+ * Holds a build from view until an instant, or opens it (null). Companions stop seeing it at once, and so do the staff
+ * who are not cleared. Who holds it is cleared, and put on it if only a rule had: a rule never covers a held build.
+ */
 export function holdBuild(viewer: Viewer, orderNumber: string, untilAt: number | null, nowMs: number): Promise<void> {
   return write(async (tx) => {
     const build = await requireCan(viewer, 'build.hold', orderNumber, tx);
     await tx.update(builds).set({ heldUntilAt: untilAt }).where(eq(builds.id, build.id));
-    if (untilAt !== null) {
-      const holder = and(
-        eq(assignments.buildId, build.id),
-        eq(assignments.userId, viewer.id),
-        isNull(assignments.endedAt),
-      );
-      await tx.update(assignments).set({ cleared: true }).where(holder);
-    }
+    if (untilAt !== null)
+      await addAssignment(tx, viewer, { buildId: build.id, userId: viewer.id, cleared: true, reason: null }, nowMs);
     const action = untilAt === null ? 'opened' : 'held';
     await recordEvent(tx, { actorId: viewer.id, action, buildId: build.id }, nowMs);
   });

@@ -1,23 +1,16 @@
-import { and, asc, count, desc, eq, isNull, lt, or, sql } from 'drizzle-orm';
-import { alias } from 'drizzle-orm/sqlite-core';
+import { and, count, desc, eq, isNull, or } from 'drizzle-orm';
 import { queueMail } from './outbox';
+import { findQuotedEntry, staffOn } from './question-form';
+import { findQuestionRow } from './question-lists';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { buildIsVisible, entryIsVisible, questionIsVisible } from '../scope';
-import { assignments, builds, entries, letters, questions, topics, users } from '../schema';
+import { builds, entries, letters, questions, topics, users } from '../schema';
 import { can, isStaffRole } from '@/lib/access';
 import { BadInput, Denied, OutOfReach } from '@/lib/errors';
 import { penHolder } from '@/lib/questions/pen-holder';
 import type { NewLetter, NewQuestion } from '@/lib/validation/questions';
 import type { Viewer } from '@/lib/viewer';
-
-const PAGE = 40;
-const asker = alias(users, 'asker');
-const holder = alias(users, 'holder');
-
-export function listTopics() {
-  return db().select({ id: topics.id, name: topics.name }).from(topics).orderBy(asc(topics.position)).limit(40);
-}
 
 /**
  * Asks a question on a build, or from an entry of it, once. The topic decides who holds the pen and gets mail.
@@ -74,15 +67,6 @@ async function requireReadableEntry(tx: Tx, viewer: Viewer, buildId: string, ent
     .where(and(eq(entries.id, entryId), eq(entries.buildId, buildId), entryIsVisible(viewer)));
   if (!entry)
     throw new BadInput({ entryId: 'The entry you ask about is no longer in the diary. Ask about the build instead.' });
-}
-
-function staffOn(tx: Tx, buildId: string) {
-  return tx
-    .select({ id: users.id, role: users.role, department: users.department })
-    .from(assignments)
-    .innerJoin(users, and(eq(users.id, assignments.userId), isNull(users.disabledAt)))
-    .where(and(eq(assignments.buildId, buildId), isNull(assignments.endedAt)))
-    .orderBy(asc(assignments.startedAt), asc(assignments.id));
 }
 
 type Added = {
@@ -164,57 +148,10 @@ async function requireAnswerer(tx: Tx, viewer: Viewer, question: Reachable): Pro
   }
 }
 
-const listColumns = {
-  id: questions.id,
-  orderNumber: builds.orderNumber,
-  instrument: builds.instrument,
-  subject: questions.subject,
-  topic: topics.name,
-  state: questions.state,
-  lastLetterAt: questions.lastLetterAt,
-  createdAt: questions.createdAt,
-  askerName: asker.name,
-  penHolderId: questions.penHolderId,
-  penHolderName: holder.name,
-};
-
-function selectQuestions() {
-  return db()
-    .select(listColumns)
-    .from(questions)
-    .innerJoin(builds, eq(builds.id, questions.buildId))
-    .innerJoin(topics, eq(topics.id, questions.topicId))
-    .innerJoin(asker, eq(asker.id, questions.askedById))
-    .leftJoin(holder, eq(holder.id, questions.penHolderId));
-}
-
-export type QuestionRow = Awaited<ReturnType<typeof listQueue>>[number];
-
-/** The questions of one build, newest letter first. */
-export async function listBuildQuestions(viewer: Viewer, orderNumber: string) {
-  const build = await requireCan(viewer, 'question.read', orderNumber);
-  return selectQuestions()
-    .where(and(eq(questions.buildId, build.id), buildIsVisible(viewer), questionIsVisible(viewer)))
-    .orderBy(desc(questions.lastLetterAt))
-    .limit(PAGE);
-}
-
 const waitsFor = (viewer: Viewer) =>
   viewer.role === 'builder'
     ? eq(questions.penHolderId, viewer.id)
     : or(eq(questions.penHolderId, viewer.id), isNull(questions.penHolderId));
-
-/**
- * What the viewer answers for: a builder what they hold the pen of, a rep everything on their builds, a client their
- * own; oldest waiting first, then the answered.
- */
-export function listQueue(viewer: Viewer, beforeMs = Number.MAX_SAFE_INTEGER) {
-  const mine = viewer.role === 'builder' ? waitsFor(viewer) : undefined;
-  return selectQuestions()
-    .where(and(buildIsVisible(viewer), questionIsVisible(viewer), lt(questions.lastLetterAt, beforeMs), mine))
-    .orderBy(sql`case ${questions.state} when 'waiting' then 0 else 1 end`, asc(questions.lastLetterAt))
-    .limit(PAGE);
-}
 
 /** How many questions wait for this viewer: for staff to answer, for a client to read. */
 export async function countWaiting(viewer: Viewer): Promise<number> {
@@ -227,36 +164,48 @@ export async function countWaiting(viewer: Viewer): Promise<number> {
   return row?.n ?? 0;
 }
 
-/** One question with its letters, oldest first. @throws OutOfReach */
+/** One question with its letters, the latest 200 of them, oldest first. @throws OutOfReach */
 export async function requireQuestion(viewer: Viewer, questionId: string) {
-  const [question] = await db()
-    .select({ ...listColumns, finishHex: builds.finishHex, entryId: questions.entryId, askedById: questions.askedById })
-    .from(questions)
-    .innerJoin(builds, eq(builds.id, questions.buildId))
-    .innerJoin(topics, eq(topics.id, questions.topicId))
-    .innerJoin(asker, eq(asker.id, questions.askedById))
-    .leftJoin(holder, eq(holder.id, questions.penHolderId))
-    .where(and(eq(questions.id, questionId), buildIsVisible(viewer), questionIsVisible(viewer)));
+  const question = await findQuestionRow(viewer, questionId);
   if (!question) throw new OutOfReach();
-  const thread = await db()
-    .select({
-      id: letters.id,
-      body: letters.body,
-      side: letters.side,
-      writtenAt: letters.writtenAt,
-      author: users.name,
-      role: users.role,
-      department: users.department,
-    })
-    .from(letters)
-    .innerJoin(users, eq(users.id, letters.authorId))
-    .where(eq(letters.questionId, questionId))
-    .orderBy(asc(letters.writtenAt), asc(letters.id))
-    .limit(200);
-  return { ...question, letters: thread };
+  const [entry, thread] = await Promise.all([
+    question.entryId ? findQuotedEntry(viewer, question.entryId) : null,
+    db()
+      .select({
+        id: letters.id,
+        body: letters.body,
+        side: letters.side,
+        writtenAt: letters.writtenAt,
+        authorId: letters.authorId,
+        author: users.name,
+        role: users.role,
+        department: users.department,
+      })
+      .from(letters)
+      .innerJoin(users, eq(users.id, letters.authorId))
+      .where(eq(letters.questionId, questionId))
+      .orderBy(desc(letters.writtenAt), desc(letters.id))
+      .limit(200),
+  ]);
+  return { ...question, mark: markOf(question), entry, letters: thread.reverse() };
 }
 
 export type QuestionPage = Awaited<ReturnType<typeof requireQuestion>>;
+export type LetterRow = QuestionPage['letters'][number];
+
+const markOf = (question: { lastLetterAt: number; state: string; penHolderId: string | null }) =>
+  [question.lastLetterAt, question.state, question.penHolderId].join('.');
+
+/** Changes whenever the page of the question would show something else; cheap to ask for. @throws OutOfReach */
+export async function requireQuestionMark(viewer: Viewer, questionId: string): Promise<{ mark: string }> {
+  const [question] = await db()
+    .select({ lastLetterAt: questions.lastLetterAt, state: questions.state, penHolderId: questions.penHolderId })
+    .from(questions)
+    .innerJoin(builds, eq(builds.id, questions.buildId))
+    .where(and(eq(questions.id, questionId), buildIsVisible(viewer), questionIsVisible(viewer)));
+  if (!question) throw new OutOfReach();
+  return { mark: markOf(question) };
+}
 
 /** Whether the viewer may write the next letter; what `writeLetter` decides again. */
 export function mayWrite(viewer: Viewer, question: { penHolderId: string | null }): boolean {

@@ -55,4 +55,8 @@ export const stepInForm = z.object({
 });
 export type StepIn = z.output<typeof stepInForm>;
 
+export const personRef = z.object({ userId: idField });
+export const assignmentRef = z.object({ assignmentId: idField });
+export const companionRef = z.object({ orderNumber: orderNumberField, userId: idField });
+
 export const companionForm = z.object({ orderNumber: orderNumberField, name: nameField, email: addressField });

@@ -104,6 +104,8 @@ export function stageOn(surface: Material, turnZ = 0): Scene {
   return scene;
 }
 
+const turnedBy = (radians: number) => ({ cos: Math.cos(radians), sin: Math.sin(radians) });
+
 /** Light from the upper left, as every bench in the shop has its window there. */
 export function shopLight(random: Random, mood: 'day' | 'lamp' | 'booth' = 'day'): Light {
   const turn = between(random, -0.35, 0.35);
@@ -116,9 +118,9 @@ export function shopLight(random: Random, mood: 'day' | 'lamp' | 'booth' = 'day'
     sky: warm ? [0.2, 0.2, 0.22] : [0.24, 0.27, 0.31],
     bounce: warm ? [0.08, 0.06, 0.04] : [0.085, 0.072, 0.06],
     panels: [
-      { x: -0.25, y: 0.75, halfX: 1.3, halfY: 0.12, turn, power },
-      { x: 0.15, y: -0.35, halfX: 1.3, halfY: 0.1, turn: turn + 0.05, power: power * 0.8 },
-      { x: -0.2, y: 2.1, halfX: 1.6, halfY: 0.3, turn: turn * 0.4, power: power * 0.6 },
+      { x: -0.25, y: 0.75, halfX: 1.3, halfY: 0.12, ...turnedBy(turn), power },
+      { x: 0.15, y: -0.35, halfX: 1.3, halfY: 0.1, ...turnedBy(turn + 0.05), power: power * 0.8 },
+      { x: -0.2, y: 2.1, halfX: 1.1, halfY: 0.17, ...turnedBy(turn * 0.4), power: power * 0.6 },
     ],
   };
 }

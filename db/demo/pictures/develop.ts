@@ -11,7 +11,7 @@ export async function develop(exposure: Exposure, finish: Finish, random: Random
   const pixels = await focused(toned(exposure, finish), exposure, finish);
   const large = await sharp(pixels, { raw: { width: exposure.width, height: exposure.height, channels: 3 } })
     .resize(finish.width, finish.height, { kernel: 'cubic' })
-    .sharpen({ sigma: 1.1, m1: 0.6, m2: 1.6 })
+    .sharpen({ sigma: 1.1, m1: 0.25, m2: 1.4 })
     .raw()
     .toBuffer();
   return sharp(grained(large, finish.width, finish.height, random), {

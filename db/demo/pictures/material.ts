@@ -23,7 +23,36 @@ export type Sample = {
   bumpY: number;
   opacity: number;
   glow: number;
+  /** After lighting: what the key light adds where nothing shades it, and the share that reaches the point. */
+  keyR: number;
+  keyG: number;
+  keyB: number;
+  share: number;
 };
+
+export const freshSample = (): Sample => ({
+  x: 0,
+  y: 0,
+  z: 0,
+  facing: 0,
+  edge: 0,
+  footprint: 0,
+  r: 0,
+  g: 0,
+  b: 0,
+  rough: 0,
+  coat: 0,
+  coatRough: 0,
+  metal: 0,
+  bumpX: 0,
+  bumpY: 0,
+  opacity: 1,
+  glow: 0,
+  keyR: 0,
+  keyG: 0,
+  keyB: 0,
+  share: 0,
+});
 
 /** `film` materials (glass, water, dust, chalk) let what lies under them show. */
 export type Material = { layer: 'solid' | 'film'; paint: (sample: Sample) => void };

@@ -32,7 +32,7 @@ export type Shot = {
 export type Subject = (order: PictureOrder, random: Random) => Shot;
 
 /** Drawn smaller and enlarged: a phone's picture is no sharper, and it takes half the time. */
-const DRAWN_SHARE = 0.72;
+const DRAWN_SHARE = 0.66;
 
 export async function take(subject: Subject, order: PictureOrder): Promise<Buffer> {
   const random = mulberry32(order.seed);

@@ -55,12 +55,21 @@ export function coated({ cut, colour, strength = 1, gloss = 1, reach = 6 }: Coat
     const shade = (part: 0 | 1 | 2) => rimTone[part] + (middle[part] - rimTone[part]) * inward;
     const veil = 0.16 + 0.84 * grain ** 1.5;
     const cover = strength * (1 - 0.12 * inward);
-    blend(sample, [shade(0) * veil * 1.12, shade(1) * veil * 1.12, shade(2) * veil * 1.12], cover);
+    const dyed: Rgb = [shade(0) * veil * 1.12, shade(1) * veil * 1.12, shade(2) * veil * 1.12];
+    if (strength === 1) blend(sample, dyed, cover);
+    else soak(sample, dyed, strength);
     sample.coat = gloss > 0 ? 0.35 + 0.65 * gloss : 0;
     sample.coatRough = 0.34 - 0.31 * gloss;
     sample.bumpX += (cloud(sample.x * 1.1, sample.y * 1.1, 3) - 0.5) * 0.012;
     sample.bumpY = sample.bumpY * (1 - gloss) + (cloud(sample.x * 1.1, sample.y * 1.1, 7) - 0.5) * 0.012;
   });
+}
+
+/** Thin dye takes light away from the wood instead of lying over it. */
+function soak(sample: Sample, [r, g, b]: Rgb, amount: number) {
+  sample.r = sample.r ** (1 - amount) * r ** amount;
+  sample.g = sample.g ** (1 - amount) * g ** amount;
+  sample.b = sample.b ** (1 - amount) * b ** amount;
 }
 
 /** Bare metal with fine brushed lines along x. */

@@ -6,7 +6,7 @@ import { moved, placed, type Placing, within } from './placing';
 import { between, type Random } from './random';
 import type { Scene } from './scene';
 import { block, slab } from './slab';
-import { blackMetal, clear, drawn, glowing, metal, plain, rawWood, solid, steel } from './surfaces';
+import { blackMetal, clear, drawn, film, glowing, metal, plain, rawWood, solid, steel } from './surfaces';
 import { linear, tint } from './material';
 import { noise3 } from './noise';
 
@@ -100,11 +100,12 @@ export function addPencil(scene: Scene, spot: Placing) {
 export function addFile(scene: Scene, spot: Placing, length = 22) {
   const base = linear('#8d9094');
   const cut = solid((sample) => {
-    const tooth = noise3((sample.x + sample.y) * 9, (sample.x - sample.y) * 2, 1) - 0.5;
+    const seen = Math.min(1, 0.03 / sample.footprint);
+    const tooth = (noise3((sample.x + sample.y) * 9, (sample.x - sample.y) * 2, 1) - 0.5) * seen;
     tint(sample, base, 0.9 + tooth * 0.5);
     sample.metal = 0.8;
     sample.rough = 0.42;
-    sample.bumpX = tooth * 0.6;
+    sample.bumpX = tooth * 0.3;
   });
   scene.add(moved(block(length, 2.6, 0.55, 0.06), { x: length / 2 }), cut, spot);
   const handle = turning(
@@ -142,7 +143,7 @@ export function addSandingBlock(scene: Scene, spot: Placing, grade: string, pape
   scene.add(block(11, 6.4, 3.2, 0.35), plain(paper, 0.8, 0.4), spot);
   scene.add(moved(block(11.2, 5.2, 0.5, 0.2), { z: 3.1 }), plain('#565b60', 0.6, 0.15), spot);
   const label = moved(written(grade, 0.85, 0.24, 0), { x: -grade.length * 0.7, y: -0.85, z: 3.63 });
-  scene.add(label, drawn('#d8dadb', 0.85, 6), spot);
+  scene.add(label, clear('#d8dadb', 0.82, 0), spot);
 }
 
 /** A hand-held meter of no particular make: dark shell, lit panel, figures, two keys. */
@@ -162,7 +163,12 @@ export function addMeter(scene: Scene, spot: Placing, reading: string, pins = tr
     glowing('#8fa88c', 0.28),
     spot,
   );
-  const figures = moved(written(reading, 0.72, 0.2, 0.06), { x: -reading.length * 0.56, y: 2.3, z: 2.66 });
+  const size = Math.min(0.78, 2.6 / reading.length);
+  const figures = moved(written(reading, size, size * 0.27, 0.06), {
+    x: -reading.length * size * 0.8,
+    y: 3 - size,
+    z: 2.66,
+  });
   scene.add(figures, plain('#10180f', 0.5, 0.02), spot, false);
   for (const x of [-1.3, 1.3])
     scene.add(
@@ -246,7 +252,14 @@ export function addDrops(
   halfY: number,
   z: number,
 ) {
-  const water = clear('#dfeff0', 0.24);
+  const water = film((sample) => {
+    tint(sample, [0.5, 0.58, 0.6]);
+    sample.coat = 1;
+    sample.coatRough = 0.03;
+    sample.opacity = 0.1 + 0.6 * (1 - Math.max(0, sample.facing)) ** 2;
+  });
+  const glint = clear('#ffffff', 0.9, 1);
+  const spark = slab({ outline: circle(1, 8), bottom: 0, top: 0.01 });
   const drop = turning(
     [
       [1, 0],
@@ -258,7 +271,7 @@ export function addDrops(
     ],
     12,
   );
-  const shade = clear('#05090a', 0.4, 0);
+  const shade = clear('#05090a', 0.5, 0);
   for (let index = 0; index < count; index++) {
     const size = 0.08 + 0.42 * random() ** 3;
     const [x, y] = [between(random, -halfX, halfX), between(random, -halfY, halfY)];
@@ -269,6 +282,8 @@ export function addDrops(
       within(spot, placed({ x: x + size * 0.25, y: y - size * 0.2, z: z - 0.02 })),
     );
     scene.add(scaled, water, within(spot, placed({ x, y, z })));
+    const shine = { ...spark, positions: spark.positions.map((value) => value * size * 0.15) };
+    scene.add(shine, glint, within(spot, placed({ x: x + size * 0.3, y: y + size * 0.25, z: z + size * 0.5 })));
   }
 }
 

@@ -22,7 +22,8 @@ export const onTheBench: Subject = (order, random) => {
     camera: lookAt([0, 3, 2], {
       bearing: -86,
       rise: 52,
-      distance: order.body === 'bass' ? 172 : 146, roll: -3,
+      distance: order.body === 'bass' ? 156 : 130,
+      roll: -3,
       blur: 1.2,
     }),
     light: shopLight(random),
@@ -39,7 +40,8 @@ export const uprightPortrait: Subject = (order, random) => {
     camera: lookAt([0, length * 0.08, 2], {
       bearing: -90,
       rise: 66,
-      distance: order.body === 'bass' ? 186 : 150, roll: 2,
+      distance: order.body === 'bass' ? 172 : 136,
+      roll: 2,
       blur: 1.2,
     }),
     light: shopLight(random),
@@ -95,7 +97,8 @@ export const inTheCase: Subject = (order, random) => {
     camera: lookAt([-4, 3, 4], {
       bearing: -84,
       rise: 44,
-      distance: order.body === 'bass' ? 186 : 160, roll: -2,
+      distance: order.body === 'bass' ? 186 : 160,
+      roll: -2,
       blur: 1.3,
     }),
     light: shopLight(random),
@@ -135,7 +138,9 @@ export const finalLook: Subject = (order, random) => {
   scene.add(
     tube(
       [
-        [-16, 23, 26], [-22, 25, 34], [-26, 29, 0],
+        [-16, 23, 26],
+        [-22, 25, 34],
+        [-26, 29, 0],
       ],
       0.7,
       10,

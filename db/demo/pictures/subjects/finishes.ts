@@ -81,8 +81,9 @@ export const colourSamples: Subject = (order, random) => {
     scene.add(
       turning(
         [
-          [2.45, 5],
-          [0, 5.01],
+          [2.36, 5.5],
+          [2.3, 5.53],
+          [0, 5.53],
         ],
         30,
       ),
@@ -174,9 +175,9 @@ function addMist(scene: Scene, spot: Placing, hex: string, length: number) {
     const side = Math.abs(sample.y) / (0.6 + sample.x * 0.3);
     const wisp = cloud(sample.x * 0.22, sample.y * 0.4, 3);
     tint(sample, colour, 1.1);
-    blend(sample, [0.85, 0.87, 0.9], 0.5);
+    blend(sample, [0.9, 0.92, 0.94], 0.42);
     sample.rough = 1;
-    sample.opacity = 0.5 * smooth(1, 0, side) * (1 - 0.85 * smooth(0.1, 1, far)) * (0.45 + 0.8 * wisp);
+    sample.opacity = 1.05 * smooth(1, 0, side) * (1 - smooth(0.05, 1, far)) * (0.5 + 0.7 * wisp);
   });
   scene.add(moved(block(length, length * 0.8, 0.01, 0.001), { x: length / 2 }), mist, spot);
 }
@@ -197,11 +198,11 @@ export const burstSpray: Subject = (order, random) => {
       36,
     ),
     plain('#6a6f72', 0.6, 0.15),
-    placed({ x: -4, y: -2 }),
+    placed({ x: -9, y: -2 }),
   );
-  const gun = placed({ x: 26, y: -16, z: 15, turnY: 14, turnZ: 146 });
+  const gun = placed({ x: 15, y: -8, z: 17, turnX: -52, turnY: 10, turnZ: 150 });
   addSprayGun(scene, gun);
-  addMist(scene, within(gun, placed({ x: 3.2 })), order.finish.edgeHex ?? order.finish.hex, 20);
+  addMist(scene, within(gun, placed({ x: 3.2, turnX: 52 })), order.finish.hex, 21);
   return {
     scene,
     camera: lookAt([3, -1, 8], { bearing: -92, rise: 54, distance: 84, roll: -3 }),
@@ -274,10 +275,7 @@ export const rackOfBodies: Subject = (order, random) => {
           seed: order.seed + place * 5,
           woodTone: pick<WoodTone>(random, 'maple', 'mahogany', 'ash'),
         };
-    const spot = within(
-      placed({ x: place * 16 - 40, y: 4, z: 26 }),
-      placed({ turnY: -62 + between(random, -2, 2) }),
-    );
+    const spot = within(placed({ x: place * 16 - 40, y: 4, z: 26 }), placed({ turnY: -62 + between(random, -2, 2) }));
     addBody(
       scene,
       { ...shown, body: mine ? order.body : 'solid' },

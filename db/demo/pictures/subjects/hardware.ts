@@ -156,7 +156,10 @@ export const pickupsIn: Subject = (order, random) => {
   for (const [index, hex] of ['#e8e6df', '#b3261e'].entries()) {
     const wire: Vec3[] = smoothPath(
       [
-        [-12.6, 2.8], [-11, 5.4 + index], [-8.2, 5.2], [-6.6, 3.2 - index * 0.4],
+        [-12.6, 2.8],
+        [-11, 5.4 + index],
+        [-8.2, 5.2],
+        [-6.6, 3.2 - index * 0.4],
       ],
       8,
     ).map(([x, y], step) => [x, y, TOP + 0.5 - step * 0.06]);
@@ -224,7 +227,7 @@ export const setUpGauge: Subject = (order, random) => {
   const spot = placed({ x: -fretX(fit, 12), z: 0.2 });
   addAll(scene, order, spot);
   const rule = placed({ x: -1.2, y: -2.75, z: BOARD_TOP - 0.1, turnX: 90 });
-  scene.add(moved(block(2.2, 8, 0.09, 0.02), { y: 3.9 }), metal('#c3c6c9', 0.26, 0.7), rule);
+  scene.add(moved(block(2.2, 8, 0.09, 0.02), { y: 3.9 }), plain('#aeb2b5', 0.3, 0.08), rule);
   const ticks = Array.from({ length: 24 }, (_, index) =>
     moved(block(index % 4 === 0 ? 1.1 : 0.6, 0.045, 0.02, 0.004), {
       x: 0.5 - (index % 4 === 0 ? 0 : -0.25),
@@ -279,7 +282,8 @@ export const partsLaidOut: Subject = (order, random) => {
   scene.add(saddles, steel(), spot);
   const parts = pickup(count);
   for (const [x, y] of [
-    [5, 7.5], [6.5, -1.5],
+    [4.6, 7.6],
+    [6.4, 0.6],
   ] as const) {
     const place = placed({ x, y, turnZ: between(random, 70, 110) });
     scene.add(parts.cover, plain('#17181a', 0.3, 0.06), place);
@@ -296,7 +300,7 @@ export const partsLaidOut: Subject = (order, random) => {
     [0, 1.1],
   ]);
   for (let index = 0; index < count; index++) {
-    const place = placed({ x: index * 3.9 - 10, y: -9.5 + between(random, -0.4, 0.4), turnZ: between(random, -8, 8) });
+    const place = placed({ x: index * 3.4 - 10, y: -6.6 + between(random, -0.4, 0.4), turnZ: between(random, -8, 8) });
     scene.add(
       joined(
         post,
@@ -315,7 +319,7 @@ export const partsLaidOut: Subject = (order, random) => {
   }
   return {
     scene,
-    camera: lookAt([-0.5, -0.5, 0.5], { bearing: -94, rise: 54, distance: 36, roll: 5, blur: 1.7 }),
+    camera: lookAt([-0.5, 0.6, 0.5], { bearing: -94, rise: 54, distance: 40, roll: 5, blur: 1.7 }),
     light: shopLight(random),
   };
 };

@@ -1,11 +1,11 @@
 import { addBody, addNeck, ARCH, bare } from '../assembly';
 import { brownBench, darkBench, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
-import { BODY_TOP, bodyOutline } from '../bodies';
+import { BODY_TOP, bodyOutline, NECK_POCKET, PICKUP_HOLES } from '../bodies';
 import { lineAlong } from '../marks';
 import { outlineInset } from '../outline';
 import { moved, placed, within } from '../placing';
 import { between } from '../random';
-import { block } from '../slab';
+import { block, slab } from '../slab';
 import type { Subject } from '../shot';
 import { clear, drawn, dusty, plain, rawWood } from '../surfaces';
 import { addClamp, addPencil, addRule, addSandingBlock, addShavings, addTape } from '../tools';
@@ -31,7 +31,8 @@ export const sandedBody: Subject = (order, random) => {
   addBody(scene, order, bare(order), spot);
   addSandingBlock(
     scene,
-    within(spot, placed({ x: -11, y: 4.4, z: BODY_TOP + ARCH + 0.02, turnZ: 212 })), 'P220',
+    within(spot, placed({ x: -11, y: 4.4, z: BODY_TOP + ARCH + 0.02, turnZ: 212 })),
+    'P220',
     '#7b4a36',
   );
   const lines = Array.from({ length: 5 }, (_, row) =>
@@ -45,7 +46,12 @@ export const sandedBody: Subject = (order, random) => {
     ),
   );
   for (const line of lines.slice(0, 2)) scene.add(line, drawn('#5b5f69', 0.45, 10), spot);
-  scene.add(block(46, 34, 0.02), dusty('#f0dfbd', 0.6, 0.25), within(spot, placed({ z: BODY_TOP + ARCH + 0.01 })));
+  const powdered = { outline: outlineInset(bodyOutline(order.body), 1.6), holes: [NECK_POCKET, ...PICKUP_HOLES] };
+  scene.add(
+    slab({ ...powdered, bottom: 0, top: 0.01 }),
+    dusty('#f0dfbd', 0.6, 0.25),
+    within(spot, placed({ z: BODY_TOP + ARCH })),
+  );
   scene.add(block(300, 300, 0.02), dusty('#d9c49a', 0.5, 0.1), placed({ z: 0.03 }));
   return {
     scene,

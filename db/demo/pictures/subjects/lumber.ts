@@ -22,7 +22,7 @@ function flitch(random: Random, length: number, width: number, thickness: number
   ];
   const places = Array.from({ length: 41 }, (_, index) => (-index / 40) * length);
   const outline = [...places.map((x) => side(1, x)), ...places.reverse().map((x) => side(-1, x))];
-  return slab({ outline, bottom: 0, top: thickness, round: 0.12, cell: 5 });
+  return slab({ outline, bottom: 0, top: thickness, round: 0.12, cell: 0.9 });
 }
 
 /** Sawn boards keep a strip of bark and pale sapwood along their sides. */
@@ -77,7 +77,8 @@ export const flitchStack: Subject = (order, random) => {
   return {
     scene,
     camera: lookAt([-14, -1, 17], { bearing: -42, rise: 24, distance: 96, roll: -1.5, blur: 1.6, focus: 84 }),
-    light: shopLight(random, 'lamp'),
+    light: { ...shopLight(random, 'lamp'), key: [0.42, -0.55, 0.62] },
+    stops: 0.1,
   };
 };
 
@@ -131,8 +132,8 @@ export const stickeredRack: Subject = (order, random) => {
   return {
     scene,
     camera: lookAt([0, 4, 23], { bearing: -68, rise: 13, distance: 98, roll: 1, blur: 1.3, focus: 92 }),
-    light: shopLight(random),
-    stops: 0.2,
+    light: { ...shopLight(random), key: [-0.52, -0.6, 0.55] },
+    stops: 0.25,
     tall: random() < 0.4,
   };
 };

@@ -3,7 +3,7 @@ import { addFarShop, brownBench, darkBench, lookAt, rubberMat, shopLight, stageO
 import { BODY_TOP } from '../bodies';
 import { turning } from '../loft';
 import { cloud, noise3, smooth } from '../noise';
-import { roundedRect } from '../outline';
+import { roundedRect, smoothLoop } from '../outline';
 import { placed, within } from '../placing';
 import { between } from '../random';
 import { block, slab } from '../slab';
@@ -100,14 +100,29 @@ export const buffedShine: Subject = (order, random) => {
   const spot = placed({ x: 0, y: 4, z: 0.6, turnZ: between(random, 60, 84) });
   addBody(scene, order, finished(order), spot);
   const rag = slab({
-    outline: roundedRect(17, 13, 4),
+    outline: smoothLoop([
+      [-9, -5.5],
+      [-4, -7],
+      [1, -5.6],
+      [6, -7.4],
+      [8.6, -4.6],
+      [7.4, 0],
+      [9.4, 4.4],
+      [4.4, 6.6],
+      [0, 5.4],
+      [-5.4, 7.4],
+      [-9, 5],
+      [-7.6, 0],
+    ]),
     bottom: 0,
-    top: 0.3,
-    round: 0.25,
+    top: 0.16,
+    round: 0.14,
     cell: 0.5,
-    arch: (depth, x, y) => smooth(0, 4, depth) * 2.6 * cloud(x * 0.34 + y * 0.2, y * 0.5, order.seed % 9),
+    arch: (depth, x, y) =>
+      smooth(0, 2.4, depth) *
+      (0.2 + 1.5 * Math.abs(Math.sin(x * 0.42 + y * 0.2 + cloud(x * 0.16, y * 0.16, order.seed % 9) * 7))),
   });
-  scene.add(rag, cloth('#d9b23c'), within(spot, placed({ x: -15.5, y: -2, z: TOP - 0.3, turnZ: 30 })));
+  scene.add(rag, cloth('#b8955a'), within(spot, placed({ x: -15.5, y: -2, z: TOP - 0.3, turnZ: 30 })));
   return {
     scene,
     camera: lookAt([0, 1, 4], { bearing: -98, rise: 27, distance: 66, roll: -2, blur: 1.8, focus: 60 }),

@@ -1,0 +1,76 @@
+import { artists, buyers } from './cast';
+import { mulberry32 } from './pictures/random';
+import { demoRoutes, finishes, instruments } from './shop-floor';
+import { DAY_MS, walkDelivered, walkStages, type Random, type TimedStage } from './timeline';
+
+export type PlannedBuild = {
+  orderNumber: string;
+  instrument: (typeof instruments)[number];
+  finish: (typeof finishes)[number];
+  /** Place of the owner among the buyers, or among the artists when `isArtist`. */
+  owner: number;
+  isArtist: boolean;
+  rack: string | null;
+  stages: TimedStage[];
+  deliveredAt: number | null;
+  heldUntilAt: number | null;
+  /** Told at length, with pictures on every page. */
+  isFeatured: boolean;
+};
+
+export const FLOOR_BUILDS = 42;
+export const DELIVERED_BUILDS = 200;
+
+function pick<T>(list: readonly T[], index: number): T {
+  const found = list[index % list.length];
+  if (found === undefined) throw new RangeError('nothing to pick from');
+  return found;
+}
+
+/** Every build of the demo world as of `nowMs`: those on the floor, spread over the stages, and those delivered before. */
+export function planBuilds(nowMs: number): PlannedBuild[] {
+  const random = mulberry32(2417);
+  const floor = Array.from({ length: FLOOR_BUILDS }, (_, index) => planFloorBuild(index, nowMs, random));
+  const delivered = Array.from({ length: DELIVERED_BUILDS }, (_, index) => planDelivered(index, nowMs, random));
+  return [...floor, ...delivered];
+}
+
+function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBuild {
+  const isArtist = index === 1 || index === 9;
+  const instrument = pick(instruments, index);
+  const { stages } = pick(demoRoutes, instrument.route);
+  // The first is in the finish room, so that whoever opens the demo finds a diary with a story.
+  const position = index === 0 ? 8 : index === 1 ? 10 : Math.floor(random() * stages.length);
+  const daysIn = Math.floor(random() * (stages[position]?.usualDays ?? 4));
+  return {
+    orderNumber: `Q-${2417 + index}`,
+    instrument,
+    finish: pick(finishes, index * 3),
+    owner: isArtist ? (index === 1 ? 0 : 1) : index % buyers.length,
+    isArtist,
+    rack: `rack ${1 + (position % 12)}`,
+    stages: walkStages(stages, position, daysIn, nowMs, random),
+    deliveredAt: null,
+    heldUntilAt: index === 1 ? nowMs + 45 * DAY_MS : null,
+    isFeatured: index < 6 || index === 9,
+  };
+}
+
+function planDelivered(index: number, nowMs: number, random: Random): PlannedBuild {
+  const instrument = pick(instruments, index + Math.floor(random() * 3));
+  const { stages } = pick(demoRoutes, instrument.route);
+  const deliveredAt = nowMs - Math.floor((index + 1) * 3.2 + random() * 6) * DAY_MS;
+  const isArtist = index % 40 === 7;
+  return {
+    orderNumber: `Q-${2416 - index}`,
+    instrument,
+    finish: pick(finishes, Math.floor(random() * finishes.length)),
+    owner: isArtist ? index % artists.length : Math.floor(random() * buyers.length),
+    isArtist,
+    rack: null,
+    stages: walkDelivered(stages, deliveredAt, random),
+    deliveredAt,
+    heldUntilAt: null,
+    isFeatured: false,
+  };
+}
