@@ -3,6 +3,8 @@ export type Refused = { status: number; message: string; fields: Record<string, 
 
 export type Sent = { ok: true; answer: unknown } | { ok: false; refused: Refused };
 
+export type Sendable = { idempotencyKey: string; [field: string]: unknown };
+
 const GIVE_UP_MS = 30_000;
 
 /**
@@ -10,7 +12,7 @@ const GIVE_UP_MS = 30_000;
  * work once, so the same body may be sent again whenever it is not known whether the first try arrived.
  * Never throws; every failure is a sentence.
  */
-export async function sendJson(url: string, body: { idempotencyKey: string }): Promise<Sent> {
+export async function sendJson(url: string, body: Sendable): Promise<Sent> {
   try {
     const response = await fetch(url, {
       method: 'POST',

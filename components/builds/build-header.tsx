@@ -16,9 +16,9 @@ export function BuildHeader({ build, stages, ownerName, zone, nowMs }: BuildHead
           <h1 className="mt-1 text-3xl md:text-4xl">
             <bdi>{build.instrument}</bdi>
           </h1>
-          <p className="mt-2 flex flex-wrap items-center gap-x-2 text-soft md:text-lg">
+          <p className="mt-2 flex gap-x-2 text-soft md:text-lg">
             <FinishDot />
-            {facts.filter(Boolean).join(' · ')}
+            <span>{facts.filter(Boolean).join(' · ')}</span>
           </p>
           {build.heldUntilAt !== null && build.heldUntilAt > nowMs && (
             <p className="mt-2 font-semibold text-brass-deep">
@@ -34,7 +34,7 @@ export function BuildHeader({ build, stages, ownerName, zone, nowMs }: BuildHead
 
 function FinishDot() {
   return (
-    <svg width="18" height="18" aria-hidden="true" focusable="false" className="shrink-0">
+    <svg width="18" height="18" aria-hidden="true" focusable="false" className="mt-1 shrink-0">
       <circle cx="9" cy="9" r="8.5" className="fill-finish stroke-edge" />
       <circle cx="6.5" cy="6" r="2.5" fill="#ffffff" opacity="0.35" />
     </svg>

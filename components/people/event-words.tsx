@@ -17,22 +17,93 @@ const sentences: Record<AuditAction, (parts: Parts) => ReactNode> = {
   signed_in: ({ who }) => <>{who} signed in</>,
   signed_out: ({ who }) => <>{who} signed out</>,
   sessions_ended: ({ who, whom, isOwn }) =>
-    isOwn ? <>{who} signed out everywhere else</> : <>{who} signed {whom} out everywhere</>,
-  invited: ({ who, whom }) => <>{who} invited {whom}</>,
-  role_changed: ({ who, whom, reason }) => <>{who} changed what {whom} is: {reason}</>,
-  person_closed: ({ who, whom }) => <>{who} closed the account of {whom}</>,
-  person_reopened: ({ who, whom }) => <>{who} opened the account of {whom} again</>,
-  assigned: ({ who, whom, build, isOwn }) => (isOwn ? <>{who} came onto {build}</> : <>{who} put {whom} on {build}</>),
-  cleared: ({ who, whom, build }) => <>{who} cleared {whom} for the hold on {build}</>,
+    isOwn ? (
+      <>{who} signed out everywhere else</>
+    ) : (
+      <>
+        {who} signed {whom} out everywhere
+      </>
+    ),
+  invited: ({ who, whom }) => (
+    <>
+      {who} invited {whom}
+    </>
+  ),
+  role_changed: ({ who, whom, reason }) => (
+    <>
+      {who} changed what {whom} is: {reason}
+    </>
+  ),
+  person_closed: ({ who, whom }) => (
+    <>
+      {who} closed the account of {whom}
+    </>
+  ),
+  person_reopened: ({ who, whom }) => (
+    <>
+      {who} opened the account of {whom} again
+    </>
+  ),
+  assigned: ({ who, whom, build, isOwn }) =>
+    isOwn ? (
+      <>
+        {who} came onto {build}
+      </>
+    ) : (
+      <>
+        {who} put {whom} on {build}
+      </>
+    ),
+  cleared: ({ who, whom, build }) => (
+    <>
+      {who} cleared {whom} for the hold on {build}
+    </>
+  ),
   assignment_ended: ({ who, whom, build, isOwn }) =>
-    isOwn ? <>{who} left {build}</> : <>{who} took {whom} off {build}</>,
-  stepped_in: ({ who, build }) => <>{who} stepped in on {build}</>,
-  companion_added: ({ who, whom, build }) => <>{who} let {whom} look on at {build}</>,
-  companion_removed: ({ who, whom, build }) => <>{who} stopped {whom} looking on at {build}</>,
-  held: ({ who, build }) => <>{who} held {build} from view</>,
-  opened: ({ who, build }) => <>{who} opened {build} to view</>,
-  entry_released: ({ who, build }) => <>{who} released an entry of {build}</>,
-  build_read: ({ who, build }) => <>{who} asked for {build}</>,
+    isOwn ? (
+      <>
+        {who} left {build}
+      </>
+    ) : (
+      <>
+        {who} took {whom} off {build}
+      </>
+    ),
+  stepped_in: ({ who, build }) => (
+    <>
+      {who} stepped in on {build}
+    </>
+  ),
+  companion_added: ({ who, whom, build }) => (
+    <>
+      {who} let {whom} look on at {build}
+    </>
+  ),
+  companion_removed: ({ who, whom, build }) => (
+    <>
+      {who} stopped {whom} looking on at {build}
+    </>
+  ),
+  held: ({ who, build }) => (
+    <>
+      {who} held {build} from view
+    </>
+  ),
+  opened: ({ who, build }) => (
+    <>
+      {who} opened {build} to view
+    </>
+  ),
+  entry_released: ({ who, build }) => (
+    <>
+      {who} released an entry of {build}
+    </>
+  ),
+  build_read: ({ who, build }) => (
+    <>
+      {who} asked for {build}
+    </>
+  ),
 };
 
 const named = (name: string | null) => <bdi className="font-semibold">{name ?? 'somebody'}</bdi>;

@@ -11,13 +11,13 @@ import { fresh } from '@/lib/form-state';
 type HoldFormProps = {
   hold: FormAction;
   orderNumber: string;
-  /** The days it may end on, as ISO dates, and the day it ends on now. */
+  /** The days it may end on, as ISO dates. */
   range: { first: string; last: string };
-  until?: string;
+  isHeld: boolean;
   placeWords: string;
 };
 
-export function HoldForm({ hold, orderNumber, range, until, placeWords }: HoldFormProps) {
+export function HoldForm({ hold, orderNumber, range, isHeld, placeWords }: HoldFormProps) {
   const [state, send, isSending] = useActionState(hold, fresh);
   const refused = refusalIn(state);
   return (
@@ -31,13 +31,13 @@ export function HoldForm({ hold, orderNumber, range, until, placeWords }: HoldFo
         min={range.first}
         max={range.last}
         hint={`It opens by itself as that day begins, ${placeWords} time.`}
-        defaultValue={refused?.values.until ?? until}
+        defaultValue={refused?.values.until}
         error={refused?.fields.until}
       />
       <FormOutcome state={state} shown={['until']} />
       <div>
         <Button type="submit" disabled={isSending}>
-          {until ? 'Change the day' : 'Hold it from view'}
+          {isHeld ? 'Change the day' : 'Hold it from view'}
         </Button>
       </div>
     </form>

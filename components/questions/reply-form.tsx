@@ -12,7 +12,6 @@ type ReplyFormProps = {
   /** Drafts are kept for each person: a tab may see another one sign in. */
   viewerId: string;
   label: string;
-  placeholder: string;
   button: string;
   /** Who gets it by mail, as a sentence. */
   mailWords: string;
@@ -23,7 +22,7 @@ export function ReplyForm(props: ReplyFormProps) {
   return <Form key={String(isBrowser)} isBrowser={isBrowser} {...props} />;
 }
 
-function Form({ questionId, viewerId, isBrowser, label, placeholder, button, mailWords }: ReplyFormProps & { isBrowser: boolean }) {
+function Form({ questionId, viewerId, isBrowser, label, button, mailWords }: ReplyFormProps & { isBrowser: boolean }) {
   const router = useRouter();
   const [isSent, setIsSent] = useState(false);
   const { draft, change, send, refused, isSending } = useDraftForm(`letter/${viewerId}/${questionId}`, isBrowser);
@@ -47,7 +46,6 @@ function Form({ questionId, viewerId, isBrowser, label, placeholder, button, mai
         key={draft.idempotencyKey}
         initial={draft.note ?? undefined}
         label={label}
-        placeholder={placeholder}
         onChange={(note) => change({ note })}
         disabled={isSending}
         invalid={refused?.fields.note}

@@ -2,7 +2,7 @@
 
 import { useEffect, useState, useSyncExternalStore } from 'react';
 import { keepDraft, newDraft, readDraft, type Draft } from './draft';
-import { sendJson, type Refused } from '@/lib/send-json';
+import { sendJson, type Refused, type Sendable } from '@/lib/send-json';
 
 const neverChanges = () => () => undefined;
 
@@ -30,7 +30,7 @@ export function useDraftForm(name: string, isBrowser: boolean) {
     if (isBrowser) keepDraft(name, draft);
   }, [isBrowser, name, draft]);
 
-  async function send(url: string, body: { idempotencyKey: string }): Promise<unknown> {
+  async function send(url: string, body: Sendable): Promise<unknown> {
     setIsSending(true);
     const sent = await sendJson(url, body);
     setIsSending(false);

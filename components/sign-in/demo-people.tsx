@@ -26,12 +26,13 @@ export function DemoPeople({ ask, people, mailRoomUrl }: { ask: Ask; people: Per
         </a>{' '}
         on this machine.
       </p>
-      <form action={send} className="grid gap-6 sm:grid-cols-2">
+      <form action={send} className="grid gap-6 sm:grid-cols-2 lg:grid-cols-3">
         {groups.map(([title, roles]) => (
           <fieldset key={title} disabled={isSending} className="grid content-start gap-2">
             <legend className="heading mb-2">{title}</legend>
             {people
               .filter((person) => roles.some((role) => role === person.role))
+              .slice(0, 9)
               .map((person) => (
                 <PersonButton key={person.email} person={person} />
               ))}

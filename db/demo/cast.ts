@@ -62,6 +62,38 @@ export const buyers = [
   client('buyer', 'Ottilie Brandt', 'Europe/Vienna'),
 ];
 
+const firstNames = [
+  'Agnes',
+  'Bram',
+  'Cleo',
+  'Dmitri',
+  'Esra',
+  'Fergus',
+  'Gwen',
+  'Hakon',
+  'Ilse',
+  'Jory',
+  'Kaia',
+  'Leif',
+];
+const lastNames = [
+  'Aldous',
+  'Bellweather',
+  'Corrigan',
+  'Dunmore',
+  'Eastlake',
+  'Fennimore',
+  'Garrow',
+  'Holloway',
+  'Ivarsson',
+];
+const zones = ['Europe/London', 'America/New_York', 'Europe/Berlin', 'America/Los_Angeles', 'Asia/Tokyo'];
+
+/** Everybody else who has ordered, by combination; as many as there are pairs of names. */
+export const furtherBuyers = firstNames.flatMap((first, row) =>
+  lastNames.map((last, column) => client('buyer', `${first} ${last}`, zones[(row + column) % zones.length] ?? 'UTC')),
+);
+
 /** Lets the owner of the first build be looked over the shoulder. */
 export const companion = client('buyer', 'Felix Oyelaran', 'Europe/Lisbon');
 

@@ -2,9 +2,13 @@ import type { PlannedEntry } from './diary';
 import type { Cast, Person } from './people';
 import type { LibraryPhoto } from './photo-library';
 import type { PlannedBuild } from './plan';
+import { DAY_MS } from './timeline';
 import type { Tx } from '../client';
-import { assignments, buildPeople, builds, buildStages, diaryEvents, entries, photos } from '../schema';
+import { assignments, buildPeople, builds, buildStages, diaryEvents, diaryVisits, entries, photos } from '../schema';
 import { newId } from '../schema/columns';
+
+/** How long ago an owner last looked in. */
+const SINCE_VISIT_MS = 6 * DAY_MS;
 
 export type EnteredBuild = { id: string; plan: PlannedBuild; owner: Person; rep: Person; entryIds: string[] };
 
@@ -15,6 +19,7 @@ export async function enterBuild(
   routeId: string,
   cast: Cast,
   pages: PlannedEntry[],
+  nowMs: number,
 ): Promise<EnteredBuild> {
   const id = newId();
   const orderedAt = plan.stages[0]?.startedAt ?? 0;
@@ -36,6 +41,7 @@ export async function enterBuild(
   });
   const stageIds = await enterStages(tx, id, plan);
   const { owner, rep } = await enterStanding(tx, id, plan, cast, orderedAt);
+  await tx.insert(diaryVisits).values({ buildId: id, userId: owner.id, visitedAt: nowMs - SINCE_VISIT_MS });
   const entryIds: string[] = [];
   for (const page of pages) entryIds.push(await enterPage(tx, id, stageIds[page.stagePosition] ?? '', page));
   return { id, plan, owner, rep, entryIds };
@@ -48,7 +54,7 @@ async function enterStages(tx: Tx, buildId: string, plan: PlannedBuild): Promise
 }
 
 async function enterStanding(tx: Tx, buildId: string, plan: PlannedBuild, cast: Cast, startedAt: number) {
-  const owner = (plan.isArtist ? cast.artists : cast.buyers)[plan.owner] ?? cast.companion;
+  const owner = (plan.isArtist ? cast.artists : [...cast.buyers, ...cast.furtherBuyers])[plan.owner] ?? cast.companion;
   const orderIndex = Number(plan.orderNumber.slice(2));
   const rep = cast.reps[plan.isArtist ? 0 : orderIndex % cast.reps.length] ?? cast.admin;
   await tx.insert(buildPeople).values({ buildId, userId: owner.id, standing: 'owner' });

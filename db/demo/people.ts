@@ -1,4 +1,4 @@
-import { addressOf, admin, artists, builders, buyers, companion, reps, type CastMember } from './cast';
+import { addressOf, admin, artists, builders, buyers, companion, furtherBuyers, reps, type CastMember } from './cast';
 import { DAY_MS } from './timeline';
 import type { Tx } from '../client';
 import { mailSettings, users } from '../schema';
@@ -39,7 +39,13 @@ export async function enterPeople(tx: Tx, nowMs: number) {
   };
   const staff = { admin: await enter(admin), reps: await all(reps), builders: await all(builders) };
   count = 0;
-  return { ...staff, buyers: await all(buyers), artists: await all(artists), companion: await enter(companion) };
+  return {
+    ...staff,
+    buyers: await all(buyers),
+    artists: await all(artists),
+    companion: await enter(companion),
+    furtherBuyers: await all(furtherBuyers),
+  };
 }
 
 export type Cast = Awaited<ReturnType<typeof enterPeople>>;

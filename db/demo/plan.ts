@@ -1,4 +1,4 @@
-import { artists, buyers } from './cast';
+import { artists } from './cast';
 import { mulberry32 } from './pictures/random';
 import { demoRoutes, finishes, instruments } from './shop-floor';
 import { DAY_MS, walkDelivered, walkStages, type Random, type TimedStage } from './timeline';
@@ -7,7 +7,7 @@ export type PlannedBuild = {
   orderNumber: string;
   instrument: (typeof instruments)[number];
   finish: (typeof finishes)[number];
-  /** Place of the owner among the buyers, or among the artists when `isArtist`. */
+  /** Place of the owner among all buyers, the named ones first, or among the artists when `isArtist`. */
   owner: number;
   isArtist: boolean;
   rack: string | null;
@@ -46,7 +46,7 @@ function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBu
     orderNumber: `Q-${2417 + index}`,
     instrument,
     finish: pick(finishes, index * 3),
-    owner: isArtist ? (index === 1 ? 0 : 1) : index % buyers.length,
+    owner: isArtist ? (index === 1 ? 0 : 1) : index,
     isArtist,
     rack: `rack ${1 + (position % 12)}`,
     stages: walkStages(stages, position, daysIn, nowMs, random),
@@ -65,7 +65,8 @@ function planDelivered(index: number, nowMs: number, random: Random): PlannedBui
     orderNumber: `Q-${2416 - index}`,
     instrument,
     finish: pick(finishes, Math.floor(random() * finishes.length)),
-    owner: isArtist ? index % artists.length : Math.floor(random() * buyers.length),
+    // Some come back for another; Maren, the first, has just the one.
+    owner: isArtist ? index % artists.length : 3 + Math.floor(random() * 120),
     isArtist,
     rack: null,
     stages: walkDelivered(stages, deliveredAt, random),

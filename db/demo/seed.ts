@@ -56,7 +56,9 @@ async function enterBuilds(
   const onFloor: EnteredBuild[] = [];
   for (const plan of planBuilds(nowMs)) {
     const pages = await planEntries(plan, cast, library, nowMs);
-    const entered = await write((tx) => enterBuild(tx, plan, routeIds[plan.instrument.route] ?? '', cast, pages));
+    const entered = await write((tx) =>
+      enterBuild(tx, plan, routeIds[plan.instrument.route] ?? '', cast, pages, nowMs),
+    );
     if (plan.deliveredAt !== null) continue;
     onFloor.push(entered);
     if (onFloor.length % 6 === 0) tell(`${onFloor.length} builds entered, ${library.count} pictures drawn`);

@@ -9,6 +9,8 @@ import { BadInput } from '@/lib/errors';
 import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 40;
+/** Before a first visit nothing counts as new. */
+const ALL_OLD = Number.MAX_SAFE_INTEGER;
 
 const stageNow = alias(buildStages, 'stage_now');
 const isNow = and(eq(stageNow.buildId, builds.id), isNotNull(stageNow.startedAt), isNull(stageNow.finishedAt));
@@ -23,7 +25,7 @@ export function listBuilds(viewer: Viewer, before?: string) {
   const owner = sql<
     string | null
   >`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${builds.id} and ${buildPeople.standing} = 'owner')`;
-  const newCount = sql<number>`(select count(*) from (select 1 from ${entries} where ${entries.buildId} = ${builds.id} and ${entryIsVisible(viewer)} and ${entries.authorId} <> ${viewer.id} and ${entries.datedAt} > coalesce((select ${diaryVisits.visitedAt} from ${diaryVisits} where ${diaryVisits.buildId} = ${builds.id} and ${diaryVisits.userId} = ${viewer.id}), 0) limit 100))`;
+  const newCount = sql<number>`(select count(*) from (select 1 from ${entries} where ${entries.buildId} = ${builds.id} and ${entryIsVisible(viewer)} and ${entries.authorId} <> ${viewer.id} and ${entries.datedAt} > coalesce((select ${diaryVisits.visitedAt} from ${diaryVisits} where ${diaryVisits.buildId} = ${builds.id} and ${diaryVisits.userId} = ${viewer.id}), ${ALL_OLD}) limit 100))`;
   return db()
     .select({
       orderNumber: builds.orderNumber,

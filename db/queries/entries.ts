@@ -1,4 +1,4 @@
-import { and, count, eq, inArray, isNull, ne, sql } from 'drizzle-orm';
+import { and, count, eq, inArray, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
 import { startStage, touchDiary } from './builds';
 import { requireCan } from './standing';
@@ -199,7 +199,7 @@ export function releaseEntry(viewer: Viewer, entryId: string, nowMs: number): Pr
       .select({ id: entries.id, buildId: entries.buildId, orderNumber: builds.orderNumber })
       .from(entries)
       .innerJoin(builds, eq(builds.id, entries.buildId))
-      .where(and(eq(entries.id, entryId), buildIsVisible(viewer), ne(entries.state, 'withdrawn')));
+      .where(and(eq(entries.id, entryId), buildIsVisible(viewer), entryIsVisible(viewer)));
     if (!entry) throw new OutOfReach();
     await requireCan(viewer, 'entry.release', entry.orderNumber, tx);
     const released = await tx

@@ -2,7 +2,8 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { listBuilds, listClients, listStaff, listStages, requireBuild } from '@/db/queries/builds';
 import { diaryPage, diaryState } from '@/db/queries/diary';
 import { requirePhotoObject } from '@/db/queries/photos';
-import { listBuildQuestions, listQueue, requireQuestion } from '@/db/queries/questions';
+import { listBuildQuestions, listQueue } from '@/db/queries/question-lists';
+import { requireQuestion } from '@/db/queries/questions';
 import { OutOfReach } from '@/lib/errors';
 import { openTestDatabase } from '../support/database';
 import { openShop } from '../support/world';
@@ -144,8 +145,8 @@ describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ wh
         .filter(([, id]) => rows.some((row) => row.id === id))
         .map(([name]) => name)
         .join(', ');
-    if (read) expect(named(await listBuildQuestions(viewer, cast.open.orderNumber))).toBe(read);
-    const queue = named(await listQueue(viewer));
+    if (read) expect(named((await listBuildQuestions(viewer, cast.open.orderNumber, null)).questions)).toBe(read);
+    const queue = named((await listQueue(viewer, null)).questions);
     expect(queue).toBe(viewer.role === 'builder' ? '' : read);
   });
 

@@ -166,9 +166,9 @@ function makeBody(kind: BodyKind, cuts: BodyCuts, height: number): Mesh[] {
     ...(isHeld(kind) ? soundHoles() : []),
   ];
   const floor = 2.2;
-  const lower = slab({ outline, bottom: 0, top: floor, cell: 2 });
+  const lower = slab({ outline, bottom: 0, top: floor, round: 0.25, cell: 2 });
   const arch = height > 0 ? { arch: archOf(kind, height) } : {};
-  const upper = slab({ outline, holes, bottom: floor - 0.01, top: BODY_TOP, round: 0.9, cell: 0.4, ...arch });
+  const upper = slab({ outline, holes, bottom: floor - 0.3, top: BODY_TOP, round: 0.9, cell: 0.4, ...arch });
   return [lower, upper];
 }
 

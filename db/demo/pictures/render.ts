@@ -43,7 +43,7 @@ function look(packed: Packed, projected: Projected, size: Pick<Plane, 'width' | 
   const hasFilm = packed.materials.some(({ layer }) => layer === 'film');
   if (!hasFilm) return { solids, films: solids, near, hasFilm };
   const films = new Int32Array(near.length).fill(-1);
-  rasterise(projected, packed.triangles, { ...size, near: Float32Array.from(near), ids: films }, isFilm);
+  rasterise(projected, packed.triangles, { ...size, near: near.slice(), ids: films }, isFilm);
   return { solids, films, near, hasFilm };
 }
 

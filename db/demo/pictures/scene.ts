@@ -42,13 +42,13 @@ export class Scene {
 
   packed(): Packed {
     return {
-      world: Float32Array.from(this.world),
-      local: Float32Array.from(this.local),
-      normals: Float32Array.from(this.normals),
-      edges: Float32Array.from(this.edges),
-      triangles: Int32Array.from(this.triangles),
-      surfaces: Int32Array.from(this.surfaces),
-      casts: Uint8Array.from(this.casts),
+      world: new Float32Array(this.world),
+      local: new Float32Array(this.local),
+      normals: new Float32Array(this.normals),
+      edges: new Float32Array(this.edges),
+      triangles: new Int32Array(this.triangles),
+      surfaces: new Int32Array(this.surfaces),
+      casts: new Uint8Array(this.casts),
       materials: this.materials,
     };
   }

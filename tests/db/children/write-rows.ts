@@ -1,7 +1,7 @@
 import { Database } from '@/db/client';
 import { rateLimits } from '@/db/schema';
 
-/** Writes rows through the queue, several at a time, and tells each one that was acknowledged; until it is killed. */
+/** Once told to, writes rows through the queue, several at a time, and tells each that was acknowledged, until killed. */
 const [url = '', name = ''] = process.argv.slice(2);
 const database = new Database(url);
 
@@ -13,4 +13,5 @@ async function writeForever(lane: number): Promise<void> {
   }
 }
 
+await new Promise((told) => process.once('message', told));
 await Promise.all([0, 1, 2, 3].map(writeForever));

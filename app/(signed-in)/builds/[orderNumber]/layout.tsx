@@ -3,7 +3,7 @@ import { BuildNav } from '@/components/builds/build-nav';
 import { FinishStyle } from '@/components/builds/finish-style';
 import { requireBuild } from '@/db/queries/builds';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
-import { can } from '@/lib/access';
+import { can, isClientRole } from '@/lib/access';
 import { pageNonce } from '@/lib/request';
 
 /** Every page of a build wears its finish and carries the way to the others. It guards nothing by itself. */
@@ -20,7 +20,7 @@ export default async function BuildLayout({ children, params }: LayoutProps<'/bu
   return (
     <>
       <FinishStyle finishHex={build.finishHex} nonce={await pageNonce()} />
-      <BuildNav links={links} instrument={build.instrument} />
+      <BuildNav links={links} instrument={build.instrument} isAlone={isClientRole(viewer.role)} />
       {children}
     </>
   );

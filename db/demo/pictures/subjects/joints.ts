@@ -1,5 +1,5 @@
 import { addBody, addNeck, ARCH, bare } from '../assembly';
-import { brownBench, darkBench, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
+import { brownBench, darkBench, ground, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
 import { BODY_TOP, bodyOutline, NECK_POCKET, PICKUP_HOLES } from '../bodies';
 import { lineAlong } from '../marks';
 import { outlineInset } from '../outline';
@@ -17,7 +17,7 @@ export const neckPocket: Subject = (order, random) => {
   addNeck(scene, order, within(spot, placed({ x: 5.5, y: -0.4, z: 1.6, turnY: -3 })), { nutted: false });
   addShavings(scene, random, placed({ x: 12, y: -13 }), 8, 6);
   addPencil(scene, placed({ x: -4, y: -19, turnZ: 8 }));
-  scene.add(block(60, 50, 0.02), dusty('#e0c99f', 0.55, 0.15), placed({ z: 0.03 }));
+  scene.add(ground(60), dusty('#e0c99f', 0.55, 0.15), placed({ z: 0.03 }));
   return {
     scene,
     camera: lookAt([4, 2, 5], { bearing: -48, rise: 34, distance: 46, roll: 3, blur: 2 }),
@@ -52,7 +52,7 @@ export const sandedBody: Subject = (order, random) => {
     dusty('#f0dfbd', 0.6, 0.25),
     within(spot, placed({ z: BODY_TOP + ARCH })),
   );
-  scene.add(block(300, 300, 0.02), dusty('#d9c49a', 0.5, 0.1), placed({ z: 0.03 }));
+  scene.add(ground(80), dusty('#d9c49a', 0.5, 0.1), placed({ z: 0.03 }));
   return {
     scene,
     camera: lookAt([0, -1, 3], { bearing: -84, rise: 50, distance: 68, roll: -4, blur: 1.7 }),

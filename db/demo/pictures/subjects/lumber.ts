@@ -1,8 +1,8 @@
-import { addFarShop, brownBench, darkBench, lookAt, rough, rubberMat, shopLight, stageOn } from '../bench';
+import { addFarShop, brownBench, darkBench, ground, lookAt, rough, rubberMat, shopLight, stageOn } from '../bench';
 import { written } from '../marks';
 import { blend, linear, type Material } from '../material';
 import { type Mesh } from '../mesh';
-import { noise3, smooth } from '../noise';
+import { cloud, noise3, smooth } from '../noise';
 import type { Point } from '../outline';
 import { moved, placed, within } from '../placing';
 import { between, type Random } from '../random';
@@ -27,16 +27,19 @@ function flitch(random: Random, length: number, width: number, thickness: number
 
 /** Sawn boards keep a strip of bark and pale sapwood along their sides. */
 function flitchWood(cut: Cut, width: number): Material {
-  const bark = linear('#3a2c22');
+  const bark = linear('#5b4736');
+  const crack = linear('#1d1510');
   const sap = linear('#d8be93');
   const sawn = rawWood(cut, 0.8);
   return solid((sample) => {
     sawn.paint(sample);
     const out = Math.abs(sample.y) + (noise3(sample.x * 0.2, sample.y > 0 ? 1 : 9, 2) - 0.5) * 2;
     blend(sample, sap, 0.45 * smooth(width * 0.33, width * 0.42, out));
-    const crust =
-      smooth(width * 0.44, width * 0.48, out) * (0.6 + 0.4 * noise3(sample.x * 2, sample.y * 3, sample.z * 3));
-    blend(sample, bark, crust);
+    const crust = smooth(width * 0.44, width * 0.47, out);
+    const plate = smooth(0.36, 0.6, cloud(sample.x * 0.9, sample.y * 2.2, sample.z * 2.4));
+    blend(sample, plate > 0.5 ? bark : crack, crust * (0.35 + 0.65 * Math.abs(plate * 2 - 1)));
+    sample.bumpX += crust * (plate - 0.5) * 0.5;
+    sample.bumpY += crust * (noise3(sample.x * 3, sample.y * 6, sample.z * 6) - 0.5) * 0.6;
   });
 }
 
@@ -177,7 +180,7 @@ export const sampleBoards: Subject = (order, random) => {
   });
   scene.add(block(20, 14, 0.4, 0.05), plain('#d8d2c2', 0.8), placed({ x: 16, y: -22, turnZ: -12 }));
   addPencil(scene, placed({ x: 12, y: -22, z: 0.45, turnZ: 20 }));
-  scene.add(block(150, 100, 0.02), dusty('#d9c29a', 0.4, 0.12), placed({ z: 0.02 }));
+  scene.add(ground(70), dusty('#d9c29a', 0.4, 0.12), placed({ z: 0.02 }));
   return {
     scene,
     camera: lookAt([1, -3, 1], { bearing: -94, rise: 62, distance: 74, roll: 5 }),

@@ -1,4 +1,4 @@
-import { ironTable, lookAt, paleBench, rough, rubberMat, shopLight, stageOn } from '../bench';
+import { ground, ironTable, lookAt, paleBench, rough, rubberMat, shopLight, stageOn } from '../bench';
 import {
   archOf,
   bodyMeshes,
@@ -141,7 +141,7 @@ export const routedCavities: Subject = (order, random) => {
     shifted(roundedRect(7, 3.4, 0.8), -13, 5),
   ];
   scene.add(slab({ outline, holes, bottom: 1.39, top: 4.4, round: 0.5, cell: 0.42 }), rawWood(cut), spot);
-  scene.add(block(90, 90, 0.02), dusty('#e3cfa4', 0.75, 0.11), placed({ z: 0.03 }));
+  scene.add(ground(70), dusty('#e3cfa4', 0.75, 0.11), placed({ z: 0.03 }));
   addChips(scene, random, placed({ x: 12, y: -10 }), '#b98a5a', 160, 26, 4.45);
   addSpindle(scene, 12.5, 8.5, 2.4);
   return {

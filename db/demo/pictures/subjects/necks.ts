@@ -1,5 +1,5 @@
 import { addNeck, bare } from '../assembly';
-import { brownBench, darkBench, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
+import { brownBench, darkBench, ground, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
 import { headOutline, TUNERS } from '../bodies';
 import { dots, fingerboard, fittings, fretX, headstock, neckShaft, nutX, slots } from '../instrument';
 import { turning } from '../loft';
@@ -22,7 +22,7 @@ export const slottedBoard: Subject = (order, random) => {
   scene.add(slots(fit), plain('#080605'), spot, false);
   addRule(scene, placed({ x: -24, y: 5, turnZ: 1 }));
   addPencil(scene, placed({ x: 16, y: -8, turnZ: 162 }));
-  scene.add(block(120, 60, 0.02), dusty('#4a2f22', 0.5, 0.14), placed({ z: 0.02 }));
+  scene.add(ground(70), dusty('#4a2f22', 0.5, 0.14), placed({ z: 0.02 }));
   return {
     scene,
     camera: lookAt([-1, 0, 0.5], { bearing: -118, rise: 42, distance: 30, roll: 4, blur: 2 }),
@@ -94,7 +94,7 @@ export const headstockShaped: Subject = (order, random) => {
   scene.add(lineAlong(rim, 0.01, 0.06), drawn('#332d2a', 0.5, 12), spot);
   addFile(scene, placed({ x: -2, y: -9.5, turnZ: 12 }));
   addShavings(scene, random, placed({ x: 9, y: 9 }), 12, 8);
-  scene.add(block(70, 60, 0.02), dusty('#e0c89c', 0.7, 0.16), placed({ z: 0.02 }));
+  scene.add(ground(70), dusty('#e0c89c', 0.7, 0.16), placed({ z: 0.02 }));
   return {
     scene,
     camera: lookAt([1, -0.5, 2], { bearing: -98, rise: 54, distance: 46, roll: -3, blur: 1.8 }),

@@ -29,7 +29,7 @@ export const wetSanding: Subject = (order, random) => {
   addBody(scene, order, finished(order, 0.55), spot, false);
   scene.add(block(23, 19, 0.02), slurry, within(spot, placed({ x: -8, z: TOP + 0.01 })));
   addSandingBlock(scene, within(spot, placed({ x: -8, y: 1, z: TOP, turnZ: 196 })), 'P1500');
-  addDrops(scene, random, within(spot, placed({ x: -7 })), 190, 9, 8, TOP + 0.01);
+  addDrops(scene, random, within(spot, placed({ x: -7 })), 120, 9, 8, TOP + 0.01);
   return {
     scene,
     camera: lookAt([10, -2, 5], { bearing: -92, rise: 48, distance: 44, roll: -4, blur: 1.9 }),

@@ -1,0 +1,24 @@
+import type { ReactNode } from 'react';
+import { notFound } from 'next/navigation';
+import { AccessNav } from '@/components/access/access-nav';
+import { can } from '@/lib/access';
+import { pageViewer } from '@/lib/auth/page';
+
+const links = [
+  { href: '/access', label: 'People' },
+  { href: '/access/builds', label: 'Builds' },
+  { href: '/access/mail', label: 'Mail' },
+  { href: '/access/record', label: 'Record' },
+];
+
+/** The way between the access pages. What each shows is guarded by its own queries. */
+export default async function AccessLayout({ children }: { children: ReactNode }) {
+  const viewer = await pageViewer();
+  if (!can(viewer.role, 'none', 'people.manage')) notFound();
+  return (
+    <>
+      <AccessNav links={links} />
+      {children}
+    </>
+  );
+}

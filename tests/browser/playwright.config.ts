@@ -1,0 +1,27 @@
+import { defineConfig } from '@playwright/test';
+import { world } from './world';
+
+/** One real app with the demo world behind it, served by serve.mjs; the tests share it and each uses builds of its own. */
+export default defineConfig({
+  testDir: '.',
+  outputDir: '../../.data/reports/browser',
+  workers: 1,
+  timeout: 90_000,
+  expect: { timeout: 15_000 },
+  reporter: [['list'], ['json']],
+  use: {
+    baseURL: world.appUrl,
+    launchOptions: { executablePath: process.env.CHROMIUM_PATH ?? '/usr/bin/chromium', args: ['--no-sandbox'] },
+    viewport: { width: 1360, height: 900 },
+    trace: 'retain-on-failure',
+  },
+  webServer: {
+    command: 'node tests/browser/serve.mjs',
+    cwd: '../..',
+    url: `${world.appUrl}/api/health`,
+    timeout: 240_000,
+    reuseExistingServer: false,
+    gracefulShutdown: { signal: 'SIGTERM', timeout: 10_000 },
+    stdout: 'pipe',
+  },
+});

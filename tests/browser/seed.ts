@@ -1,0 +1,18 @@
+import { database, db, write } from '@/db/client';
+import { seedDemoWorld } from '@/db/demo/seed';
+import { sessions, users } from '@/db/schema';
+import { hashToken } from '@/lib/auth/secrets';
+import { tokenFor } from './tokens';
+
+/** The demo world, and for each of its people a session whose cookie the tests can name. */
+await seedDemoWorld(Date.now(), () => undefined);
+const people = await db().select({ id: users.id, email: users.email }).from(users);
+const nowMs = Date.now();
+const endsAt = nowMs + 3_600_000 * 6;
+await write(async (tx) => {
+  for (const { id, email } of people) {
+    const row = { userId: id, tokenHash: hashToken(tokenFor(email)), lastSeenAt: nowMs, idleEndsAt: endsAt, endsAt };
+    await tx.insert(sessions).values(row);
+  }
+});
+database().close();
