@@ -1,8 +1,7 @@
 import 'server-only';
 import { headers } from 'next/headers';
-import { after } from 'next/server';
 import type { z } from 'zod';
-import { refuseDoor, requireRoom, requireViewer } from '@/lib/auth/door';
+import { noteRefusal, requireRoom, requireViewer } from '@/lib/auth/door';
 import { isSameOrigin } from '@/lib/auth/origin';
 import { BadInput, Denied, OutOfReach } from '@/lib/errors';
 import type { FormState } from '@/lib/form-state';
@@ -64,7 +63,7 @@ async function settle(form: FormData, work: () => Promise<Outcome>): Promise<For
   try {
     return { state: 'done', message: (await work()) ?? '' };
   } catch (error) {
-    if (error instanceof OutOfReach) after(() => refuseDoor(error));
+    if (error instanceof OutOfReach) await noteRefusal(error);
     const refusal = refusalOf(error);
     if (!refusal && isNextSignal(error)) throw error;
     if (!refusal) logFault(error);

@@ -1,7 +1,6 @@
 import 'server-only';
-import { after } from 'next/server';
 import { z } from 'zod';
-import { refuseDoor, requireRoom, requireViewer } from '@/lib/auth/door';
+import { noteRefusal, requireRoom, requireViewer } from '@/lib/auth/door';
 import { isSameOrigin } from '@/lib/auth/origin';
 import { BadInput, Denied, OutOfReach } from '@/lib/errors';
 import { logFault } from '@/lib/log';
@@ -52,7 +51,7 @@ async function answer({ params }: Context, run: (params: Params) => Promise<Resp
     const result = await run(await params);
     return result instanceof Response ? result : json(result);
   } catch (error) {
-    if (error instanceof OutOfReach) after(() => refuseDoor(error));
+    if (error instanceof OutOfReach) await noteRefusal(error);
     return refusal(error);
   }
 }

@@ -25,7 +25,11 @@ export function AssignmentTable({ assignments, endTool, zone, nowMs }: Assignmen
       {assignments.map((assignment) => (
         <Row key={assignment.id}>
           <RowHead note={!assignment.isOpen && <span className="font-semibold text-brass-deep">held from view</span>}>
-            <Link href={`/access/builds/${assignment.orderNumber}`} className="narrow text-finish-deep hover:underline">
+            <Link
+              prefetch={false}
+              href={`/access/builds/${assignment.orderNumber}`}
+              className="narrow text-finish-deep hover:underline"
+            >
               {assignment.orderNumber}
             </Link>
           </RowHead>

@@ -19,7 +19,11 @@ export function BuildsTable({ builds }: { builds: NumberedBuild[] }) {
             className="whitespace-nowrap"
             note={held && <span className="font-semibold text-brass-deep">held from view</span>}
           >
-            <Link href={`/access/builds/${orderNumber}`} className="narrow text-finish-deep hover:underline">
+            <Link
+              prefetch={false}
+              href={`/access/builds/${orderNumber}`}
+              className="narrow text-finish-deep hover:underline"
+            >
               {orderNumber}
             </Link>
           </RowHead>

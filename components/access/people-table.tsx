@@ -21,7 +21,7 @@ export function PeopleTable({ people }: { people: PersonRow[] }) {
       {people.map((person) => (
         <Row key={person.id}>
           <RowHead note={<span className="break-all">{person.email}</span>}>
-            <Link href={`/access/people/${person.id}`} className="text-finish-deep hover:underline">
+            <Link prefetch={false} href={`/access/people/${person.id}`} className="text-finish-deep hover:underline">
               <bdi>{person.name}</bdi>
             </Link>
           </RowHead>

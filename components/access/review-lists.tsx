@@ -88,7 +88,7 @@ function ClientList({ clients }: Pick<BuildReview, 'clients'>) {
 
 function PersonLink({ userId, name }: { userId: string; name: string }) {
   return (
-    <Link href={`/access/people/${userId}`} className="font-semibold text-finish-deep hover:underline">
+    <Link prefetch={false} href={`/access/people/${userId}`} className="font-semibold text-finish-deep hover:underline">
       <bdi>{name}</bdi>
     </Link>
   );

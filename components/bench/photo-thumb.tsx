@@ -4,13 +4,17 @@ import { clsx } from 'clsx';
 import { useEffect, useRef } from 'react';
 import type { BenchPhoto } from './draft-state';
 import { ProgressBar } from '@/components/ui/progress-bar';
-import { isGoingUp, shareDone } from '@/lib/photos/upload-state';
+import { isGoingUp, shareDone, type UploadState } from '@/lib/photos/upload-state';
 
-const marks = { waiting: 'Waits', refused: 'Not taken', failed: 'Stopped' };
+const marks: Partial<Record<UploadState['step'], string>> = {
+  waiting: 'Waits',
+  refused: 'Not taken',
+  failed: 'Stopped',
+};
 
 /** One chosen photo, square, with its number and how far it has come. */
 export function PhotoThumb({ photo: { blob, upload }, number }: { photo: BenchPhoto; number: number }) {
-  const mark = upload.step in marks ? marks[upload.step as keyof typeof marks] : null;
+  const mark = marks[upload.step];
   return (
     <div className="relative aspect-square overflow-hidden rounded-[5px] bg-line">
       <BlobImage blob={blob} />

@@ -14,8 +14,8 @@ export function Reply({ question, reader, mayWrite }: ReplyProps) {
       ) : (
         <p className="text-soft">
           {question.penHolderName
-            ? `${question.penHolderName} holds the pen and answers this. A rep of the build can pass it to you.`
-            : 'Nobody holds the pen yet. A rep of the build answers this, or passes the pen to you.'}
+            ? `${question.penHolderName} holds the pen and answers this.`
+            : 'Nobody holds the pen yet. A rep of the build answers this.'}
         </p>
       )}
     </section>

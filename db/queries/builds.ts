@@ -2,6 +2,7 @@ import { and, asc, count, desc, eq, gt, isNotNull, isNull, lt, sql } from 'drizz
 import { alias } from 'drizzle-orm/sqlite-core';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
+import { correlated } from '../correlated';
 import { buildIsVisible, entryIsVisible, isOpen } from '../scope';
 import { assignments, buildPeople, builds, buildStages, diaryVisits, entries, users } from '../schema';
 import { can, isStaffRole } from '@/lib/access';
@@ -188,7 +189,7 @@ export async function listBuildsByNumber(viewer: Viewer, after: string) {
       orderNumber: builds.orderNumber,
       held: sql<number>`not ${isOpen}`,
       deliveredAt: builds.deliveredAt,
-      staff,
+      staff: correlated(staff),
     })
     .from(builds)
     .where(and(gt(builds.orderNumber, after), isNull(builds.deliveredAt)))

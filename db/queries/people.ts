@@ -3,6 +3,7 @@ import { recordEvent } from './audit';
 import { queueMail } from './outbox';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
+import { correlated } from '../correlated';
 import {
   assignments,
   buildPeople,
@@ -36,8 +37,12 @@ export async function listPeople(viewer: Viewer, search: string, afterId?: strin
       department: users.department,
       verifiedAt: users.emailVerifiedAt,
       disabledAt: users.disabledAt,
-      sessionCount: sql<number>`(select count(*) from ${sessions} where ${sessions.userId} = ${users.id} and ${sessions.endsAt} > unixepoch() * 1000 and ${sessions.idleEndsAt} > unixepoch() * 1000)`,
-      buildCount: sql<number>`(select count(*) from ${assignments} where ${assignments.userId} = ${users.id} and ${assignments.endedAt} is null) + (select count(*) from ${buildPeople} where ${buildPeople.userId} = ${users.id})`,
+      sessionCount: correlated(
+        sql<number>`(select count(*) from ${sessions} where ${sessions.userId} = ${users.id} and ${sessions.endsAt} > unixepoch() * 1000 and ${sessions.idleEndsAt} > unixepoch() * 1000)`,
+      ),
+      buildCount: correlated(
+        sql<number>`(select count(*) from ${assignments} where ${assignments.userId} = ${users.id} and ${assignments.endedAt} is null) + (select count(*) from ${buildPeople} where ${buildPeople.userId} = ${users.id})`,
+      ),
     })
     .from(users)
     .where(and(matches, afterId === undefined ? undefined : isBelow))

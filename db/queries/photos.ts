@@ -27,6 +27,7 @@ const grantColumns = {
 /**
  * Promises room for one photo of exactly this length, type and SHA-256. Asking again for the same upload renews the
  * promise; a photo that has arrived is told as it stands.
+ * @throws OutOfReach, or Denied: not theirs to do, too many unposted, or the mark of another photo
  */
 export function grantPhoto(viewer: Viewer, orderNumber: string, photo: NewPhoto, nowMs: number) {
   return write(async (tx) => {
@@ -38,6 +39,8 @@ export function grantPhoto(viewer: Viewer, orderNumber: string, photo: NewPhoto,
       .where(and(mine, eq(photos.sha256, photo.sha256), eq(photos.buildId, build.id)))
       .returning(grantColumns);
     if (earlier) return earlier;
+    const [other] = await tx.select({ id: photos.id }).from(photos).where(mine);
+    if (other) throw new Denied('conflict', 'Another photo was being sent in its place. Choose this one again.');
     await requireRoom(tx, viewer);
     const row = { ...photo, buildId: build.id, uploaderId: viewer.id, originalKey: newKey('in'), createdAt: nowMs };
     const [granted] = await tx

@@ -1,5 +1,6 @@
 import { and, eq, sql } from 'drizzle-orm';
 import { db, type Db, type Tx } from '../client';
+import { correlated } from '../correlated';
 import { buildIsVisible } from '../scope';
 import { buildPeople, builds } from '../schema';
 import { can, isStaffRole, type Action, type Standing } from '@/lib/access';
@@ -15,7 +16,7 @@ async function findReached(reader: Db | Tx, viewer: Viewer, orderNumber: string)
     'owner' | 'companion' | null
   >`(select ${buildPeople.standing} from ${buildPeople} where ${buildPeople.buildId} = ${builds.id} and ${buildPeople.userId} = ${viewer.id})`;
   const [build] = await reader
-    .select({ id: builds.id, orderNumber: builds.orderNumber, own })
+    .select({ id: builds.id, orderNumber: builds.orderNumber, own: correlated(own) })
     .from(builds)
     .where(and(eq(builds.orderNumber, orderNumber), buildIsVisible(viewer)))
     .limit(1);

@@ -1,4 +1,5 @@
 import 'server-only';
+import { after } from 'next/server';
 import { findViewer } from './viewer';
 import { recordRefusal } from '@/db/queries/audit';
 import { takeOne } from '@/db/queries/rate-limits';
@@ -21,8 +22,8 @@ export async function requireRoom(limit: LimitName, who: string): Promise<void> 
   throw new Denied('too_many', `That is more than we take at once. Please try again in ${wait}.`, seconds);
 }
 
-/** Writes a refusal down after the answer has gone out, so that the time it took tells nothing. */
-export async function refuseDoor({ orderNumber }: OutOfReach): Promise<void> {
+/** Has a refusal written down after the answer has gone out, so that the time it took tells nothing. */
+export async function noteRefusal({ orderNumber }: OutOfReach): Promise<void> {
   const viewer = await findViewer();
-  if (viewer && orderNumber) await recordRefusal(viewer.id, orderNumber, Date.now());
+  if (viewer && orderNumber) after(() => recordRefusal(viewer.id, orderNumber, Date.now()));
 }

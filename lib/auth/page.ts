@@ -1,9 +1,10 @@
 import 'server-only';
-import { after } from 'next/server';
+import { cache } from 'react';
 import { notFound, redirect } from 'next/navigation';
-import { refuseDoor } from './door';
+import { noteRefusal } from './door';
 import { findViewer } from './viewer';
 import { Denied, OutOfReach } from '@/lib/errors';
+import { requireBuild } from '@/db/queries/builds';
 import type { SessionViewer } from '@/db/queries/sessions';
 
 /** The viewer of a page; a signed-out visitor goes to sign in. */
@@ -16,8 +17,14 @@ export async function orNotFound<T>(load: Promise<T>): Promise<T> {
   try {
     return await load;
   } catch (error) {
-    if (error instanceof OutOfReach) after(() => refuseDoor(error));
+    if (error instanceof OutOfReach) await noteRefusal(error);
     if (error instanceof OutOfReach || error instanceof Denied) notFound();
     throw error;
   }
 }
+
+/** The build of a page and who looks at it; asked by its layout and its page, read once. */
+export const openBuild = cache(async (orderNumber: string) => {
+  const viewer = await pageViewer();
+  return { viewer, build: await orNotFound(requireBuild(viewer, orderNumber)) };
+});

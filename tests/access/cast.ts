@@ -50,30 +50,39 @@ const rules = [
   ['a lead whose rule has ended', { endedAt: NOW_MS }],
 ] as const;
 
-async function makePeople() {
-  const people = new Map<CastName, Person>();
-  for (const name of castNames) people.set(name, await makePerson(rolesOfCast[name], { name }));
-  return Object.fromEntries(people);
+/** One thing for each of the cast. */
+async function forEverybody<T>(make: (name: CastName) => Promise<T>): Promise<(name: CastName) => T> {
+  const made = new Map<CastName, T>();
+  for (const name of castNames) made.set(name, await make(name));
+  return (name) => {
+    const found = made.get(name);
+    if (found === undefined) throw new Error(`nobody is called ${name}`);
+    return found;
+  };
 }
 
-async function makeBuilds(people: Record<CastName, Person>) {
+function makePeople() {
+  return forEverybody((name) => makePerson(rolesOfCast[name], { name }));
+}
+
+async function makeBuilds(people: (name: CastName) => Person) {
   const staff = [
-    { person: people['an assigned builder'] },
-    { person: people['a cleared builder'], cleared: true },
-    { person: people['a builder taken off'], cleared: true, endedAt: NOW_MS },
-    { person: people['an assigned rep'] },
-    { person: people['a cleared rep'], cleared: true },
-    { person: people['an admin who has stepped in'], cleared: true, stepInReason: 'The owner asked for it' },
-    { person: people['a buyer with a stray assignment'], cleared: true },
+    { person: people('an assigned builder') },
+    { person: people('a cleared builder'), cleared: true },
+    { person: people('a builder taken off'), cleared: true, endedAt: NOW_MS },
+    { person: people('an assigned rep') },
+    { person: people('a cleared rep'), cleared: true },
+    { person: people('an admin who has stepped in'), cleared: true, stepInReason: 'The owner asked for it' },
+    { person: people('a buyer with a stray assignment'), cleared: true },
   ];
-  const companions = [people['a companion of both'], people['a builder named as companion']];
+  const companions = [people('a companion of both'), people('a builder named as companion')];
   const placed = { staff, companions, stageKey: 'neck' };
-  const open = await makeBuild({ ...placed, owner: people['its buyer'], instrument: 'Heron' });
-  const artist = people['the artist who owns the held build'];
+  const open = await makeBuild({ ...placed, owner: people('its buyer'), instrument: 'Heron' });
+  const artist = people('the artist who owns the held build');
   const heldUntilAt = Date.now() + 90 * DAY_MS;
   const held = await makeBuild({ ...placed, owner: artist, heldUntilAt, instrument: 'Bittern' });
-  const elsewhere = [{ person: people['a builder on another build'] }, { person: people['a rep on another build'] }];
-  await makeBuild({ owner: people['another buyer'], staff: elsewhere, routeId: 'bass', instrument: 'Lantern' });
+  const elsewhere = [{ person: people('a builder on another build') }, { person: people('a rep on another build') }];
+  await makeBuild({ owner: people('another buyer'), staff: elsewhere, routeId: 'bass', instrument: 'Lantern' });
   return { open, held };
 }
 
@@ -99,7 +108,7 @@ export async function openCast() {
   await write((tx) =>
     tx
       .insert(standingAssignments)
-      .values(rules.map(([who, rule]) => ({ userId: people[who].id, startedAt: 0, ...rule }))),
+      .values(rules.map(([who, rule]) => ({ userId: people(who).id, startedAt: 0, ...rule }))),
   );
   const entries = {
     published: await makeEntry(open, author),
@@ -108,14 +117,13 @@ export async function openCast() {
     withdrawn: await makeEntry(open, author, { state: 'withdrawn' }),
   };
   await makeEntry(held, author);
-  const ownPhotos = new Map<CastName, string>();
-  for (const name of castNames) ownPhotos.set(name, await makePhoto(open, people[name]));
+  const ownPhoto = await forEverybody((name) => makePhoto(open, people(name)));
   const questions = {
-    neck: await makeQuestion(open, people['its buyer']),
-    money: await makeQuestion(open, people['its buyer'], { topicId: 'money' }),
+    neck: await makeQuestion(open, people('its buyer')),
+    money: await makeQuestion(open, people('its buyer'), { topicId: 'money' }),
   };
   const photos = await makePhotosOf(open, author, entries);
-  return { people, open, held, entries, photos, ownPhotos: Object.fromEntries(ownPhotos), questions };
+  return { people, open, held, entries, photos, ownPhoto, questions };
 }
 
 export type Cast = Awaited<ReturnType<typeof openCast>>;

@@ -107,7 +107,7 @@ test('the table of this test has a row for everybody in it', () => {
 
 describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ who, ...may }) => {
   test('reaches exactly these builds, by every way that leads to one', async () => {
-    const viewer = cast.people[who];
+    const viewer = cast.people(who);
     for (const [build, isReached] of [
       [cast.open, may.open],
       [cast.held, may.held],
@@ -124,20 +124,20 @@ describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ wh
   });
 
   test('reads exactly these entries', async () => {
-    const { entries } = await diaryPage(cast.people[who], cast.open.id, null);
+    const { entries } = await diaryPage(cast.people(who), cast.open.id, null);
     const read = Object.entries(cast.entries).filter(([, id]) => entries.some((entry) => entry.id === id));
     expect(read.map(([name]) => name).join(', ')).toBe(may.entries ?? '');
     expect(entries).toHaveLength(read.length);
   });
 
   test('sees exactly these photos', async () => {
-    const viewer = cast.people[who];
-    const photos = { ...cast.photos, own: cast.ownPhotos[who] };
+    const viewer = cast.people(who);
+    const photos = { ...cast.photos, own: cast.ownPhoto(who) };
     expect(await reached(photos, (id) => requirePhotoObject(viewer, id, 640))).toBe(may.photos ?? '');
   });
 
   test('reads exactly these questions, in every list and one by one', async () => {
-    const viewer = cast.people[who];
+    const viewer = cast.people(who);
     const read = may.questions ?? '';
     expect(await reached(cast.questions, (id) => requireQuestion(viewer, id))).toBe(read);
     const named = (rows: { id: string }[]) =>
@@ -151,7 +151,7 @@ describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ wh
   });
 
   test('is told exactly these addresses', async () => {
-    const rows = may.open ? await listClients(cast.people[who], cast.open.orderNumber) : [];
+    const rows = may.open ? await listClients(cast.people(who), cast.open.orderNumber) : [];
     const told = rows.filter(({ email }) => email !== null).map(({ standing }) => standing);
     expect([...new Set(told)].join(', ')).toBe(may.addresses ?? '');
   });

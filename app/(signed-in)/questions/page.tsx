@@ -50,7 +50,7 @@ function NoQuestions({ role }: { role: Role }) {
   }
   return (
     <EmptyState title="You have asked nothing yet" action={builds}>
-      Open a build and ask from any of its entries, or about the build itself. The person who does the work answers.
+      Open a build and ask from any of its entries, or about the build itself. It goes to the person who can answer.
     </EmptyState>
   );
 }

@@ -1,4 +1,4 @@
-import { bodyMeshes, BODY_TOP, CONTROL_SPOTS } from './bodies';
+import { bodyMeshes, BODY_TOP, controlSpots } from './bodies';
 import {
   BOARD_TOP,
   bridge,
@@ -81,7 +81,7 @@ export function addHardware(scene: Scene, order: PictureOrder, spot: Placing, st
   const saddle = within(spot, placed({ x: fit.saddleX, z: top }));
   scene.add(parts.plate, dark, saddle);
   scene.add(parts.saddles, steel(), saddle);
-  for (const [x, y] of CONTROL_SPOTS) scene.add(knob(), dark, within(spot, placed({ x, y, z: top - 0.1 })));
+  for (const [x, y] of controlSpots(order.body)) scene.add(knob(), dark, within(spot, placed({ x, y, z: top - 0.1 })));
   addTuners(scene, order, spot, dark);
   if (!strung) return;
   const underBoard = within(spot, placed({ z: BOARD_TOP - 0.6 }));

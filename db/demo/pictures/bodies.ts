@@ -123,10 +123,16 @@ export const NECK_POCKET: readonly Point[] = [
 ];
 export const PICKUP_HOLES = [shifted(roundedRect(3.8, 9, 0.5), 1.2, 0), shifted(roundedRect(3.8, 9, 0.5), -6.4, 0)];
 /** Where the two shafts of the controls come through the top. */
-export const CONTROL_SPOTS: readonly Point[] = [
-  [-9.2, -9.8],
-  [-13.2, -7.4],
-];
+export const controlSpots = (kind: BodyKind): readonly Point[] =>
+  kind === 'hollow'
+    ? [
+        [-16.4, -9.6],
+        [-18.4, -5.4],
+      ]
+    : [
+        [-9.2, -9.8],
+        [-13.2, -7.4],
+      ];
 export const CONTROL_CAVITY = smoothLoop(
   [
     [-16, -6],

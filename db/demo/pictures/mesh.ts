@@ -6,8 +6,8 @@ export type Mesh = { positions: number[]; normals: number[]; edges: number[]; in
 export const emptyMesh = (): Mesh => ({ positions: [], normals: [], edges: [], indices: [] });
 
 export function addVertex(mesh: Mesh, position: Vec3, normal: Vec3, edge = 99): number {
-  mesh.positions.push(...position);
-  mesh.normals.push(...normal);
+  mesh.positions.push(position[0], position[1], position[2]);
+  mesh.normals.push(normal[0], normal[1], normal[2]);
   mesh.edges.push(edge);
   return mesh.edges.length - 1;
 }

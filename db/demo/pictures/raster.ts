@@ -17,17 +17,22 @@ export function rasterise(
 }
 
 function drawTriangle({ x, y, near }: Projected, triangles: Int32Array, triangle: number, plane: Plane) {
-  const [a, b, c] = [
-    whole(triangles, triangle * 3),
-    whole(triangles, triangle * 3 + 1),
-    whole(triangles, triangle * 3 + 2),
-  ];
-  const [ax, ay, az] = [real(x, a), real(y, a), real(near, a)];
-  const [bx, by, bz] = [real(x, b), real(y, b), real(near, b)];
-  const [cx, cy, cz] = [real(x, c), real(y, c), real(near, c)];
+  const a = whole(triangles, triangle * 3);
+  const b = whole(triangles, triangle * 3 + 1);
+  const c = whole(triangles, triangle * 3 + 2);
+  const ax = real(x, a);
+  const ay = real(y, a);
+  const az = real(near, a);
+  const bx = real(x, b);
+  const by = real(y, b);
+  const bz = real(near, b);
+  const cx = real(x, c);
+  const cy = real(y, c);
+  const cz = real(near, c);
   if (az === 0 || bz === 0 || cz === 0) return;
   const area = (bx - ax) * (cy - ay) - (cx - ax) * (by - ay);
   if (Math.abs(area) < 1e-9) return;
+  if ((ax < 0 && bx < 0 && cx < 0) || (ax > plane.width && bx > plane.width && cx > plane.width)) return;
   const top = Math.max(0, Math.ceil(Math.min(ay, by, cy)));
   const bottom = Math.min(plane.height - 1, Math.floor(Math.max(ay, by, cy)));
   const slopeX = ((bz - az) * (cy - ay) - (cz - az) * (by - ay)) / area;

@@ -21,7 +21,7 @@ export function expose(scene: Scene, camera: Camera, light: Light, width: number
   const lens = lensFor(camera, width, height);
   const projected = project(packed.world, lens);
   const seen = look(packed, projected, { width: width * 2, height: height * 2 });
-  const shading = createShading(packed, projected, lens, light, shadeOf(packed, light));
+  const shading = createShading(packed, projected, lens, light, shadeOf(packed, light, Math.max(width, height)));
   const out = new Float32Array(width * height * 3);
   const near = new Float32Array(width * height);
   const keyed = keyLight(width, height);

@@ -1,5 +1,5 @@
 import type { Material } from './material';
-import type { Mesh, Vec3 } from './mesh';
+import type { Mesh } from './mesh';
 import type { Placing } from './placing';
 import { at } from './reading';
 
@@ -14,57 +14,65 @@ export type Packed = {
   materials: readonly Material[];
 };
 
-/** Everything in front of the camera, as one list of triangles in world space (cm, z up). */
+type Part = { mesh: Mesh; material: Material; placing: Placing; casts: boolean };
+
+/** Everything in front of the camera, in world space (cm, z up). */
 export class Scene {
-  private readonly world: number[] = [];
-  private readonly local: number[] = [];
-  private readonly normals: number[] = [];
-  private readonly edges: number[] = [];
-  private readonly triangles: number[] = [];
-  private readonly surfaces: number[] = [];
-  private readonly casts: number[] = [];
-  private readonly materials: Material[] = [];
+  private readonly parts: Part[] = [];
 
   /** `casts` is false for the ground, which would only shadow itself. */
   add(mesh: Mesh, material: Material, placing: Placing, casts = material.layer === 'solid') {
-    const offset = this.edges.length;
-    appendTurned(this.world, mesh.positions, placing.turn, placing.move);
-    appendTurned(this.normals, mesh.normals, placing.turn, [0, 0, 0]);
-    for (const value of mesh.positions) this.local.push(value);
-    for (const value of mesh.edges) this.edges.push(value);
-    for (const index of mesh.indices) this.triangles.push(index + offset);
-    const surface = this.surfaceOf(material);
-    for (let index = 0; index < mesh.indices.length; index += 3) {
-      this.surfaces.push(surface);
-      this.casts.push(casts ? 1 : 0);
-    }
+    this.parts.push({ mesh, material, placing, casts });
   }
 
+  /** One list of triangles, sized once: growing lists took longer than lighting a small picture. */
   packed(): Packed {
-    return {
-      world: new Float32Array(this.world),
-      local: new Float32Array(this.local),
-      normals: new Float32Array(this.normals),
-      edges: new Float32Array(this.edges),
-      triangles: new Int32Array(this.triangles),
-      surfaces: new Int32Array(this.surfaces),
-      casts: new Uint8Array(this.casts),
-      materials: this.materials,
+    const vertices = this.parts.reduce((sum, { mesh }) => sum + mesh.edges.length, 0);
+    const corners = this.parts.reduce((sum, { mesh }) => sum + mesh.indices.length, 0);
+    const materials = [...new Set(this.parts.map(({ material }) => material))];
+    const packed: Packed = {
+      world: new Float32Array(vertices * 3),
+      local: new Float32Array(vertices * 3),
+      normals: new Float32Array(vertices * 3),
+      edges: new Float32Array(vertices),
+      triangles: new Int32Array(corners),
+      surfaces: new Int32Array(corners / 3),
+      casts: new Uint8Array(corners / 3),
+      materials,
     };
-  }
-
-  private surfaceOf(material: Material): number {
-    const known = this.materials.indexOf(material);
-    return known >= 0 ? known : this.materials.push(material) - 1;
+    let vertex = 0;
+    let corner = 0;
+    for (const part of this.parts) {
+      packPart(packed, part, vertex, corner);
+      vertex += part.mesh.edges.length;
+      corner += part.mesh.indices.length;
+    }
+    return packed;
   }
 }
 
-function appendTurned(into: number[], values: readonly number[], turn: readonly number[], [mx, my, mz]: Vec3) {
-  const [a = 1, b = 0, c = 0, d = 0, e = 1, f = 0, g = 0, h = 0, i = 1] = turn;
+function packPart(packed: Packed, { mesh, material, placing, casts }: Part, vertex: number, corner: number) {
+  packed.local.set(mesh.positions, vertex * 3);
+  packed.edges.set(mesh.edges, vertex);
+  writeTurned(packed.world, vertex * 3, mesh.positions, placing, 1);
+  writeTurned(packed.normals, vertex * 3, mesh.normals, placing, 0);
+  for (let index = 0; index < mesh.indices.length; index++)
+    packed.triangles[corner + index] = at(mesh.indices, index) + vertex;
+  const [first, last] = [corner / 3, (corner + mesh.indices.length) / 3];
+  packed.surfaces.fill(packed.materials.indexOf(material), first, last);
+  packed.casts.fill(casts ? 1 : 0, first, last);
+}
+
+/** Turned, and moved as well when `share` is 1 (a normal is not moved). */
+function writeTurned(into: Float32Array, start: number, values: readonly number[], placing: Placing, share: 0 | 1) {
+  const [a = 1, b = 0, c = 0, d = 0, e = 1, f = 0, g = 0, h = 0, i = 1] = placing.turn;
+  const [mx, my, mz] = placing.move;
   for (let index = 0; index < values.length; index += 3) {
     const x = at(values, index);
     const y = at(values, index + 1);
     const z = at(values, index + 2);
-    into.push(a * x + b * y + c * z + mx, d * x + e * y + f * z + my, g * x + h * y + i * z + mz);
+    into[start + index] = a * x + b * y + c * z + mx * share;
+    into[start + index + 1] = d * x + e * y + f * z + my * share;
+    into[start + index + 2] = g * x + h * y + i * z + mz * share;
   }
 }

@@ -4,7 +4,8 @@ import { rasterise } from './raster';
 import { byte, real } from './reading';
 import type { Packed } from './scene';
 
-const SIZE = 1024;
+/** Width of the shadow map: as fine as the picture asks for. */
+const mapSize = (pictureWidth: number) => Math.min(1024, Math.max(160, pictureWidth));
 const ROOM_SIZE = 256;
 
 export type Shade = {
@@ -16,8 +17,8 @@ export type Shade = {
 
 type Box = { low: [number, number]; high: [number, number] };
 
-export function shadeOf(packed: Packed, light: Light): Shade {
-  return { keyShare: keyShareOf(packed, light), openness: opennessOf(packed) };
+export function shadeOf(packed: Packed, light: Light, pictureWidth: number): Shade {
+  return { keyShare: keyShareOf(packed, light, mapSize(pictureWidth)), openness: opennessOf(packed) };
 }
 
 function frame(packed: Packed, axisX: Vec3, axisY: Vec3, axisZ: Vec3, size: number, margin: number) {
@@ -59,17 +60,17 @@ const tapAt = (turn: (angle: number) => number) =>
 const DISC_X = tapAt(Math.cos);
 const DISC_Y = tapAt(Math.sin);
 
-function keyShareOf(packed: Packed, light: Light): Shade['keyShare'] {
+function keyShareOf(packed: Packed, light: Light, size: number): Shade['keyShare'] {
   const toward = unit(light.key);
   const right = unit(cross([0, 1, 0], toward));
   const up = cross(toward, right);
-  const { projected, scale, left, low } = frame(packed, right, up, toward, SIZE, 1);
-  const map = new Float32Array(SIZE * SIZE);
-  rasterise(projected, packed.triangles, { width: SIZE, height: SIZE, near: map }, (t) => byte(packed.casts, t) === 1);
+  const { projected, scale, left, low } = frame(packed, right, up, toward, size, 1);
+  const map = new Float32Array(size * size);
+  rasterise(projected, packed.triangles, { width: size, height: size, near: map }, (t) => byte(packed.casts, t) === 1);
   const read = (u: number, v: number) => {
     const column = (u + 0.5) | 0;
     const row = (v + 0.5) | 0;
-    return column < 0 || row < 0 || column >= SIZE || row >= SIZE ? 0 : real(map, row * SIZE + column);
+    return column < 0 || row < 0 || column >= size || row >= size ? 0 : real(map, row * size + column);
   };
   const [rightX, rightY, rightZ] = right;
   const [upX, upY, upZ] = up;
@@ -77,7 +78,7 @@ function keyShareOf(packed: Packed, light: Light): Shade['keyShare'] {
   return (x, y, z, jitter) => {
     const u = (x * rightX + y * rightY + z * rightZ - left) * scale;
     const v = (x * upX + y * upY + z * upZ - low) * scale;
-    if (u < -20 || v < -20 || u > SIZE + 20 || v > SIZE + 20) return 1;
+    if (u < -20 || v < -20 || u > size + 20 || v > size + 20) return 1;
     const depth = x * keyX + y * keyY + z * keyZ + 1000.08;
     const turn = Math.floor(jitter * 64) & 63;
     const c = real(TURN_COS, turn);

@@ -53,9 +53,9 @@ export function coated({ cut, colour, strength = 1, gloss = 1, reach = 6 }: Coat
     const ragged = sample.edge + (cloud(sample.x * 0.35, sample.y * 0.35, 4) - 0.5) * 1.6;
     const inward = smooth(0.2, reach, ragged);
     const shade = (part: 0 | 1 | 2) => rimTone[part] + (middle[part] - rimTone[part]) * inward;
-    const veil = 0.16 + 0.84 * grain ** 1.5;
+    const veil = 0.16 + 0.72 * Math.min(1.35, grain ** 1.5);
     const cover = strength * (1 - 0.12 * inward);
-    const dyed: Rgb = [shade(0) * veil * 1.12, shade(1) * veil * 1.12, shade(2) * veil * 1.12];
+    const dyed: Rgb = [shade(0) * veil, shade(1) * veil, shade(2) * veil];
     if (strength === 1) blend(sample, dyed, cover);
     else soak(sample, dyed, strength);
     sample.coat = gloss > 0 ? 0.35 + 0.65 * gloss : 0;

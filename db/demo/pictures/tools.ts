@@ -6,7 +6,7 @@ import { moved, placed, type Placing, within } from './placing';
 import { between, type Random } from './random';
 import type { Scene } from './scene';
 import { block, slab } from './slab';
-import { blackMetal, clear, drawn, film, glowing, metal, plain, rawWood, solid, steel } from './surfaces';
+import { blackMetal, clear, film, glowing, metal, plain, rawWood, solid, steel } from './surfaces';
 import { linear, tint } from './material';
 import { noise3 } from './noise';
 

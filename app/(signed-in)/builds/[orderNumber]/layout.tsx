@@ -1,15 +1,13 @@
 import type { ReactNode } from 'react';
 import { BuildNav } from '@/components/builds/build-nav';
 import { FinishStyle } from '@/components/builds/finish-style';
-import { requireBuild } from '@/db/queries/builds';
-import { orNotFound, pageViewer } from '@/lib/auth/page';
+import { openBuild } from '@/lib/auth/page';
 import { can, isClientRole } from '@/lib/access';
 import { pageNonce } from '@/lib/request';
 
 /** Every page of a build wears its finish and carries the way to the others. It guards nothing by itself. */
 export default async function BuildLayout({ children, params }: LayoutProps<'/builds/[orderNumber]'>) {
-  const viewer = await pageViewer();
-  const build = await orNotFound(requireBuild(viewer, (await params).orderNumber));
+  const { viewer, build } = await openBuild((await params).orderNumber);
   const path = `/builds/${build.orderNumber}`;
   const links = [
     { href: path, label: 'Diary' },

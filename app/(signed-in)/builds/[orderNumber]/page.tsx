@@ -3,11 +3,11 @@ import { release, withdraw } from './actions';
 import { BuildAside } from '@/components/builds/build-aside';
 import { BuildHeader } from '@/components/builds/build-header';
 import { DiaryFeed } from '@/components/diary/diary-feed';
-import { listClients, listStaff, listStages, newSince, requireBuild } from '@/db/queries/builds';
+import { listClients, listStaff, listStages, newSince } from '@/db/queries/builds';
 import { diaryPage, diaryState } from '@/db/queries/diary';
 import { findMailSettings } from '@/db/queries/mail-settings';
 import { can, isStaffRole } from '@/lib/access';
-import { orNotFound, pageViewer } from '@/lib/auth/page';
+import { openBuild } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';
 import { stageNotes } from '@/lib/stage-notes';
 
@@ -16,9 +16,8 @@ export async function generateMetadata({ params }: PageProps<'/builds/[orderNumb
 }
 
 export default async function DiaryPage({ params }: PageProps<'/builds/[orderNumber]'>) {
-  const viewer = await pageViewer();
   const { orderNumber } = await params;
-  const build = await orNotFound(requireBuild(viewer, orderNumber));
+  const { viewer, build } = await openBuild(orderNumber);
   const [{ etag }, first, stages, staff, clients] = await Promise.all([
     diaryState(viewer, orderNumber),
     diaryPage(viewer, build.id, null),

@@ -8,7 +8,7 @@ import { moved, placed, within } from '../placing';
 import { between } from '../random';
 import { block, slab } from '../slab';
 import { backCut, type Subject, topCut } from '../shot';
-import { clear, drawn, plain, rawWood } from '../surfaces';
+import { clear, drawn, rawWood } from '../surfaces';
 import { addClamp, addPencil, addRule, addShavings, addTape } from '../tools';
 import type { Figure } from '../wood';
 

@@ -22,7 +22,7 @@ export const onTheBench: Subject = (order, random) => {
     camera: lookAt([0, 3, 2], {
       bearing: -86,
       rise: 52,
-      distance: order.body === 'bass' ? 156 : 130,
+      distance: order.body === 'bass' ? 166 : 140,
       roll: -3,
       blur: 1.2,
     }),
@@ -37,10 +37,10 @@ export const uprightPortrait: Subject = (order, random) => {
   addInstrument(scene, order, spot);
   return {
     scene,
-    camera: lookAt([0, length * 0.08, 2], {
+    camera: lookAt([0, length * 0.02 - 2, 2], {
       bearing: -90,
       rise: 66,
-      distance: order.body === 'bass' ? 172 : 136,
+      distance: order.body === 'bass' ? 182 : 146,
       roll: 2,
       blur: 1.2,
     }),

@@ -4,7 +4,7 @@ import { BOARD_TOP, dots, fingerboard, fittings, FRET_TOP, frets, fretX, neckSha
 import { stripe, tube, turning } from '../loft';
 import { joined, type Vec3 } from '../mesh';
 import { circle } from '../outline';
-import { moved, placed, within } from '../placing';
+import { moved, placed } from '../placing';
 import { between } from '../random';
 import type { Scene } from '../scene';
 import { block, slab } from '../slab';

@@ -1,6 +1,6 @@
 import { addBody, addNeck, ARCH, bare } from '../assembly';
 import { brownBench, darkBench, ground, lookAt, paleBench, rubberMat, shopLight, stageOn } from '../bench';
-import { BODY_TOP, bodyOutline, NECK_POCKET, PICKUP_HOLES } from '../bodies';
+import { BODY_TOP, bodyOutline, NECK_POCKET, PICKUP_HOLES, soundHoles } from '../bodies';
 import { lineAlong } from '../marks';
 import { outlineInset } from '../outline';
 import { moved, placed, within } from '../placing';
@@ -46,7 +46,10 @@ export const sandedBody: Subject = (order, random) => {
     ),
   );
   for (const line of lines.slice(0, 2)) scene.add(line, drawn('#5b5f69', 0.45, 10), spot);
-  const powdered = { outline: outlineInset(bodyOutline(order.body), 1.6), holes: [NECK_POCKET, ...PICKUP_HOLES] };
+  const powdered = {
+    outline: outlineInset(bodyOutline(order.body), 1.6),
+    holes: [NECK_POCKET, ...(order.body === 'hollow' ? soundHoles() : PICKUP_HOLES)],
+  };
   scene.add(
     slab({ ...powdered, bottom: 0, top: 0.01 }),
     dusty('#f0dfbd', 0.6, 0.25),

@@ -10,7 +10,7 @@ import { block, slab } from '../slab';
 import type { Subject } from '../shot';
 import { drawn, dusty, plain, rawWood, solid, steel } from '../surfaces';
 import { addMeter, addPencil, addRule, addShavings } from '../tools';
-import { type Cut, paintWood, type WoodTone } from '../wood';
+import { type Cut, type WoodTone } from '../wood';
 
 /** A board as it left the log: straight ends, wandering sides. Its end is at x = 0. */
 function flitch(random: Random, length: number, width: number, thickness: number): Mesh {

@@ -33,7 +33,7 @@ export default async function BuildQuestionsPage({ params, searchParams }: Props
         <EmptyState title={isStaff ? 'Nobody has asked anything' : 'You have asked nothing yet'} action={ask}>
           {isStaff
             ? 'When the owner asks about this build, it stands here.'
-            : 'Ask about the build here, or from any entry of its diary. The person who does the work answers.'}
+            : 'Ask about the build here, or from any entry of its diary. It goes to the person who can answer.'}
         </EmptyState>
       ) : (
         <QuestionList

@@ -16,7 +16,10 @@ export default async function AskPage({ params, searchParams }: PageProps<'/buil
   return (
     <div className="mx-auto max-w-[82rem] px-4.5 py-8 md:px-10 md:py-10">
       <div className="grid max-w-[44rem] gap-6">
-        <h1 className="text-3xl">Ask the shop</h1>
+        <div>
+          <p className="narrow text-sm font-semibold text-soft">Order {orderNumber}</p>
+          <h1 className="mt-1 text-3xl">Ask the shop</h1>
+        </div>
         {entryId && !entry && (
           <Notice>The entry you came from is no longer in the diary. You can ask about the build.</Notice>
         )}
