@@ -12,7 +12,7 @@ const GIVE_UP_MS = 30_000;
  * work once, so the same body may be sent again whenever it is not known whether the first try arrived.
  * Never throws; every failure is a sentence.
  */
-export async function sendJson(url: string, body: Sendable): Promise<Sent> {
+export async function sendJson(url: string, body: Sendable, isOnline = () => navigator.onLine): Promise<Sent> {
   try {
     const response = await fetch(url, {
       method: 'POST',
@@ -24,7 +24,7 @@ export async function sendJson(url: string, body: Sendable): Promise<Sent> {
     if (response.ok && answer !== null) return { ok: true, answer };
     return { ok: false, refused: refusalIn(response, answer) };
   } catch {
-    return { ok: false, refused: { status: 0, message: unreachableWords(navigator.onLine), fields: {} } };
+    return { ok: false, refused: { status: 0, message: unreachableWords(isOnline()), fields: {} } };
   }
 }
 

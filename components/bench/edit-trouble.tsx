@@ -47,7 +47,9 @@ function CopyWords({ note }: { note: NoteDoc }) {
       <Button size="bench" onClick={() => void copy()}>
         {result === 'copied' ? 'Copied' : 'Copy my words'}
       </Button>
-      {result === 'failed' && <p className="mt-1">Copying is blocked here. Mark the words above and copy them by hand.</p>}
+      {result === 'failed' && (
+        <p className="mt-1">Copying is blocked here. Mark the words above and copy them by hand.</p>
+      )}
     </div>
   );
 }

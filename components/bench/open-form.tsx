@@ -37,6 +37,10 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
     keeper,
     entryFrom: (whole, ready) => entryFrom({ draft: whole, orderNumber, stages, photos: ready }),
   });
+  const tryAll = () => {
+    photos.wake();
+    tryNow();
+  };
   const isLocked = draft.posting.step !== 'writing';
   const problem = draft.posting.step === 'writing' ? draft.posting.problem : undefined;
   return (
@@ -81,7 +85,7 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
             <p className="text-soft">A rep releases it before the buyer sees it.</p>
           )}
         </fieldset>
-        <PostFoot draft={draft} dispatch={dispatch} orderNumber={orderNumber} keeper={keeper} onTryNow={tryNow} />
+        <PostFoot draft={draft} dispatch={dispatch} orderNumber={orderNumber} keeper={keeper} onTryNow={tryAll} />
         {!isBlank(draft) && draft.posting.step !== 'posted' && draft.posting.step !== 'sending' && (
           <DiscardDraft onDiscard={() => photos.discardAll().then(onDiscarded)} />
         )}

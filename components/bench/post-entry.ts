@@ -29,8 +29,7 @@ export async function postEntry(entry: EntryToPost): Promise<DraftEvent> {
 
 /** What an answer of the diary means for the draft. */
 export function eventOf(answer: Answer<Posted>): DraftEvent {
-  if (answer.kind === 'ok')
-    return { type: 'posted', entryId: answer.body.id, isHeld: answer.body.state === 'held' };
+  if (answer.kind === 'ok') return { type: 'posted', entryId: answer.body.id, isHeld: answer.body.state === 'held' };
   if (answer.kind === 'no-signal') return kept(NO_SIGNAL, { mayHaveArrived: true });
   const { status, message, fields } = answer;
   if (status === 401) return kept(SIGNED_OUT, { isSignedOut: true });

@@ -30,7 +30,9 @@ export function PostFoot({ draft, dispatch, orderNumber, keeper, onTryNow }: Pos
       </Button>
       {!isSending &&
         (posting.wasSent ? (
-          <p className="text-soft">It may have reached the shop already, so it stays as it is until there is an answer.</p>
+          <p className="text-soft">
+            It may have reached the shop already, so it stays as it is until there is an answer.
+          </p>
         ) : (
           <Button variant="quiet" size="bench" isWide onClick={() => dispatch({ type: 'post-taken-back' })}>
             Change it first

@@ -49,5 +49,5 @@ export function usePhotos({ orderNumber, first, draft, dispatch, keeper }: Parts
     await keeper.clear();
   }
 
-  return { list: draft.photos, refusals, choose, remove, discardAll, tryNow: uploader.tryNow };
+  return { list: draft.photos, refusals, choose, remove, discardAll, tryNow: uploader.tryNow, wake: uploader.wake };
 }

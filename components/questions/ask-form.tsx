@@ -11,6 +11,7 @@ import { Select } from '@/components/ui/select';
 import { TextInput } from '@/components/ui/text-input';
 import type { AskableTopic } from '@/db/queries/question-form';
 import { partWords } from '@/lib/questions/people-words';
+import { plainNote } from '@/lib/rich-text/plain-text';
 import { wordIn } from '@/lib/send-json';
 
 type AskFormProps = {
@@ -38,7 +39,7 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
 
   async function submit(event: FormEvent) {
     event.preventDefault();
-    const note = draft.note ?? { type: 'doc', content: [] };
+    const note = draft.note ?? plainNote('');
     const answer = await form.send('/api/questions', { ...draft, note, orderNumber, entryId });
     const id = wordIn(answer, 'id');
     if (id) router.push(`/questions/${id}`);

@@ -6,6 +6,7 @@ import { RefusedNotice } from './refused-notice';
 import { useDraftForm, useIsBrowser } from './use-draft-form';
 import { LazyNoteEditor } from '@/components/rich-text/lazy-note-editor';
 import { Button } from '@/components/ui/button';
+import { plainNote } from '@/lib/rich-text/plain-text';
 
 type ReplyFormProps = {
   questionId: string;
@@ -33,7 +34,7 @@ function Form({ questionId, viewerId, isBrowser, label, button, mailWords }: Rep
     const { idempotencyKey, note } = draft;
     const answer = await send(`/api/questions/${questionId}/letters`, {
       idempotencyKey,
-      note: note ?? { type: 'doc', content: [] },
+      note: note ?? plainNote(''),
     });
     if (answer === null) return;
     setIsSent(true);

@@ -81,15 +81,15 @@ type Settled =
   | { state: 'waiting'; nextAttemptAt: number; problem: string }
   | { state: 'failed' | 'parked' | 'dropped'; problem: string };
 
+const free = { leaseOwner: null, leaseEndsAt: null };
+
+/** What is over keeps no secret of a sign-in link. */
+const ended = ({ kind }: Pick<ClaimedMail, 'kind'>) =>
+  kind === 'sign_in' ? { ...free, about: {}, frozen: null } : free;
+
 /** Ends one try. Secrets of a sign-in mail go with its last one. */
-export function settleMail(
-  mail: Pick<ClaimedMail, 'id' | 'kind' | 'about'>,
-  owner: string,
-  settled: Settled,
-): Promise<void> {
+export function settleMail(mail: Pick<ClaimedMail, 'id' | 'kind'>, owner: string, settled: Settled): Promise<void> {
   return write(async (tx) => {
-    const over = settled.state !== 'waiting';
-    const secretsGone = over && mail.kind === 'sign_in' ? { about: {}, frozen: null } : {};
     const outcome =
       settled.state === 'sent'
         ? { state: settled.state, providerId: settled.providerId, sentAt: settled.nowMs, lastProblem: null }
@@ -98,7 +98,7 @@ export function settleMail(
           : { state: settled.state, lastProblem: settled.problem };
     await tx
       .update(outbox)
-      .set({ ...outcome, ...secretsGone, leaseOwner: null, leaseEndsAt: null })
+      .set({ ...outcome, ...(settled.state === 'waiting' ? free : ended(mail)) })
       .where(held(mail.id, owner));
   });
 }
@@ -108,7 +108,7 @@ export function replaceMail(mail: ClaimedMail, owner: string, about: MailAbout, 
   return write(async (tx) => {
     await tx
       .update(outbox)
-      .set({ state: 'dropped', lastProblem: 'part of it may no longer be read', leaseOwner: null, leaseEndsAt: null })
+      .set({ state: 'dropped', lastProblem: 'part of it may no longer be read', ...ended(mail) })
       .where(held(mail.id, owner));
     const { kind, userId } = mail;
     await queueMail(tx, { kind, userId, about, dedupeKey: `${mail.dedupeKey}+` }, nowMs);

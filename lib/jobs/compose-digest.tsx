@@ -1,4 +1,5 @@
 import { findShop, listDigestEntries, listDigestPhotos, type MailReader } from '@/db/queries/mail-content';
+import { findMailSettings } from '@/db/queries/mail-settings';
 import { mailJpegKey } from '@/db/queries/photos';
 import { Digest, subject, type DigestProps } from '@/emails/digest';
 import { renderMail } from '@/emails/render-mail';
@@ -15,16 +16,18 @@ const PHOTOS_SHOWN = 3;
 type DigestEntryRow = Awaited<ReturnType<typeof listDigestEntries>>[number];
 type Picture = { key: string; contentId: string; alt: string };
 
-/** The digest of these entries as its reader may have it now; null when none of them is left. */
+/** The digest of these entries as its reader may have it now; null when none is left, or no more mail is wanted. */
 export async function composeDigest(
   reader: MailReader,
   entryIds: string[],
 ): Promise<Omit<FrozenMail, 'to' | 'about'> | null> {
+  if ((await findMailSettings(reader)).cadence === 'none') return null;
   const rows = await listDigestEntries(reader, entryIds);
   if (rows.length === 0) return null;
   const open = rows.filter((row) => !row.held);
   const pictures = await choosePictures(reader, open);
-  const unsubscribeUrl = `${env().APP_URL}/unsubscribe/${unsubscribeToken(reader.id)}`;
+  const token = unsubscribeToken(reader.id);
+  const unsubscribeUrl = `${env().APP_URL}/unsubscribe/${token}`;
   const props: DigestProps = {
     readerName: reader.name,
     shopName: (await findShop()).name,
@@ -36,7 +39,7 @@ export async function composeDigest(
   return {
     subject: subject(props),
     ...(await renderMail(<Digest {...props} />)),
-    headers: { ...autoHeaders(), ...unsubscribeHeaders(unsubscribeUrl) },
+    headers: { ...autoHeaders(), ...unsubscribeHeaders(`${env().APP_URL}/api/unsubscribe/${token}`) },
     photos: [...pictures.values()].map(({ key, contentId }) => ({ key, contentId })),
   };
 }

@@ -4,7 +4,13 @@ export type Answer<T> =
   | { kind: 'no-signal' }
   | { kind: 'status'; status: number; message?: string; fields?: Record<string, string>; retryAfterMs?: number };
 
-type Call = { method: 'POST' | 'PATCH' | 'DELETE'; url: string; body: object; signal?: AbortSignal; patienceMs?: number };
+type Call = {
+  method: 'POST' | 'PATCH' | 'DELETE';
+  url: string;
+  body: object;
+  signal?: AbortSignal;
+  patienceMs?: number;
+};
 
 const PATIENCE_MS = 20_000;
 

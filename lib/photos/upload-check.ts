@@ -27,7 +27,8 @@ export function choiceRefusal(head: Uint8Array, sizeBytes: number): string | nul
 export function roomRefusal(keptCount: number, chosenCount: number): string | null {
   const overCount = keptCount + chosenCount - MAX_PHOTOS_PER_ENTRY;
   if (overCount <= 0) return null;
-  const left = overCount === 1 ? 'The last one was left out; post it' : `The last ${overCount} were left out; post them`;
+  const left =
+    overCount === 1 ? 'The last one was left out; post it' : `The last ${overCount} were left out; post them`;
   return `An entry holds at most ${MAX_PHOTOS_PER_ENTRY} photos. ${left} in a second entry.`;
 }
 

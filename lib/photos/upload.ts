@@ -160,7 +160,8 @@ export function createUploader({ transport, onChange, pause, random, atOnce = 3 
   return {
     /** Takes a photo up; one that is under way already is left alone. */
     add(file: UploadFile): void {
-      if (!jobs.has(file.uploadKey)) begin({ file, leaving: new AbortController(), isOver: false, photoId: file.photoId });
+      if (!jobs.has(file.uploadKey))
+        begin({ file, leaving: new AbortController(), isOver: false, photoId: file.photoId });
     },
     /** Gives a photo up: the transfer stops, and what has arrived of it is thrown away. */
     async remove(uploadKey: string): Promise<void> {

@@ -10,12 +10,19 @@ const NOTE = `The second coat is on, and it holds. ${Date.now()}`;
 
 /** The ids of the photos under an entry, as the page's picture addresses have them. */
 async function photoIdsOf(page: Page, text: string): Promise<string[]> {
-  const entry = page.getByRole('listitem').filter({ hasText: text }).filter({ has: page.locator('article') });
-  const sources = await entry.locator('img[srcset]').evaluateAll((images) => images.map((image) => image.getAttribute('src') ?? ''));
+  const entry = page
+    .getByRole('listitem')
+    .filter({ hasText: text })
+    .filter({ has: page.locator('article') });
+  const sources = await entry
+    .locator('img[srcset]')
+    .evaluateAll((images) => images.map((image) => image.getAttribute('src') ?? ''));
   return sources.map((source) => /\/api\/photos\/([\w-]+)\//.exec(source)?.[1] ?? '');
 }
 
-test('a builder posts from the bench, the player sees it, asks, is answered and gets mail; rights end at once', async ({ browser }) => {
+test('a builder posts from the bench, the player sees it, asks, is answered and gets mail; rights end at once', async ({
+  browser,
+}) => {
   test.setTimeout(240_000);
   const upright = test.info().outputPath('first.jpg');
   const lying = test.info().outputPath('second.jpg');
@@ -34,7 +41,9 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
   await expect(player.getByText('A mail at once')).toBeVisible();
   await player.goto(`/builds/${ORDER}`);
 
-  const bench = await (await browser.newContext({ viewport: { width: 390, height: 844 }, hasTouch: true, isMobile: true })).newPage();
+  const bench = await (
+    await browser.newContext({ viewport: { width: 390, height: 844 }, hasTouch: true, isMobile: true })
+  ).newPage();
   await test.step('the builder signs in by mail and posts two photographs with a note', async () => {
     await signInByMail(bench, people.builder);
     await bench.goto(`/bench/${ORDER}`);
@@ -58,12 +67,20 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
     expect(Number(new URL(answer.url()).searchParams.get('X-Amz-Expires'))).toBeLessThanOrEqual(300);
     const picture = await sharp(await answer.body()).metadata();
     expect([picture.width, picture.height], 'orientation 6 swaps the sides').toEqual([900, 1200]);
-    expect([picture.exif, picture.xmp, picture.iptc, picture.icc, picture.orientation]).toEqual(Array(5).fill(undefined));
+    expect([picture.exif, picture.xmp, picture.iptc, picture.icc, picture.orientation]).toEqual(
+      Array(5).fill(undefined),
+    );
   });
 
   await test.step('a stranger and another buyer get 404 for page, API and photo', async () => {
     const stranger = await browserOf(browser, people.otherBuyer);
-    for (const path of [`/builds/${ORDER}`, `/api/builds/${ORDER}/diary`, `/api/photos/${photoId}/640`, '/builds/Q-0000', '/api/photos/nothing/640']) {
+    for (const path of [
+      `/builds/${ORDER}`,
+      `/api/builds/${ORDER}/diary`,
+      `/api/photos/${photoId}/640`,
+      '/builds/Q-0000',
+      '/api/photos/nothing/640',
+    ]) {
       const answer = await stranger.request.get(path);
       expect(answer.status(), path).toBe(404);
       expect(await answer.text(), path).not.toContain('Nightjar');
@@ -73,7 +90,11 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
 
   const question = `How many more coats? ${Date.now()}`;
   await test.step('the player asks from the entry, and the holder of the pen answers', async () => {
-    await player.getByRole('listitem').filter({ hasText: NOTE }).getByRole('link', { name: /^Ask Tove/ }).click();
+    await player
+      .getByRole('listitem')
+      .filter({ hasText: NOTE })
+      .getByRole('link', { name: /^Ask Tove/ })
+      .click();
     await player.getByLabel('What is it about?').selectOption({ label: 'Finish & colour' });
     await player.getByLabel('Your question in a few words').fill(question);
     await player.getByRole('textbox', { name: 'What would you like to know?' }).fill('I am counting the days.');
@@ -105,10 +126,21 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
     expect((await bench.request.get(`/api/builds/${ORDER}/diary`)).status()).toBe(200);
     const admin = await (await browserOf(browser, people.admin)).newPage();
     await admin.goto(`/access/builds/${ORDER}`);
-    await admin.getByRole('button', { name: /Take off.*Tove Järvi/ }).first().click();
-    await admin.getByRole('dialog').getByRole('button', { name: /^Take off/ }).click();
+    await admin
+      .getByRole('button', { name: /Take off.*Tove Järvi/ })
+      .first()
+      .click();
+    await admin
+      .getByRole('dialog')
+      .getByRole('button', { name: /^Take off/ })
+      .click();
     await expect(admin.getByRole('button', { name: /Take off.*Tove Järvi/ })).toHaveCount(0);
-    for (const path of [`/api/builds/${ORDER}/diary`, `/builds/${ORDER}`, `/bench/${ORDER}`, `/api/photos/${photoId}/640`]) {
+    for (const path of [
+      `/api/builds/${ORDER}/diary`,
+      `/builds/${ORDER}`,
+      `/bench/${ORDER}`,
+      `/api/photos/${photoId}/640`,
+    ]) {
       expect((await bench.request.get(path)).status(), path).toBe(404);
     }
   });

@@ -16,13 +16,28 @@ export const people = {
 } as const;
 
 /** A browser of its own, signed in as this person; without an address, a stranger's. */
-export async function browserOf(browser: Browser, address?: string, options: Parameters<Browser['newContext']>[0] = {}) {
+export async function browserOf(
+  browser: Browser,
+  address?: string,
+  options: Parameters<Browser['newContext']>[0] = {},
+) {
   const context = await browser.newContext(options);
-  if (address) await context.addCookies([{ name: 'flitchbook-session', value: tokenFor(address), url: world.appUrl, httpOnly: true, sameSite: 'Lax' }]);
+  if (address)
+    await context.addCookies([
+      { name: 'flitchbook-session', value: tokenFor(address), url: world.appUrl, httpOnly: true, sameSite: 'Lax' },
+    ]);
   return context;
 }
 
-export type Mail = { to: string[]; subject: string; text: string; html: string; headers: Record<string, string>; createdAt: string; attachments: { contentType: string; contentId?: string; sizeBytes: number }[] };
+export type Mail = {
+  to: string[];
+  subject: string;
+  text: string;
+  html: string;
+  headers: Record<string, string>;
+  createdAt: string;
+  attachments: { contentType: string; contentId?: string; sizeBytes: number }[];
+};
 
 export async function mailsTo(address: string): Promise<Mail[]> {
   const answer = await fetch(`${world.mailUrl}/mails?to=${encodeURIComponent(address)}`);
@@ -47,7 +62,10 @@ export async function signInByMail(page: Page, address: string): Promise<void> {
   await page.getByLabel('Your mail address').fill(address);
   await page.getByRole('button', { name: 'Mail me a link' }).click();
   await page.waitForURL('**/sign-in/sent');
-  const mail = await mailTo(address, ({ text, createdAt }) => text.includes('/sign-in/open#') && Date.parse(createdAt) >= askedAt - 1000);
+  const mail = await mailTo(
+    address,
+    ({ text, createdAt }) => text.includes('/sign-in/open#') && Date.parse(createdAt) >= askedAt - 1000,
+  );
   await page.goto(/http\S+\/sign-in\/open#\S+/.exec(mail.text)?.[0] ?? '');
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();
   await page.waitForURL((url) => !url.pathname.startsWith('/sign-in'));

@@ -14,5 +14,10 @@ await write(async (tx) => {
     const row = { userId: id, tokenHash: hashToken(tokenFor(email)), lastSeenAt: nowMs, idleEndsAt: endsAt, endsAt };
     await tx.insert(sessions).values(row);
   }
+  const [somebody] = people;
+  if (!somebody) throw new Error('the demo world is empty');
+  // One whose time is over: its cookie must open nothing.
+  const over = { lastSeenAt: nowMs - 9e8, idleEndsAt: nowMs - 1000, endsAt: nowMs - 1000 };
+  await tx.insert(sessions).values({ userId: somebody.id, tokenHash: hashToken(tokenFor('ended')), ...over });
 });
 database().close();

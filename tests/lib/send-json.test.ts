@@ -22,11 +22,11 @@ beforeAll(async () => {
 
 afterAll(() => new Promise((resolve) => server.close(resolve)));
 
-const send = (canned: Canned) =>
-  sendJson(`${base}/${encodeURIComponent(JSON.stringify(canned))}`, { idempotencyKey: 'k'.repeat(20) });
+const send = (canned: Canned, isOnline = true) =>
+  sendJson(`${base}/${encodeURIComponent(JSON.stringify(canned))}`, { idempotencyKey: 'k'.repeat(20) }, () => isOnline);
 
-async function refusedBy(canned: Canned) {
-  const sent = await send(canned);
+async function refusedBy(canned: Canned, isOnline = true) {
+  const sent = await send(canned, isOnline);
   if (sent.ok) throw new Error('it was taken');
   return sent.refused;
 }
@@ -56,6 +56,11 @@ describe('sending JSON', () => {
     const refused = await refusedBy({ status, body: '<html>Bad gateway</html>', retryAfter });
     expect(refused.message).toMatch(says);
     expect(refused).toMatchObject({ status, fields: {} });
+  });
+
+  test('without a connection it says so, and that the words are kept', async () => {
+    const { message } = await refusedBy({ status: 0, body: '' }, false);
+    expect(message).toMatch(/offline.*kept here/);
   });
 
   test('a page that is not JSON is never taken for success', async () => {

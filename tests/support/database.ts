@@ -4,9 +4,10 @@ import { join } from 'node:path';
 import { afterAll } from 'vitest';
 import { Database } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
+import { log } from '@/lib/log';
 
 /** Every variable that lib/env.ts asks for. The two addresses lead nowhere unless a test starts a stand-in there. */
-const testEnv = {
+export const testEnv = {
   APP_URL: 'https://diary.example',
   AUTH_SECRET: 'only-for-tests-only-for-tests-only-for-tests',
   S3_ENDPOINT: 'http://127.0.0.1:9',
@@ -16,10 +17,9 @@ const testEnv = {
   S3_SECRET_ACCESS_KEY: 'a/secret+for=tests',
   RESEND_API_KEY: 're_local_example',
   RESEND_BASE_URL: 'http://127.0.0.1:9',
-  LOG_LEVEL: 'silent',
 };
 
-export type TestEnv = typeof testEnv;
+type TestEnv = typeof testEnv;
 
 /**
  * A database file of this test file's own, with the real migrations, as the process's database; gone after its tests.
@@ -28,6 +28,7 @@ export type TestEnv = typeof testEnv;
 export async function openTestDatabase(env: Partial<TestEnv> = {}): Promise<{ database: Database; file: string }> {
   const folder = mkdtempSync(join(tmpdir(), 'flitchbook-'));
   const file = join(folder, 'diary.db');
+  log.level = 'silent';
   Object.assign(process.env, testEnv, env, { DATABASE_URL: `file:${file}` });
   const database = new Database(`file:${file}`);
   globalThis.flitchbookDatabase = database;

@@ -31,7 +31,9 @@ export default async function BenchPage({ searchParams }: PageProps<'/bench'>) {
       <WaitingDrafts viewerId={viewer.id} />
       <FindBuild
         found={wanted}
-        error={wanted && builds.length === 0 ? 'No build of yours has this number. Look at the rack tag again.' : undefined}
+        error={
+          wanted && builds.length === 0 ? 'No build of yours has this number. Look at the rack tag again.' : undefined
+        }
       />
       {onFloor.length > 0 && <BenchBuilds builds={onFloor} />}
       {onFloor.length === 0 && !wanted && (

@@ -32,7 +32,11 @@ const unanswered: DraftEvent = { type: 'send-kept', message: NO_SIGNAL, isSigned
 
 describe('photos of a draft', () => {
   test('are handed to the diary in the order they were chosen, each with its words, once all are there', () => {
-    const described = run(withPhotos('a', 'b'), ready('b'), { type: 'photo-described', uploadKey: 'a', alt: 'The heel' });
+    const described = run(withPhotos('a', 'b'), ready('b'), {
+      type: 'photo-described',
+      uploadKey: 'a',
+      alt: 'The heel',
+    });
     expect(readyPhotos(described)).toBeNull();
     expect(readyPhotos(run(described, ready('a')))).toEqual([
       { id: 'id-a', alt: 'The heel' },
@@ -56,8 +60,15 @@ describe('asking to post', () => {
 
   test('what was said about a field goes with the next change of that field', () => {
     const problem = { message: 'Look again.', fields: { note: 'Empty.', stageId: 'Choose one.' } };
-    const draft = run(blankDraft('key-1'), { type: 'send-refused', problem }, { type: 'written', note: plainNote('x') });
-    expect(draft.posting).toEqual({ step: 'writing', problem: { fields: { note: undefined, stageId: 'Choose one.' } } });
+    const draft = run(
+      blankDraft('key-1'),
+      { type: 'send-refused', problem },
+      { type: 'written', note: plainNote('x') },
+    );
+    expect(draft.posting).toEqual({
+      step: 'writing',
+      problem: { fields: { note: undefined, stageId: 'Choose one.' } },
+    });
   });
 
   test.each<{ to: string; posting: Posting }>([
@@ -84,7 +95,14 @@ describe('asking to post', () => {
 
   test('a try that went unanswered is remembered through a later sign-out', () => {
     const signedOut: DraftEvent = { type: 'send-kept', message: '', isSignedOut: true, mayHaveArrived: false };
-    const draft = run(withPhotos('a'), { type: 'post-asked' }, { type: 'send-began' }, unanswered, { type: 'send-began' }, signedOut);
+    const draft = run(
+      withPhotos('a'),
+      { type: 'post-asked' },
+      { type: 'send-began' },
+      unanswered,
+      { type: 'send-began' },
+      signedOut,
+    );
     expect(draft.posting).toMatchObject({ step: 'kept', isSignedOut: true, wasSent: true });
   });
 
@@ -125,11 +143,18 @@ describe('a kept draft', () => {
 
   test.each([
     { how: 'to be posted', events: [{ type: 'post-asked' }], wasSent: false },
-    { how: 'caught by a crash while it was sent', events: [{ type: 'post-asked' }, { type: 'send-began' }], wasSent: true },
+    {
+      how: 'caught by a crash while it was sent',
+      events: [{ type: 'post-asked' }, { type: 'send-began' }],
+      wasSent: true,
+    },
     { how: 'unanswered', events: [{ type: 'post-asked' }, { type: 'send-began' }, unanswered], wasSent: true },
-  ] satisfies { how: string; events: DraftEvent[]; wasSent: boolean }[])('$how goes on being sent', ({ events, wasSent }) => {
-    expect(fromKept(kept(run(written, ...events)), 'x').posting).toMatchObject({ step: 'kept', wasSent });
-  });
+  ] satisfies { how: string; events: DraftEvent[]; wasSent: boolean }[])(
+    '$how goes on being sent',
+    ({ events, wasSent }) => {
+      expect(fromKept(kept(run(written, ...events)), 'x').posting).toMatchObject({ step: 'kept', wasSent });
+    },
+  );
 
   test('whose words are damaged still brings its photos back', () => {
     const damaged = { ...kept(written), draft: { ...toKept(written), note: { type: 'doc', content: 7 } } };
@@ -147,14 +172,22 @@ describe('a kept draft', () => {
 
 describe('what an answer means for the draft', () => {
   test('posted, and whether it waits for a rep', () => {
-    expect(eventOf({ kind: 'ok', body: { id: 'e1', state: 'held' } })).toEqual({ type: 'posted', entryId: 'e1', isHeld: true });
+    expect(eventOf({ kind: 'ok', body: { id: 'e1', state: 'held' } })).toEqual({
+      type: 'posted',
+      entryId: 'e1',
+      isHeld: true,
+    });
   });
 
   test.each([
     { what: 'silence', answer: { kind: 'no-signal' } as const, over: { mayHaveArrived: true, message: NO_SIGNAL } },
     { what: 'a fault of the shop', answer: { kind: 'status', status: 500 } as const, over: { mayHaveArrived: true } },
     { what: 'too many', answer: { kind: 'status', status: 429 } as const, over: { mayHaveArrived: false } },
-    { what: 'signed out', answer: { kind: 'status', status: 401 } as const, over: { isSignedOut: true, mayHaveArrived: false } },
+    {
+      what: 'signed out',
+      answer: { kind: 'status', status: 401 } as const,
+      over: { isSignedOut: true, mayHaveArrived: false },
+    },
   ])('$what: kept and tried again', ({ answer, over }) => {
     expect(eventOf(answer)).toMatchObject({ type: 'send-kept', ...over });
   });
@@ -177,9 +210,11 @@ describe('saving an edit', () => {
   });
 
   test('422 puts the sentence at the note', () => {
-    expect(editStateOf({ kind: 'status', status: 422, message: 'Look.', fields: { note: 'Too long.' } })).toMatchObject({
-      note: 'Too long.',
-    });
+    expect(editStateOf({ kind: 'status', status: 422, message: 'Look.', fields: { note: 'Too long.' } })).toMatchObject(
+      {
+        note: 'Too long.',
+      },
+    );
   });
 });
 
@@ -200,6 +235,10 @@ describe('the stage of an entry', () => {
 
   test('a build not begun is at its first stage, a finished one at its last', () => {
     const all = (state: 'done' | 'ahead') => stages.map((stage) => ({ ...stage, state }));
-    expect([stageOf(all('ahead'), null), stageOf(all('done'), null), stageOf([], null)]).toEqual(['wood', 'finish', '']);
+    expect([stageOf(all('ahead'), null), stageOf(all('done'), null), stageOf([], null)]).toEqual([
+      'wood',
+      'finish',
+      '',
+    ]);
   });
 });

@@ -20,7 +20,9 @@ function makeShop() {
 
   const transport: UploadTransport = {
     async measure(blob) {
-      return createHash('sha256').update(new Uint8Array(await blob.arrayBuffer())).digest('base64');
+      return createHash('sha256')
+        .update(new Uint8Array(await blob.arrayBuffer()))
+        .digest('base64');
     },
     async ask({ uploadKey }) {
       calls.push(`ask ${uploadKey}`);
@@ -35,7 +37,8 @@ function makeShop() {
     },
     async send({ url }: UploadLink, _blob, onShare, signal) {
       calls.push(`send ${url}`);
-      if (isHolding) await new Promise<void>((resolve) => (held.push(resolve), signal.addEventListener('abort', () => resolve())));
+      if (isHolding)
+        await new Promise<void>((resolve) => (held.push(resolve), signal.addEventListener('abort', () => resolve())));
       if (signal.aborted) return noSignal;
       const answer = odd.send.shift();
       if (answer) return answer;

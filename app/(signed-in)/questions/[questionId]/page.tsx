@@ -39,11 +39,13 @@ export default async function QuestionPage({ params }: Props) {
             />
           </div>
         )}
-        <ol role="log" aria-label="Letters">
-          {question.letters.map((letter) => (
-            <Letter key={letter.id} letter={letter} viewerId={viewer.id} zone={reader.zone} nowMs={reader.nowMs} />
-          ))}
-        </ol>
+        <div role="log" aria-label="Letters">
+          <ol role="list">
+            {question.letters.map((letter) => (
+              <Letter key={letter.id} letter={letter} viewerId={viewer.id} zone={reader.zone} nowMs={reader.nowMs} />
+            ))}
+          </ol>
+        </div>
         <div className="max-w-[44rem] md:ml-32">
           <Reply question={question} reader={reader} mayWrite={mayWrite(viewer, question)} />
         </div>
