@@ -1,6 +1,6 @@
-import { and, eq, exists, isNull, lte, or, sql, type SQL, type SQLWrapper } from 'drizzle-orm';
+import { and, eq, exists, isNull, lte, or, sql, type Placeholder, type SQL, type SQLWrapper } from 'drizzle-orm';
 import { QueryBuilder, alias } from 'drizzle-orm/sqlite-core';
-import { isStaffRole } from '@/lib/access';
+import { isStaffRole, type Role } from '@/lib/access';
 import type { Viewer } from '@/lib/viewer';
 import {
   assignments,
@@ -18,6 +18,10 @@ import {
  * Which rows a viewer reaches; nothing else in the product decides this. Every function returns a condition, never
  * undefined: a dropped condition would be a leak.
  */
+
+/** Who asks. A prepared query leaves the person open and fixes the role, which decides the shape of the condition. */
+export type Reader = { id: Viewer['id'] | Placeholder; role: Role };
+
 const from = new QueryBuilder();
 const one = { one: sql`1` };
 const never = sql`0`;
@@ -32,7 +36,7 @@ export const isOpen: SQL = or(isNull(builds.heldUntilAt), lte(builds.heldUntilAt
 
 const currentStageKey = sql`(select ${buildStages.key} from ${buildStages} where ${buildStages.buildId} = ${builds.id} and ${buildStages.startedAt} is not null and ${buildStages.finishedAt} is null order by ${buildStages.position} limit 1)`;
 
-function isOnTheBuild(viewer: Viewer): SQL {
+function isOnTheBuild(viewer: Reader): SQL {
   const row = all(
     eq(buildPeople.buildId, builds.id),
     eq(buildPeople.userId, viewer.id),
@@ -41,7 +45,7 @@ function isOnTheBuild(viewer: Viewer): SQL {
   return exists(from.select(one).from(buildPeople).where(row));
 }
 
-function isAssigned(viewer: Viewer): SQL {
+function isAssigned(viewer: Reader): SQL {
   const row = all(
     eq(assignments.buildId, builds.id),
     eq(assignments.userId, viewer.id),
@@ -51,7 +55,7 @@ function isAssigned(viewer: Viewer): SQL {
   return exists(from.select(one).from(assignments).where(row));
 }
 
-function isAssignedByRule(viewer: Viewer): SQL {
+function isAssignedByRule(viewer: Reader): SQL {
   const rule = all(
     eq(standingAssignments.userId, viewer.id),
     isNull(standingAssignments.endedAt),
@@ -62,13 +66,16 @@ function isAssignedByRule(viewer: Viewer): SQL {
 }
 
 /** The builds this viewer reaches. A client by being its owner or companion; staff, admins included, by assignment. */
-export function buildIsVisible(viewer: Viewer): SQL {
+export function buildIsVisible(viewer: Reader): SQL {
   if (!isStaffRole(viewer.role)) return isOnTheBuild(viewer);
   return or(isAssigned(viewer), isAssignedByRule(viewer)) ?? never;
 }
 
 /** The entries of a visible build that this viewer reads: the client side only what was published for it. */
-export function entryIsVisible(viewer: Viewer, entry: { state: SQLWrapper; audience: SQLWrapper } = entries): SQL {
+export function entryIsVisible(
+  viewer: Pick<Viewer, 'role'>,
+  entry: { state: SQLWrapper; audience: SQLWrapper } = entries,
+): SQL {
   if (isStaffRole(viewer.role)) return sql`${entry.state} <> 'withdrawn'`;
   return sql`${entry.state} = 'published' and ${entry.audience} = 'buyer'`;
 }

@@ -14,11 +14,11 @@ export function AccessNav({ links }: { links: { href: string; label: string }[] 
     <nav aria-label="Access" className="border-b border-line bg-sheet print:hidden">
       <ul role="list" className="mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {links.map(({ href, label }) => (
-          <li key={href}>
+          <li key={href} className="md:first:-ml-3">
             <Link
               href={href}
               aria-current={href === current ? 'page' : undefined}
-              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 text-soft -outline-offset-2 aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink md:first:-ml-3"
+              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 text-soft -outline-offset-2 aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink"
             >
               {label}
             </Link>

@@ -6,7 +6,7 @@ import { dayWords } from '@/lib/date-words';
 
 const columns = [
   { key: 'order', label: 'Order' },
-  { key: 'since', label: 'On it since' },
+  { key: 'since', label: 'On it since', className: 'hidden sm:table-cell' },
   { key: 'how', label: 'How' },
   { key: 'end', label: <span className="sr-only">Take off</span>, className: 'text-right' },
 ];
@@ -33,7 +33,7 @@ export function AssignmentTable({ assignments, endTool, zone, nowMs }: Assignmen
               {assignment.orderNumber}
             </Link>
           </RowHead>
-          <Cell>{dayWords(assignment.startedAt, zone, nowMs)}</Cell>
+          <Cell className="hidden whitespace-nowrap sm:table-cell">{dayWords(assignment.startedAt, zone, nowMs)}</Cell>
           <Cell>
             <AssignmentWords {...assignment} />
           </Cell>

@@ -22,6 +22,7 @@ export function PlaceList({ standings: { open, heldCount }, rules, isStaff, isEm
         <li key={orderNumber}>
           {standing === 'owner' ? 'Owns' : 'Looks on at'}{' '}
           <Link
+            prefetch={false}
             href={`/access/builds/${orderNumber}`}
             className="narrow font-semibold text-finish-deep hover:underline"
           >
@@ -31,8 +32,8 @@ export function PlaceList({ standings: { open, heldCount }, rules, isStaff, isEm
       ))}
       {heldCount > 0 && (
         <li>
-          {heldCount === 1 ? 'One more build' : `${heldCount} more builds`} on the client side, held from view; the
-          number is kept apart from the name until then.
+          {heldCount === 1 ? 'One build' : `${heldCount} builds`} on the client side held from view. Which, and whose,
+          is kept apart until the hold ends.
         </li>
       )}
       {rules.map((rule) => (

@@ -40,7 +40,7 @@ export function ReviewLists({ review, endTool, zone, nowMs }: ReviewListsProps) 
 
 const columns = [
   { key: 'person', label: 'Person' },
-  { key: 'since', label: 'On it since' },
+  { key: 'since', label: 'On it since', className: 'hidden sm:table-cell' },
   { key: 'how', label: 'How' },
   { key: 'end', label: <span className="sr-only">Take off</span>, className: 'text-right' },
 ];
@@ -59,7 +59,7 @@ function StaffTable({
           <RowHead note={workWords(assigned)}>
             <PersonLink userId={assigned.userId} name={assigned.name} />
           </RowHead>
-          <Cell>{dayWords(assigned.startedAt, zone, nowMs)}</Cell>
+          <Cell className="hidden whitespace-nowrap sm:table-cell">{dayWords(assigned.startedAt, zone, nowMs)}</Cell>
           <Cell>
             <AssignmentWords {...assigned} />
             {!isOpen && !assigned.cleared && <span className="block text-sm text-soft">shut out by the hold</span>}

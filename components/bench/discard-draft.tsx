@@ -7,11 +7,11 @@ import { Dialog } from '@/components/ui/dialog';
 export function DiscardDraft({ onDiscard }: { onDiscard: () => void }) {
   const [isAsking, setIsAsking] = useState(false);
   return (
-    <div className="text-center">
+    <>
       <button
         type="button"
         onClick={() => setIsAsking(true)}
-        className="min-h-12 px-4 font-semibold text-finish-deep underline-offset-4 hover:underline"
+        className="min-h-12 justify-self-center px-4 font-semibold text-finish-deep underline-offset-4 hover:underline"
       >
         Discard draft
       </button>
@@ -31,6 +31,6 @@ export function DiscardDraft({ onDiscard }: { onDiscard: () => void }) {
           </>
         }
       />
-    </div>
+    </>
   );
 }

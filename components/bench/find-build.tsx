@@ -4,7 +4,7 @@ import { TextInput } from '@/components/ui/text-input';
 /** Finds a build by what is on its rack tag. */
 export function FindBuild({ found, error }: { found: string; error?: string }) {
   return (
-    <form action="/bench" className="grid max-w-md grid-cols-[minmax(0,1fr)_auto] items-end gap-3">
+    <form action="/bench" className="grid max-w-md grid-cols-[minmax(0,1fr)_auto] items-start gap-3">
       <TextInput
         label="Order number"
         name="find"
@@ -17,7 +17,7 @@ export function FindBuild({ found, error }: { found: string; error?: string }) {
         placeholder="Q-2417"
         error={error}
       />
-      <Button type="submit" size="bench" className={error ? 'mb-6.5' : undefined}>
+      <Button type="submit" size="bench" className="mt-7.5">
         Find
       </Button>
     </form>

@@ -1,5 +1,5 @@
-import type { BenchPhoto, Draft, Posting } from './draft-state';
-import { KEPT_FOR_PHOTOS, readDraftNote } from './draft-state';
+import { readDraftNote, type BenchPhoto, type Draft } from './draft-state';
+import { KEPT_FOR_PHOTOS, type Posting } from './posting-state';
 import type { KeptDraft, KeptPhoto } from '@/lib/drafts';
 import { PHOTO_TYPES } from '@/lib/photos/limits';
 

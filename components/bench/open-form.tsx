@@ -1,11 +1,13 @@
 'use client';
 
-import { useReducer, useState } from 'react';
+import { useReducer, useRef, useState } from 'react';
+import { AudienceField } from './audience-field';
 import { DiscardDraft } from './discard-draft';
 import { draftReducer, isBlank, type Draft } from './draft-state';
 import type { OpenedDraft } from './open-draft';
 import { PhotoField } from './photo-field';
 import { PostFoot } from './post-foot';
+import { Posted } from './posted';
 import type { PostFormProps } from './post-form';
 import { entryFrom } from './post-entry';
 import { SignalBanner } from './signal-banner';
@@ -14,15 +16,10 @@ import { StageField } from './stage-field';
 import { useKeepDraft } from './use-keep-draft';
 import { usePhotos } from './use-photos';
 import { usePosting } from './use-posting';
+import { useShowProblem } from './use-show-problem';
 import { LazyNoteEditor } from '@/components/rich-text/lazy-note-editor';
-import { Segmented } from '@/components/ui/segmented';
 
 type OpenFormProps = PostFormProps & { opened: OpenedDraft; isKeeping: boolean; onDiscarded: () => void };
-
-const audiences = [
-  { value: 'buyer', label: 'Buyer sees it' },
-  { value: 'shop', label: 'Shop only' },
-];
 
 /** The form itself, once the draft is there. Give it another `key` for another draft. */
 export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, onDiscarded }: OpenFormProps) {
@@ -36,6 +33,7 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
     dispatch,
     keeper,
     entryFrom: (whole, ready) => entryFrom({ draft: whole, orderNumber, stages, photos: ready }),
+    onPhotosMissing: photos.recheck,
   });
   const tryAll = () => {
     photos.wake();
@@ -43,10 +41,13 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
   };
   const isLocked = draft.posting.step !== 'writing';
   const problem = draft.posting.step === 'writing' ? draft.posting.problem : undefined;
+  const form = useRef<HTMLFormElement>(null);
+  useShowProblem(form, problem);
   return (
     <>
       <SignalBanner draft={draft} isKeeping={isKeeping} />
       <form
+        ref={form}
         noValidate
         onSubmit={(event) => event.preventDefault()}
         className="mx-auto grid max-w-2xl gap-5 px-4.5 pt-6 pb-12"
@@ -68,24 +69,18 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
           isLocked={isLocked}
           dispatch={dispatch}
         />
-        <fieldset disabled={isLocked} className="grid gap-2 disabled:opacity-60">
-          <Segmented
-            legend="Who sees it"
-            isLegendHidden
-            name="audience"
-            size="bench"
-            options={audiences}
-            value={draft.audience}
-            onChange={({ target }) =>
-              dispatch({ type: 'audience-chosen', audience: target.value === 'shop' ? 'shop' : 'buyer' })
-            }
-            error={problem?.fields.audience}
-          />
-          {isHeldFirst && draft.audience === 'buyer' && (
-            <p className="text-soft">A rep releases it before the buyer sees it.</p>
-          )}
-        </fieldset>
-        <PostFoot draft={draft} dispatch={dispatch} orderNumber={orderNumber} keeper={keeper} onTryNow={tryAll} />
+        <AudienceField
+          audience={draft.audience}
+          isHeldFirst={isHeldFirst}
+          error={problem?.fields.audience}
+          isLocked={isLocked}
+          dispatch={dispatch}
+        />
+        {draft.posting.step === 'posted' ? (
+          <Posted orderNumber={orderNumber} keeper={keeper} {...draft.posting} />
+        ) : (
+          <PostFoot draft={draft} dispatch={dispatch} isReading={photos.isReading} onTryNow={tryAll} />
+        )}
         {!isBlank(draft) && draft.posting.step !== 'posted' && draft.posting.step !== 'sending' && (
           <DiscardDraft onDiscard={() => photos.discardAll().then(onDiscarded)} />
         )}

@@ -1,4 +1,4 @@
-import { useId, type Dispatch } from 'react';
+import { useId, useRef, type Dispatch } from 'react';
 import type { DraftEvent } from './draft-state';
 import { PhotoRow } from './photo-row';
 import { PhotoThumb } from './photo-thumb';
@@ -12,13 +12,14 @@ type PhotoFieldProps = { photos: BenchPhotos; error?: string; isLocked: boolean;
 /** The photos of an entry: how far each has come, what each shows, and the two ways to add one. */
 export function PhotoField({ photos, error, isLocked, dispatch }: PhotoFieldProps) {
   const id = useId();
+  const heading = useRef<HTMLHeadingElement>(null);
   const { list, refusals } = photos;
   const readyCount = list.filter(({ upload }) => upload.step === 'ready').length;
   const hasRoom = list.length < MAX_PHOTOS_PER_ENTRY && !isLocked;
   return (
     <section aria-labelledby={id} className="grid gap-3">
       <div className="flex items-baseline justify-between gap-4">
-        <h2 id={id} className="text-xl">
+        <h2 ref={heading} id={id} tabIndex={-1} className="text-xl outline-none">
           Photos
         </h2>
         <p role="status" className="text-soft">
@@ -29,7 +30,7 @@ export function PhotoField({ photos, error, isLocked, dispatch }: PhotoFieldProp
         {list.map((photo, index) => (
           <PhotoThumb key={photo.uploadKey} photo={photo} number={index + 1} />
         ))}
-        {hasRoom && <PhotoTiles hasPhotos={list.length > 0} onChoose={photos.choose} />}
+        {hasRoom && <PhotoTiles hasPhotos={list.length > 0} isReading={photos.isReading} onChoose={photos.choose} />}
       </div>
       <div role="alert" className="grid gap-2 empty:hidden">
         {refusals.map((sentence) => (
@@ -48,7 +49,10 @@ export function PhotoField({ photos, error, isLocked, dispatch }: PhotoFieldProp
               number={index + 1}
               isLocked={isLocked}
               onDescribe={(alt) => dispatch({ type: 'photo-described', uploadKey: photo.uploadKey, alt })}
-              onRemove={() => photos.remove(photo.uploadKey)}
+              onRemove={() => {
+                photos.remove(photo.uploadKey);
+                heading.current?.focus();
+              }}
               onTryNow={() => photos.tryNow(photo.uploadKey)}
             />
           ))}

@@ -4,16 +4,16 @@ import { clsx } from 'clsx';
 import type { ComponentProps } from 'react';
 import { PHOTO_TYPES } from '@/lib/photos/limits';
 
-type PhotoTilesProps = { hasPhotos: boolean; onChoose: (files: File[]) => void };
+type PhotoTilesProps = { hasPhotos: boolean; isReading: boolean; onChoose: (files: File[]) => void };
 
 /** The camera where there is a touch screen, and the photos already taken. */
-export function PhotoTiles({ hasPhotos, onChoose }: PhotoTilesProps) {
+export function PhotoTiles({ hasPhotos, isReading, onChoose }: PhotoTilesProps) {
   return (
     <>
-      <Tile capture="environment" onChoose={onChoose} className="hidden any-pointer-coarse:grid">
+      <Tile capture="environment" disabled={isReading} onChoose={onChoose} className="hidden any-pointer-coarse:grid">
         {hasPhotos ? 'Take another' : 'Take a photo'}
       </Tile>
-      <Tile multiple onChoose={onChoose} className="grid">
+      <Tile multiple disabled={isReading} onChoose={onChoose} className="grid">
         Choose photos
       </Tile>
     </>

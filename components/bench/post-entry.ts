@@ -1,4 +1,5 @@
-import type { Audience, Draft, DraftEvent, Problem, ProblemField } from './draft-state';
+import type { Audience, Draft } from './draft-state';
+import type { PostingEvent, Problem, ProblemField } from './posting-state';
 import { stageOf, type StageChoice } from './stage-choice';
 import type { NoteDoc } from '@/lib/rich-text/doc';
 import { callShop, isPassing, type Answer } from '@/lib/photos/upload-answer';
@@ -23,12 +24,12 @@ const NOT_YOURS =
   'You can no longer post to this build. Your words are kept on this phone until you discard them; ask a rep or the admin.';
 
 /** Posts an entry. Sent twice with the same idempotency key it is in the diary once. */
-export async function postEntry(entry: EntryToPost): Promise<DraftEvent> {
+export async function postEntry(entry: EntryToPost): Promise<PostingEvent> {
   return eventOf(await callShop<Posted>({ method: 'POST', url: '/api/entries', body: entry }));
 }
 
 /** What an answer of the diary means for the draft. */
-export function eventOf(answer: Answer<Posted>): DraftEvent {
+export function eventOf(answer: Answer<Posted>): PostingEvent {
   if (answer.kind === 'ok') return { type: 'posted', entryId: answer.body.id, isHeld: answer.body.state === 'held' };
   if (answer.kind === 'no-signal') return kept(NO_SIGNAL, { mayHaveArrived: true });
   const { status, message, fields } = answer;
@@ -39,7 +40,7 @@ export function eventOf(answer: Answer<Posted>): DraftEvent {
   return { type: 'send-refused', problem: problemFrom(message, fields ?? {}) };
 }
 
-function kept(message: string, over: { isSignedOut?: boolean; mayHaveArrived?: boolean }): DraftEvent {
+function kept(message: string, over: { isSignedOut?: boolean; mayHaveArrived?: boolean }): PostingEvent {
   return { type: 'send-kept', message, isSignedOut: false, mayHaveArrived: false, ...over };
 }
 

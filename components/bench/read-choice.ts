@@ -1,4 +1,4 @@
-import type { UploadFile } from '@/lib/photos/upload';
+import type { UploadFile } from '@/lib/photos/upload-walk';
 import { choiceRefusal, HEAD_BYTES, photoTypeOf } from '@/lib/photos/upload-check';
 
 export type Choice = { ok: true; file: UploadFile } | { ok: false; sentence: string };

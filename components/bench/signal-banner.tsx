@@ -14,17 +14,14 @@ export function SignalBanner({ draft: { posting }, isKeeping }: { draft: Draft; 
     <div role="status">
       {sentence && (
         <div className="bg-brass-wash">
-          <p className="mx-auto max-w-2xl px-4.5 py-3.5 font-medium">
-            {sentence}
+          <div className="mx-auto max-w-2xl px-4.5 py-3.5 font-medium">
+            <p>{sentence}</p>
             {isSignedOut && (
-              <>
-                {' '}
-                <Link href="/sign-in" className="inline-flex min-h-11 items-center font-semibold underline">
-                  Sign in
-                </Link>
-              </>
+              <Link href="/sign-in" className="-mb-2 inline-flex min-h-12 items-center font-semibold underline">
+                Sign in
+              </Link>
             )}
-          </p>
+          </div>
         </div>
       )}
     </div>

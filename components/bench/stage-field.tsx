@@ -18,7 +18,8 @@ const words = { done: ' (finished)', now: ' (now)', ahead: '' };
 /** Which stage the entry belongs to, and whether a stage ahead begins with it. */
 export function StageField({ stages, stageId, startStage, error, isLocked, dispatch }: StageFieldProps) {
   const id = useId();
-  const isAhead = stages.find((stage) => stage.id === stageId)?.state === 'ahead';
+  const index = stages.findIndex((stage) => stage.id === stageId);
+  const isAhead = stages[index]?.state === 'ahead';
   return (
     <div className="border-b border-line pb-1">
       <div className="flex items-center gap-4">
@@ -44,7 +45,7 @@ export function StageField({ stages, stageId, startStage, error, isLocked, dispa
       {isAhead && (
         <Checkbox
           label="Start this stage now"
-          hint="The stages before it end with this entry."
+          hint={index > 0 ? 'The stages before it end with this entry.' : undefined}
           checked={startStage}
           disabled={isLocked}
           onChange={({ target }) => dispatch({ type: 'start-chosen', startStage: target.checked })}

@@ -22,11 +22,13 @@ export type BenchPhotos = ReturnType<typeof usePhotos>;
 export function usePhotos({ orderNumber, first, draft, dispatch, keeper }: Parts) {
   const uploader = useUploads(orderNumber, first, dispatch);
   const [refusals, setRefusals] = useState<string[]>([]);
+  const [isReading, setIsReading] = useState(false);
   const count = draft.photos.length;
 
   async function choose(chosen: File[]): Promise<void> {
     const tooMany = roomRefusal(count, chosen.length);
     const sentences = tooMany ? [tooMany] : [];
+    setIsReading(true);
     for (const file of chosen.slice(0, MAX_PHOTOS_PER_ENTRY - count)) {
       const choice = await readChoice(file, crypto.randomUUID());
       if (!choice.ok) sentences.push(choice.sentence);
@@ -36,6 +38,7 @@ export function usePhotos({ orderNumber, first, draft, dispatch, keeper }: Parts
       uploader.add(choice.file);
     }
     setRefusals(sentences);
+    setIsReading(false);
   }
 
   function remove(uploadKey: string): void {
@@ -49,5 +52,12 @@ export function usePhotos({ orderNumber, first, draft, dispatch, keeper }: Parts
     await keeper.clear();
   }
 
-  return { list: draft.photos, refusals, choose, remove, discardAll, tryNow: uploader.tryNow, wake: uploader.wake };
+  /** The diary misses a photo that was there before, as after a day: each is looked for, and sent again if it is gone. */
+  function recheck(): void {
+    uploader.stop();
+    for (const photo of draft.photos) uploader.add(photo);
+  }
+
+  const { tryNow, wake } = uploader;
+  return { list: draft.photos, isReading, refusals, choose, remove, discardAll, recheck, tryNow, wake };
 }

@@ -12,6 +12,7 @@ type Parts = {
   dispatch: Dispatch<DraftEvent>;
   keeper: DraftKeeper;
   entryFrom: (draft: Draft, photos: EntryToPost['photos']) => EntryToPost;
+  onPhotosMissing: () => void;
 };
 
 /**
@@ -19,7 +20,7 @@ type Parts = {
  * answered. That a try has begun is written down before it leaves, so that a crash in between does not lose it.
  * @returns what tries at once
  */
-export function usePosting({ draft, dispatch, keeper, entryFrom }: Parts): () => void {
+export function usePosting({ draft, dispatch, keeper, entryFrom, onPhotosMissing }: Parts): () => void {
   const isUnderWay = useRef(false);
   const [nudges, nudge] = useReducer((count: number) => count + 1, 0);
   const { step } = draft.posting;
@@ -31,7 +32,9 @@ export function usePosting({ draft, dispatch, keeper, entryFrom }: Parts): () =>
     isUnderWay.current = true;
     dispatch({ type: 'send-began' });
     await keeper.keepNow({ ...draft, posting: { step: 'sending', wasSent: true } });
-    dispatch(await postEntry(entryFrom(draft, photos)));
+    const event = await postEntry(entryFrom(draft, photos));
+    dispatch(event);
+    if (event.type === 'send-refused' && event.problem.fields.photos) onPhotosMissing();
     isUnderWay.current = false;
   });
 

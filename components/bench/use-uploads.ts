@@ -2,9 +2,10 @@
 
 import { useEffect, useState, type Dispatch } from 'react';
 import type { DraftEvent } from './draft-state';
-import { createUploader, type Uploader, type UploadFile } from '@/lib/photos/upload';
+import { createUploader, type Uploader } from '@/lib/photos/upload';
 import { pause } from '@/lib/photos/upload-delay';
 import { shopTransport } from '@/lib/photos/upload-transport';
+import type { UploadFile } from '@/lib/photos/upload-walk';
 
 /**
  * Carries a draft's photos to the shop while its page is open. `first` are those the draft was opened with; later ones are added by hand.

@@ -21,7 +21,7 @@ export function BuildPeople({ staff, clients, viewerId }: BuildPeopleProps) {
         </ul>
       </PageSection>
       {clients.length > 0 && (
-        <PageSection title="Built for">
+        <PageSection title="The player’s side">
           <ul role="list" className="-mt-4">
             {clients.map((person) => (
               <PersonLine

@@ -1,6 +1,6 @@
 'use client';
 
-import { useActionState, useState, type ComponentProps } from 'react';
+import { useActionState, useRef, useState, type ComponentProps } from 'react';
 import { FormOutcome } from './form-outcome';
 import { HiddenFields, type HiddenValues } from './hidden-fields';
 import { Button } from '@/components/ui/button';
@@ -21,24 +21,26 @@ type ConfirmFormProps = {
   variant?: ComponentProps<typeof Button>['variant'];
 };
 
-/** A button that first says what it will do. Once done, the page shows the change, and reading goes on at its top. */
+/** A button that first says what it will do. Once done, it may be gone from the page, so reading goes on at its top. */
 export function ConfirmForm({ send, values, label, name, title, description, variant = 'quiet' }: ConfirmFormProps) {
   const [isOpen, setIsOpen] = useState(false);
+  const form = useRef<HTMLFormElement>(null);
   const [state, submit, isSending] = useActionState(async (...sent: Parameters<FormAction>) => {
     const next = await send(...sent);
     if (next.state === 'done') {
-      setIsOpen(false);
+      // Nothing behind an open dialog takes focus.
+      form.current?.closest('dialog')?.close();
       document.getElementById('main')?.focus();
     }
     return next;
   }, fresh);
   return (
     <>
-      <Button variant={variant} onClick={() => setIsOpen(true)} aria-label={name}>
+      <Button variant={variant} onClick={() => setIsOpen(true)} aria-label={name} className="whitespace-nowrap">
         {label}
       </Button>
       <Dialog isOpen={isOpen} onClose={() => setIsOpen(false)} title={title} description={description}>
-        <form action={submit} className="grid gap-4">
+        <form ref={form} action={submit} className="grid gap-4">
           <HiddenFields values={values} />
           <FormOutcome state={state} />
           <div className="flex flex-wrap justify-end gap-3">

@@ -54,11 +54,16 @@ const sentences: Record<AuditAction, (parts: Parts) => ReactNode> = {
         {who} put {whom} on {build}
       </>
     ),
-  cleared: ({ who, whom, build }) => (
-    <>
-      {who} cleared {whom} for the hold on {build}
-    </>
-  ),
+  cleared: ({ who, whom, build, isOwn }) =>
+    isOwn ? (
+      <>
+        {who} is cleared for the hold on {build}
+      </>
+    ) : (
+      <>
+        {who} cleared {whom} for the hold on {build}
+      </>
+    ),
   assignment_ended: ({ who, whom, build, isOwn }) =>
     isOwn ? (
       <>

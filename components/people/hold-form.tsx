@@ -24,7 +24,7 @@ export function HoldForm({ hold, orderNumber, range, isHeld, placeWords }: HoldF
     <form action={send} className="grid max-w-md gap-4">
       <HiddenFields values={{ orderNumber }} />
       <TextInput
-        label="Held until"
+        label={isHeld ? 'Hold it until another day' : 'Hold it until'}
         name="until"
         type="date"
         required

@@ -1,6 +1,7 @@
-import { and, desc, eq, gt, isNull, ne } from 'drizzle-orm';
+import { and, desc, eq, gt, isNull, ne, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
 import { db, write } from '../client';
+import { prepared } from '../prepared';
 import { sessions, users } from '../schema';
 import { hashToken } from '@/lib/auth/secrets';
 import { sessionLimits } from '@/lib/auth/session-limits';
@@ -11,9 +12,8 @@ const TOUCH_EVERY_MS = 5 * 60_000;
 
 export type SessionViewer = Viewer & { sessionId: string; email: string; timeZoneAskedAt: number | null };
 
-/** Whose session a cookie is, read afresh at every request; null when it is over, unknown, or its person is closed. */
-export async function findSessionViewer(token: string, nowMs: number): Promise<SessionViewer | null> {
-  const [row] = await db()
+const liveSession = prepared((on) =>
+  on
     .select({
       id: users.id,
       role: users.role,
@@ -29,13 +29,18 @@ export async function findSessionViewer(token: string, nowMs: number): Promise<S
     .innerJoin(users, eq(users.id, sessions.userId))
     .where(
       and(
-        eq(sessions.tokenHash, hashToken(token)),
-        gt(sessions.endsAt, nowMs),
-        gt(sessions.idleEndsAt, nowMs),
+        eq(sessions.tokenHash, sql.placeholder('tokenHash')),
+        gt(sessions.endsAt, sql.placeholder('nowMs')),
+        gt(sessions.idleEndsAt, sql.placeholder('nowMs')),
         isNull(users.disabledAt),
       ),
     )
-    .limit(1);
+    .prepare(),
+);
+
+/** Whose session a cookie is, read afresh at every request; null when it is over, unknown, or its person is closed. */
+export async function findSessionViewer(token: string, nowMs: number): Promise<SessionViewer | null> {
+  const row = await liveSession().get({ tokenHash: hashToken(token), nowMs });
   if (!row) return null;
   const { lastSeenAt, ...viewer } = row;
   if (nowMs - lastSeenAt > TOUCH_EVERY_MS) await touchSession(viewer, nowMs);

@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { mailJpegKey, settleReady, settleRefused, unscopedUploadedPhotos, variantKey } from '@/db/queries/photos';
+import { logFault } from '@/lib/log';
 import { processPhoto } from '@/lib/photos/process-photo';
 import { deleteObject, findObject, readObject, storeObject } from '@/lib/storage';
 
@@ -49,7 +50,9 @@ async function refuse(photo: Uploaded, message: string): Promise<PhotoOutcome> {
   return { state: 'refused', message };
 }
 
-/** Takes up what a restart cut off. */
+/** Takes up what a restart cut off. A photo that cannot be taken up yet holds up none of the others. */
 export async function developLeftovers(): Promise<void> {
-  for (const photo of await unscopedUploadedPhotos(20)) await developPhoto(photo);
+  for (const photo of await unscopedUploadedPhotos(20)) {
+    await developPhoto(photo).catch((error: unknown) => logFault(error, { photo: photo.id }));
+  }
 }

@@ -1,4 +1,4 @@
-import type { UploadTransport } from './upload';
+import type { UploadTransport } from './upload-walk';
 import { callShop, retryAfter, type Answer } from './upload-answer';
 import type { UploadLink } from './upload-steps';
 

@@ -150,9 +150,10 @@ describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ wh
     expect(queue).toBe(viewer.role === 'builder' ? '' : read);
   });
 
-  test('is told exactly these addresses', async () => {
+  test('is told exactly these addresses, and as a companion not even who else looks on', async () => {
     const rows = may.open ? await listClients(cast.people(who), cast.open.orderNumber) : [];
     const told = rows.filter(({ email }) => email !== null).map(({ standing }) => standing);
     expect([...new Set(told)].join(', ')).toBe(may.addresses ?? '');
+    expect(rows.length > 0).toBe(may.open && who !== 'a companion of both');
   });
 });

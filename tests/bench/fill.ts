@@ -3,7 +3,8 @@ import { sql } from 'drizzle-orm';
 import { Database } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
 
-const DAY_MS = 86_400_000;
+const HOUR_MS = 3_600_000;
+const DAY_MS = 24 * HOUR_MS;
 const STAFF = 12;
 export const ENTRIES_A_BUILD = 60;
 
@@ -70,12 +71,13 @@ const diaryStatements = (builds: number, nowMs: number) => [
       from entries e join n on i < 3 or e.rowid % 3 = 0`,
 ];
 
+/** Last seen an hour from now: no round pays for writing down that a session was used. */
 function sessionsStatement(builds: number, nowMs: number) {
   const hashOf = (token: string) => createHash('sha256').update(token).digest('hex');
   const owners = Array.from({ length: builds }, (_, i) => ({ id: `owner-${i}`, hash: hashOf(ownerToken(i)) }));
   const staff = Array.from({ length: STAFF }, (_, i) => ({ id: `staff-${i}`, hash: hashOf(staffToken(i)) }));
   return sql`insert into sessions (id, token_hash, user_id, last_seen_at, idle_ends_at, ends_at, created_at)
-    select ${newId}, value ->> 'hash', value ->> 'id', ${nowMs}, ${nowMs + DAY_MS}, ${nowMs + DAY_MS}, ${nowMs}
+    select ${newId}, value ->> 'hash', value ->> 'id', ${nowMs + HOUR_MS}, ${nowMs + DAY_MS}, ${nowMs + DAY_MS}, ${nowMs}
     from json_each(${JSON.stringify([...owners, ...staff])})`;
 }
 

@@ -51,6 +51,7 @@ async function readWorld() {
     companionId: await one('select id from users where email = ?', people.companion),
     someoneElse: await one(`select id from users where name = 'Leif Ivarsson'`),
     builderId: await one('select id from users where email = ?', people.unassignedBuilder),
+    failedMailId: await one(`select id from outbox where state = 'failed' limit 1`),
     assignmentId: await one(
       `select a.id from assignments a join builds b on b.id = a.build_id where b.order_number = 'Q-2430' and a.ended_at is null limit 1`,
     ),
@@ -133,7 +134,7 @@ function bodyOf(door: string): Record<string, unknown> {
     'action /access#assign': { userId: ids.builderId, orderNumbers: 'Q-2431' },
     'action /access#takeOff': { assignmentId: ids.assignmentId },
     'action /access/builds/[orderNumber]#stepIn': { orderNumber: 'Q-2420', reason: 'Looking into a complaint' },
-    'action /access/mail#retry': { mailId: 'no-mail' },
+    'action /access/mail#retry': { mailId: ids.failedMailId },
     'action /access/people/[userId]#change': { userId: ids.someoneElse, role: 'artist', department: '' },
     'action /access/people/[userId]#endSessions': { userId: ids.someoneElse },
     'action /access/people/[userId]#close': { userId: ids.someoneElse },
@@ -154,18 +155,18 @@ function bodyOf(door: string): Record<string, unknown> {
 
 /** A form's call as React sends it: the previous state and the form's fields. */
 function callAction(as: APIRequestContext, door: string, headers: Record<string, string> = sameOrigin) {
-  const multipart: Record<string, string> = {};
-  for (const [name, value] of Object.entries(bodyOf(door))) multipart[`1_${name}`] = String(value);
-  multipart['0'] = JSON.stringify([{ state: 'fresh' }, '$K1']);
+  const multipart = new FormData();
+  for (const [name, value] of Object.entries(bodyOf(door))) multipart.append(`_1_${name}`, String(value));
+  multipart.append('0', JSON.stringify([{ state: 'fresh' }, '$K1']));
   return as.post(pathOf(door), { headers: { ...headers, 'next-action': actionId(door) }, multipart, maxRedirects: 0 });
 }
 
 async function markOfAction(as: APIRequestContext, door: string): Promise<string> {
   const text = await (await callAction(as, door)).text();
-  if (text.includes('You are signed out.')) return '>';
-  if (text.includes('There is nothing here for you.')) return '-';
-  if (text.includes('does not allow that') || text.includes('on this build')) return 'x';
-  return '+';
+  const [, refusal] = /"state":"refused","message":"([^"]*)"/.exec(text) ?? [];
+  if (refusal?.startsWith('You are signed out.')) return '>';
+  if (refusal === 'There is nothing here for you.') return '-';
+  return refusal === 'Your place on this build does not allow that.' ? 'x' : '+';
 }
 
 async function markOf(as: APIRequestContext, door: string): Promise<string> {
@@ -221,6 +222,7 @@ test('nothing that changes anything can be sent from another site, nor by GET', 
     const [method = ''] = door.split(' ');
     const answer = await builder.fetch(pathOf(door), { method, data: bodyOf(door), headers: foreign });
     expect(answer.status(), door).toBe(403);
+    if (allDoors.includes(door.replace(method, 'GET'))) continue;
     const read = await builder.get(pathOf(door), { maxRedirects: 0 });
     expect([404, 405], `GET ${door}`).toContain(read.status());
   }
@@ -236,6 +238,9 @@ test('a build of others and one that does not exist answer with the same bytes',
     [ORDER, 'Q-9999'].map((number) => stranger.get(`/api/builds/${number}/diary`)),
   );
   expect(await theirs?.text()).toBe(await nobodys?.text());
-  const withoutDate = ({ date: _date, ...headers }: Record<string, string>) => headers;
-  expect(withoutDate(theirs?.headers() ?? {})).toEqual(withoutDate(nobodys?.headers() ?? {}));
+  const steady = ({ date: _date, ...headers }: Record<string, string>) => ({
+    ...headers,
+    'content-security-policy': headers['content-security-policy']?.replace(/nonce-[^']+/g, 'nonce'),
+  });
+  expect(steady(theirs?.headers() ?? {})).toEqual(steady(nobodys?.headers() ?? {}));
 });

@@ -8,7 +8,7 @@ export default defineConfig({
   workers: 1,
   timeout: 90_000,
   expect: { timeout: 15_000 },
-  reporter: [['list'], ['json']],
+  reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? [['list'], ['json']] : 'list',
   use: {
     baseURL: world.appUrl,
     launchOptions: { executablePath: process.env.CHROMIUM_PATH ?? '/usr/bin/chromium', args: ['--no-sandbox'] },
@@ -20,7 +20,8 @@ export default defineConfig({
     cwd: '../..',
     url: `${world.appUrl}/api/health`,
     timeout: 240_000,
-    reuseExistingServer: false,
+    // `node tests/browser/serve.mjs` in another terminal saves the start while writing a test.
+    reuseExistingServer: process.env.CI === undefined,
     gracefulShutdown: { signal: 'SIGTERM', timeout: 10_000 },
     stdout: 'pipe',
   },

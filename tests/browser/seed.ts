@@ -1,6 +1,6 @@
 import { database, db, write } from '@/db/client';
 import { seedDemoWorld } from '@/db/demo/seed';
-import { sessions, users } from '@/db/schema';
+import { outbox, sessions, users } from '@/db/schema';
 import { hashToken } from '@/lib/auth/secrets';
 import { tokenFor } from './tokens';
 
@@ -16,6 +16,14 @@ await write(async (tx) => {
   }
   const [somebody] = people;
   if (!somebody) throw new Error('the demo world is empty');
+  const mail = {
+    kind: 'invitation',
+    userId: somebody.id,
+    about: {},
+    dedupeKey: 'given-up',
+    nextAttemptAt: nowMs,
+  } as const;
+  await tx.insert(outbox).values({ ...mail, state: 'failed', lastProblem: 'given up: the address was refused' });
   // One whose time is over: its cookie must open nothing.
   const over = { lastSeenAt: nowMs - 9e8, idleEndsAt: nowMs - 1000, endsAt: nowMs - 1000 };
   await tx.insert(sessions).values({ userId: somebody.id, tokenHash: hashToken(tokenFor('ended')), ...over });

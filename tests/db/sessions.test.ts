@@ -18,7 +18,7 @@ import {
   type SessionViewer,
 } from '@/db/queries/sessions';
 import { purgeExpiredSignIns, startSession } from '@/db/queries/sign-in';
-import { assignments, sessions } from '@/db/schema';
+import { assignments, sessions, users } from '@/db/schema';
 import { newToken } from '@/lib/auth/secrets';
 import { OutOfReach } from '@/lib/errors';
 import { openTestDatabase } from '../support/database';
@@ -66,6 +66,13 @@ describe('a session', () => {
     for (const token of ['', newToken(), row?.tokenHash ?? '', row?.id ?? '']) {
       expect(await findSessionViewer(token, NOW_MS)).toBeNull();
     }
+  });
+
+  test('is nobody’s from the moment its account is closed, by whatever way', async () => {
+    const person = await makePerson('buyer');
+    const token = await makeSession(person.id, NOW_MS);
+    await db().update(users).set({ disabledAt: NOW_MS }).where(eq(users.id, person.id));
+    expect(await findSessionViewer(token, NOW_MS)).toBeNull();
   });
 
   test('being read writes at most once in five minutes', async () => {

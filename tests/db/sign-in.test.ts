@@ -200,7 +200,7 @@ describe('asking', () => {
   });
 });
 
-test('the file holds no token, no code and no address of a limit in clear once the mail has gone', async () => {
+test('the file holds no token in clear once the mail has gone, and no address in its limits', async () => {
   const person = await makePerson('buyer');
   const ask = await askAs(person);
   const result = await open(ask);

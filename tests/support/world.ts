@@ -25,7 +25,7 @@ const departments = [
   { key: 'finish', name: 'Finish', position: 3 },
 ];
 
-export const topicRows = [
+const topicRows = [
   { id: 'neck-work', name: 'The neck', position: 1, answeredBy: 'department', department: 'neck', repsOnly: false },
   { id: 'shipping', name: 'Shipping', position: 2, answeredBy: 'rep', department: null, repsOnly: false },
   { id: 'money', name: 'Money', position: 3, answeredBy: 'rep', department: null, repsOnly: true },

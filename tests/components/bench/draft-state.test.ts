@@ -1,17 +1,11 @@
 import { describe, expect, test } from 'vitest';
-import {
-  draftReducer,
-  problemOf,
-  readyPhotos,
-  type Draft,
-  type DraftEvent,
-  type Posting,
-} from '@/components/bench/draft-state';
+import { draftReducer, problemOf, readyPhotos, type Draft, type DraftEvent } from '@/components/bench/draft-state';
+import type { Posting } from '@/components/bench/posting-state';
 import { blankDraft, fromKept, toKept } from '@/components/bench/kept-draft';
 import { eventOf, NO_SIGNAL } from '@/components/bench/post-entry';
 import { editStateOf } from '@/components/bench/save-edit';
 import { stageOf } from '@/components/bench/stage-choice';
-import type { UploadFile } from '@/lib/photos/upload';
+import type { UploadFile } from '@/lib/photos/upload-walk';
 import { plainNote } from '@/lib/rich-text/plain-text';
 
 const file = (uploadKey: string): UploadFile => ({
@@ -67,7 +61,7 @@ describe('asking to post', () => {
     );
     expect(draft.posting).toEqual({
       step: 'writing',
-      problem: { fields: { note: undefined, stageId: 'Choose one.' } },
+      problem: { fields: { note: undefined, stageId: 'Choose one.' }, isTouched: true },
     });
   });
 

@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
 import { GET, POST } from '@/app/api/unsubscribe/[token]/route';
-import { db, write } from '@/db/client';
+import { db } from '@/db/client';
 import { editEntry, postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
 import { claimDueReader, saveMailSettings, unsubscribe, writeDigest } from '@/db/queries/mail-settings';
 import { closePerson, holdBuild, removeCompanion } from '@/db/queries/people';
@@ -131,6 +131,21 @@ describe('a digest', () => {
     expect(await writeDigest(due, [id], 'mine', clock.nowMs)).toBe(false);
     await runJobs();
     expect(await mailsTo(diary.owner)).toHaveLength(1);
+  });
+
+  test('claimed long ago by the same worker does not set the cursor back', async () => {
+    const diary = await openBuild();
+    const { id } = await post(diary, 'The top is joined.');
+    clock.nowMs = NEXT_8;
+    const old = await claimUntil(diary.owner);
+    await runJobs(NEXT_8 + 61_000);
+    await post(diary, 'The neck is set.');
+    clock.nowMs = NEXT_8 + DAY_MS;
+    const due = await claimUntil(diary.owner);
+    expect(await writeDigest(old, [id], 'mine', clock.nowMs)).toBe(false);
+    expect((await settingsOf(diary.owner))?.toldSeq).toBe(due.toldSeq);
+    await runJobs(clock.nowMs + 61_000);
+    expect((await mailsTo(diary.owner)).map(({ text }) => text.includes('The top is joined.'))).toEqual([true, false]);
   });
 
   test('moves the cursor and writes the mail together or not at all', async () => {

@@ -1,12 +1,13 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
-import { claimMail, freezeMail, listMailProblems, queueMail } from '@/db/queries/outbox';
+import { claimMail, freezeMail, listMailProblems, queueMail, retryMail } from '@/db/queries/outbox';
 import { askForLink } from '@/db/queries/sign-in';
 import { askQuestion, writeLetter } from '@/db/queries/questions';
 import { outbox, shop } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { newCode, newToken } from '@/lib/auth/secrets';
+import { OutOfReach } from '@/lib/errors';
 import { findMailReader } from '@/db/queries/mail-content';
 import { composeMail } from '@/lib/jobs/compose-mail';
 import { sendDueMail } from '@/lib/jobs/outbox';
@@ -160,6 +161,42 @@ describe('a provider that', () => {
     expect(await send()).toBe(0);
     const { troubled } = await listMailProblems(await makePerson('admin'));
     expect(troubled.map(({ state }) => state)).toEqual(['parked']);
+  });
+});
+
+describe('an admin who tries a failed mail again', () => {
+  test('sends the same bytes under the same key; what had arrived after all does not come twice', async () => {
+    const [admin, person] = [await makePerson('admin'), await invite()];
+    await failMail({ status: 500, times: 8, afterAccepting: true });
+    await sendUntilOver(person);
+    const failed = await rowOf(person);
+    expect(failed.state).toBe('failed');
+    await retryMail(admin, failed.id, clock.nowMs);
+    await send();
+    expect(await rowOf(person)).toMatchObject({ state: 'sent', frozen: failed.frozen });
+    expect(await mailsTo(person)).toHaveLength(1);
+  });
+
+  test('more than a day after its first try has it parked, not perhaps delivered twice', async () => {
+    const [admin, person] = [await makePerson('admin'), await invite()];
+    await failMail({ status: 500, times: 8, afterAccepting: true });
+    await sendUntilOver(person);
+    clock.nowMs += DAY_MS;
+    await retryMail(admin, (await rowOf(person)).id, clock.nowMs);
+    await send();
+    expect(await rowOf(person)).toMatchObject({ state: 'parked' });
+    expect(await mailsTo(person)).toHaveLength(1);
+    await expect(retryMail(admin, (await rowOf(person)).id, clock.nowMs)).rejects.toMatchObject({ code: 'conflict' });
+  });
+
+  test('cannot do so with a mail that is on its way or sent, and nobody else can at all', async () => {
+    const [admin, person] = [await makePerson('admin'), await invite()];
+    const { id } = await rowOf(person);
+    await expect(retryMail(admin, id, clock.nowMs)).rejects.toMatchObject({ code: 'conflict' });
+    await send();
+    await expect(retryMail(admin, id, clock.nowMs)).rejects.toMatchObject({ code: 'conflict' });
+    await expect(retryMail(await makePerson('rep'), id, clock.nowMs)).rejects.toThrow(OutOfReach);
+    expect(await mailsTo(person)).toHaveLength(1);
   });
 });
 

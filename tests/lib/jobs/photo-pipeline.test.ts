@@ -183,7 +183,7 @@ describe('while the store is away', () => {
       await markUploaded(bench.builder, asked.id);
     }
     await failStore({ status: 503, times: 3 });
-    await developLeftovers().catch(() => undefined);
+    await developLeftovers();
     await behave();
     expect([(await rowOf(first.id))?.state, (await rowOf(second.id))?.state]).toContain('ready');
   });

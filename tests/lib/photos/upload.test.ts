@@ -1,9 +1,10 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, test } from 'vitest';
-import { createUploader, type UploadFile, type UploadTransport } from '@/lib/photos/upload';
+import { createUploader } from '@/lib/photos/upload';
 import type { Answer } from '@/lib/photos/upload-answer';
 import type { UploadState } from '@/lib/photos/upload-state';
 import type { Checked, Grant, UploadLink } from '@/lib/photos/upload-steps';
+import type { UploadFile, UploadTransport } from '@/lib/photos/upload-walk';
 
 const status = (code: number, over: object = {}): Answer<never> => ({ kind: 'status', status: code, ...over });
 const noSignal: Answer<never> = { kind: 'no-signal' };
@@ -218,6 +219,16 @@ describe('a passing trouble', () => {
     uploader.add(file('a'));
     await reaches('a', 'ready');
     expect(pausesMs).toEqual([90_000]);
+  });
+
+  test('that comes after some way was made begins with a short wait again', async () => {
+    const shop = makeShop();
+    shop.odd.ask.push(noSignal, noSignal);
+    shop.odd.send.push(noSignal, noSignal);
+    const { uploader, reaches, pausesMs } = makeBench(shop);
+    uploader.add(file('a'));
+    await reaches('a', 'ready');
+    expect(pausesMs).toEqual([500, 1000, 500, 1000]);
   });
 
   test('signed out: the photo waits, and goes on after signing in', async () => {

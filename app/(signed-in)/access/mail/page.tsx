@@ -1,7 +1,7 @@
 import type { Metadata } from 'next';
 import { retry } from './actions';
 import { MailCounts } from '@/components/access/mail-counts';
-import { MailTable } from '@/components/access/mail-table';
+import { MailList } from '@/components/access/mail-list';
 import { PageFrame } from '@/components/people/page-frame';
 import { EmptyState } from '@/components/ui/empty-state';
 import { listMailProblems } from '@/db/queries/outbox';
@@ -20,7 +20,7 @@ export default async function MailPage() {
     >
       <MailCounts counts={counts} />
       {troubled.length > 0 ? (
-        <MailTable mails={troubled} retry={retry} zone={viewer.timeZone} nowMs={requestMs()} />
+        <MailList mails={troubled} retry={retry} zone={viewer.timeZone} nowMs={requestMs()} />
       ) : (
         <EmptyState title="No mail is in trouble">Whatever fails, or waits for another try, is listed here.</EmptyState>
       )}

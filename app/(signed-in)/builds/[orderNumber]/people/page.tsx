@@ -29,12 +29,13 @@ export default async function BuildPeoplePage({ params }: PageProps<'/builds/[or
   const nowMs = requestMs();
   const heldUntilAt = build.heldUntilAt !== null && build.heldUntilAt > nowMs ? build.heldUntilAt : null;
   const when = { zone: viewer.timeZone, nowMs };
+  const companions = clients.filter(({ standing }) => standing === 'companion');
   const tools = (
     <>
       {may('companion.manage') && (
         <CompanionTools
           orderNumber={orderNumber}
-          companions={clients.filter(({ standing }) => standing === 'companion')}
+          companions={companions}
           heldUntilAt={heldUntilAt}
           letLookOn={letLookOn}
           stopLookingOn={stopLookingOn}
@@ -59,7 +60,11 @@ export default async function BuildPeoplePage({ params }: PageProps<'/builds/[or
       title="Who is on this build"
       tools={may('companion.manage') || may('build.hold') ? tools : undefined}
     >
-      <BuildPeople staff={staff} clients={clients} viewerId={viewer.id} />
+      <BuildPeople
+        staff={staff}
+        clients={may('companion.manage') ? clients.filter((person) => !companions.includes(person)) : clients}
+        viewerId={viewer.id}
+      />
       {events.length > 0 && (
         <PageSection title="Who was let in, and when">
           <EventList events={events} {...when} />

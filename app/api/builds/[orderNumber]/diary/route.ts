@@ -1,4 +1,4 @@
-import { diaryPageJson, diaryState, parseCursor } from '@/db/queries/diary';
+import { diaryAnswer, parseCursor } from '@/db/queries/diary';
 import { readRoute } from '@/lib/route';
 
 const headers = {
@@ -9,10 +9,9 @@ const headers = {
 
 /** One page of a diary; 304 while nothing has changed for this viewer. */
 export const GET = readRoute(async ({ viewer, params, request }) => {
-  const { buildId, etag } = await diaryState(viewer, params.orderNumber ?? '');
-  if (request.headers.get('if-none-match') === etag)
-    return new Response(null, { status: 304, headers: { ETag: etag } });
   const before = parseCursor(new URL(request.url).searchParams.get('before'));
-  const page = await diaryPageJson(viewer, buildId, before);
+  const known = request.headers.get('if-none-match');
+  const { etag, page } = await diaryAnswer(viewer, params.orderNumber ?? '', before, known);
+  if (page === null) return new Response(null, { status: 304, headers: { ETag: etag } });
   return new Response(page, { headers: { ...headers, ETag: etag } });
 });

@@ -1,0 +1,55 @@
+import { writeFileSync } from 'node:fs';
+import { stopAll } from '../../db/demo/steps.mjs';
+import { diary } from './diary';
+import { diaryJs } from './diary-js';
+import { photoMemory } from './photo-memory';
+import { photoPipeline } from './photos';
+import type { Bench, Row } from './row';
+
+const FILE = '.data/bench.json';
+
+/** In this order; another bench is one more file and one more name here. */
+const benches: Bench[] = [diaryJs, photoPipeline, photoMemory, diary];
+
+const inShort = (value: number) => (value >= 100 ? value.toFixed(0) : value.toPrecision(3));
+
+function asTable(rows: Row[]) {
+  return rows.map(({ name, value, floor, ratio, target, unit, isMet }) => ({
+    name,
+    value: inShort(value),
+    floor: inShort(floor),
+    unit,
+    ratio: inShort(ratio),
+    target,
+    verdict: isMet ? 'met' : 'MISSED',
+  }));
+}
+
+async function main(wanted: string[]): Promise<void> {
+  const rows: Row[] = [];
+  for (const { name, run } of benches.filter((bench) => wanted.length === 0 || wanted.includes(bench.name))) {
+    console.log(`Measuring ${name} …`);
+    rows.push(...(await run()));
+  }
+  console.table(asTable(rows));
+  if (wanted.length === 0) {
+    const kept = rows.map(({ name, value, floor, ratio, target, unit }) => ({
+      name,
+      value,
+      floor,
+      ratio,
+      target,
+      unit,
+    }));
+    writeFileSync(FILE, `${JSON.stringify(kept, null, 2)}\n`);
+  }
+  const missed = rows.filter((row) => !row.isMet).map((row) => row.name);
+  if (rows.length === 0 || missed.length > 0) process.exitCode = 1;
+  if (missed.length > 0) console.log(`Missed: ${missed.join(', ')}`);
+}
+
+process.once('SIGTERM', () => {
+  stopAll();
+  process.exit(1);
+});
+await main(process.argv.slice(2)).finally(stopAll);
