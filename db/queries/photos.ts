@@ -89,6 +89,12 @@ export function markUploaded(viewer: Viewer, photoId: string): Promise<boolean> 
   });
 }
 
+/** uploaded -> granted: nothing lies under the key, so the sender may ask for a link again. */
+export function settleMissing(photoId: string): Promise<unknown> {
+  const notThere = and(eq(photos.id, photoId), eq(photos.state, 'uploaded'));
+  return write((tx) => tx.update(photos).set({ state: 'granted' }).where(notThere));
+}
+
 /** Uploads whose check was cut off by a restart. No viewer: the pipeline's own list. */
 export function unscopedUploadedPhotos(limit: number) {
   return db()

@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import { mailJpegKey, settleReady, settleRefused, unscopedUploadedPhotos, variantKey } from '@/db/queries/photos';
+import { mailJpegKey, settleMissing, settleReady, settleRefused, unscopedUploadedPhotos, variantKey } from '@/db/queries/photos';
 import { logFault } from '@/lib/log';
 import { processPhoto } from '@/lib/photos/process-photo';
 import { deleteObject, findObject, readObject, storeObject } from '@/lib/storage';
@@ -26,7 +26,10 @@ export function developPhoto(photo: Uploaded): Promise<PhotoOutcome> {
 
 async function develop(photo: Uploaded): Promise<PhotoOutcome> {
   const stored = await findObject(photo.originalKey);
-  if (!stored) return { state: 'missing' };
+  if (!stored) {
+    await settleMissing(photo.id);
+    return { state: 'missing' };
+  }
   if (stored.sizeBytes !== photo.sizeBytes || stored.sha256 !== photo.sha256) return refuse(photo, NOT_AS_PROMISED);
   const bytes = await readObject(photo.originalKey);
   const made = await processPhoto({ ...photo, bytes, sha256Hex: Buffer.from(photo.sha256, 'base64').toString('hex') });

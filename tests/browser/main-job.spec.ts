@@ -36,7 +36,7 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
   await player.goto(`/builds/${ORDER}`);
   await expect(player.getByRole('heading', { level: 1, name: 'Nightjar baritone' })).toBeVisible();
   await player.goto('/me');
-  await player.getByLabel(/How often/).selectOption('at_once');
+  await player.getByRole('radio', { name: /^At once/ }).check();
   await player.getByRole('button', { name: /^Save/ }).click();
   await expect(player.getByText('A mail at once')).toBeVisible();
   await player.goto(`/builds/${ORDER}`);

@@ -95,9 +95,10 @@ describe('a session', () => {
     expect(await findSessionViewer(next.token, NOW_MS)).not.toBeNull();
   });
 
-  test('is listed to its own person only, without what could be used as a token', async () => {
+  test('is listed to its own person only, while it lasts, without what could be used as a token', async () => {
     const [person, other] = [await makePerson('buyer'), await makePerson('buyer')];
     await makeSession(person.id, NOW_MS);
+    await makeSession(person.id, NOW_MS - 15 * DAY_MS);
     await makeSession(other.id, NOW_MS);
     const listed = await listOwnSessions(person, NOW_MS);
     expect(listed).toHaveLength(1);
