@@ -13,5 +13,6 @@ export async function migrateDatabase({ client, db }: Database): Promise<void> {
   const check = await db.get<{ quick_check: string }>(sql`PRAGMA quick_check(1)`);
   if (check.quick_check !== 'ok') throw new Error(`The database is damaged: ${check.quick_check}. Restore a backup.`);
   const orphans = await db.all(sql`select 1 as found from pragma_foreign_key_check limit 1`);
-  if (orphans.length > 0) throw new Error('The database has rows that point nowhere (PRAGMA foreign_key_check). Restore a backup.');
+  if (orphans.length > 0)
+    throw new Error('The database has rows that point nowhere (PRAGMA foreign_key_check). Restore a backup.');
 }

@@ -32,11 +32,11 @@ export function BuildNav({ links, instrument, isAlone }: BuildNavProps) {
           </li>
         )}
         {links.map(({ href, label }) => (
-          <li key={href}>
+          <li key={href} className="md:first:-ml-3">
             <Link
               href={href}
               aria-current={href === current ? 'page' : undefined}
-              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 text-soft aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink md:first:-ml-3"
+              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 text-soft aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink"
             >
               {label}
             </Link>

@@ -130,7 +130,8 @@ export function retryMail(viewer: Viewer, mailId: string, nowMs: number): Promis
     if (!mail) throw new OutOfReach();
     if (mail.state === 'parked')
       throw new Denied('conflict', 'This mail may have arrived. Sent again, it could come twice, so it stays here.');
-    if (mail.state !== 'failed') throw new Denied('conflict', 'Only a mail that failed is sent again; this one did not.');
+    if (mail.state !== 'failed')
+      throw new Denied('conflict', 'Only a mail that failed is sent again; this one did not.');
     if (mail.kind === 'sign_in')
       throw new Denied('conflict', 'Its link is dead by now. Its reader asks for a new one at the sign-in page.');
     const firstAttemptAt = sql`case when ${outbox.lastProblem} like 'given up:%' then ${outbox.firstAttemptAt} end`;

@@ -1,5 +1,12 @@
 import { randomBytes } from 'node:crypto';
-import { mailJpegKey, settleMissing, settleReady, settleRefused, unscopedUploadedPhotos, variantKey } from '@/db/queries/photos';
+import {
+  mailJpegKey,
+  settleMissing,
+  settleReady,
+  settleRefused,
+  unscopedUploadedPhotos,
+  variantKey,
+} from '@/db/queries/photos';
 import { logFault } from '@/lib/log';
 import { processPhoto } from '@/lib/photos/process-photo';
 import { deleteObject, findObject, readObject, storeObject } from '@/lib/storage';

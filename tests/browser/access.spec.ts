@@ -60,7 +60,12 @@ async function readWorld() {
   return found;
 }
 
-type Ids = Awaited<ReturnType<typeof readWorld>> & { questionId: string; ownEntryId: string; otherEntryId: string; grantedPhotoId: string };
+type Ids = Awaited<ReturnType<typeof readWorld>> & {
+  questionId: string;
+  ownEntryId: string;
+  otherEntryId: string;
+  grantedPhotoId: string;
+};
 
 let ids: Ids;
 let count = 0;

@@ -12,6 +12,7 @@ export const people = {
   unassignedBuilder: 'mateus.falcao@quillhaven.example',
   rep: 'lucia.tamberlan@quillhaven.example',
   otherRep: 'oskar.penhallow@quillhaven.example',
+  hostileBuyer: 'dara.farrow@clients.example',
   admin: 'nadia.brandvold@quillhaven.example',
 } as const;
 
