@@ -161,9 +161,12 @@ export function editEntry(
 ): Promise<{ revision: number }> {
   return write(async (tx) => {
     const entry = await requireOwnEntry(tx, viewer, entryId);
+    // What a rep released were other words: these wait for a release of their own.
+    const waits = entry.audience === 'buyer' && (await mustWait(tx, viewer, entry.buildId));
     const [saved] = await tx
       .update(entries)
       .set({
+        state: waits ? 'held' : entry.state,
         body: JSON.stringify(edit.note.doc),
         bodyText: edit.note.text,
         editedAt: nowMs,

@@ -4,6 +4,7 @@ import { db } from '../client';
 import { buildIsVisible, entryIsVisible, isOpen, photoIsVisible, questionIsVisible } from '../scope';
 import { builds, buildStages, entries, letters, photos, questions, shop, signInLinks, topics, users } from '../schema';
 import { sql } from 'drizzle-orm';
+import { MAX_ENTRIES_TOLD } from './mail-settings';
 import type { Viewer } from '@/lib/viewer';
 
 /** The reader of a mail with what sending needs; null when the account is closed. */
@@ -49,7 +50,7 @@ export function listDigestEntries(reader: Viewer, entryIds: string[]) {
     .innerJoin(users, eq(users.id, entries.authorId))
     .where(and(inArray(entries.id, entryIds), buildIsVisible(reader), entryIsVisible(reader)))
     .orderBy(desc(entries.datedAt), desc(entries.id))
-    .limit(60);
+    .limit(MAX_ENTRIES_TOLD);
 }
 
 /** The first photo of each of these entries that the reader may see. */

@@ -24,7 +24,8 @@ export async function findMailSettings(viewer: Viewer) {
   return row ?? { ...defaults, nextDigestAt: null };
 }
 
-const lastSeq = sql<number>`(select coalesce(max(${diaryEvents.seq}), 0) from ${diaryEvents})`;
+/** The newest event there is; what came before a reader is old news to them. */
+export const lastSeq = sql<number>`(select coalesce(max(${diaryEvents.seq}), 0) from ${diaryEvents})`;
 
 /**
  * Saves when the viewer wants mail, and where they are. What happened before the first wish, or while they wanted none,
@@ -104,7 +105,7 @@ export function claimDueReader(owner: string, nowMs: number, leaseMs: number): P
   });
 }
 
-const MAX_ENTRIES_TOLD = 500;
+export const MAX_ENTRIES_TOLD = 500;
 
 /** The entries that this reader has not been told of yet and may read now, oldest first, at most 500. */
 export function listUntold({ viewer, toldSeq, upToSeq }: DueReader) {

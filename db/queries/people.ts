@@ -1,5 +1,6 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
+import { lastSeq } from './mail-settings';
 import { queueMail } from './outbox';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -108,7 +109,8 @@ async function addPerson(
   await tx
     .insert(users)
     .values({ id: userId, name, email, role, department, invitedById: viewer.id, createdAt: nowMs });
-  if (isClientRole(role)) await tx.insert(mailSettings).values({ userId, cadence: 'weekly', nextDigestAt: nowMs });
+  if (isClientRole(role))
+    await tx.insert(mailSettings).values({ userId, cadence: 'weekly', nextDigestAt: nowMs, toldSeq: lastSeq });
   await recordEvent(tx, { actorId: viewer.id, action: 'invited', subjectId: userId }, nowMs);
   const about = { inviterId: viewer.id };
   await queueMail(tx, { kind: 'invitation', userId, about, dedupeKey: `invitation/${userId}` }, nowMs);

@@ -111,6 +111,17 @@ describe('where a rep releases', () => {
     expect(await readBy(bench.owner, bench)).toMatchObject([{ datedAt: NOW_MS + 1 }]);
   });
 
+  test('a builder’s edit of what was released waits for a release of its own; a rep’s does not', async () => {
+    const bench = await openBench(true);
+    const { id } = await postEntry(bench.builder, entryFor(bench.build), NOW_MS);
+    await releaseEntry(bench.rep, id, NOW_MS);
+    await editEntry(bench.builder, id, { revision: 1, note: noteOf('Other words.') }, NOW_MS);
+    expect(await readBy(bench.owner, bench)).toEqual([]);
+    await releaseEntry(bench.rep, id, NOW_MS);
+    await editEntry(bench.rep, id, { revision: 2, note: noteOf('Mended.') }, NOW_MS);
+    expect(await readBy(bench.owner, bench)).toHaveLength(1);
+  });
+
   test('a rep’s own entry goes straight to the owner', async () => {
     const bench = await openBench(true);
     expect(await postEntry(bench.rep, entryFor(bench.build), NOW_MS)).toMatchObject({ state: 'published' });
