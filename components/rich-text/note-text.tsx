@@ -16,7 +16,10 @@ export function NoteText({ doc, appUrlHost, className }: { doc: unknown; appUrlH
   if (!note) return <p className={clsx('font-sans text-soft', className)}>{NOTE_PLACEHOLDER}</p>;
   return (
     <div
-      className={clsx('max-w-[62ch] space-y-3 font-read text-[1.125rem] leading-[1.6] text-pretty wrap-anywhere', className)}
+      className={clsx(
+        'max-w-[62ch] space-y-3 font-read text-[1.125rem] leading-[1.6] text-pretty wrap-anywhere',
+        className,
+      )}
       dir="auto"
     >
       <Blocks blocks={note.content} appUrlHost={appUrlHost} />

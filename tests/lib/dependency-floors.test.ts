@@ -12,9 +12,8 @@ const floors: Record<string, string> = {
   linkifyjs: '4.3.2',
 };
 
-const lock: { packages: Record<string, { version?: string; resolved?: string; hasInstallScript?: boolean }> } = JSON.parse(
-  readFileSync('package-lock.json', 'utf8'),
-);
+const lock: { packages: Record<string, { version?: string; resolved?: string; hasInstallScript?: boolean }> } =
+  JSON.parse(readFileSync('package-lock.json', 'utf8'));
 const manifest: { dependencies: Record<string, string>; devDependencies: Record<string, string> } = JSON.parse(
   readFileSync('package.json', 'utf8'),
 );
