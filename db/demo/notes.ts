@@ -92,4 +92,41 @@ export const buyerQuestions = [
     text: 'When is the second instalment due, and may I pay it in two parts?',
     answer: 'It is due when the neck is fretted. Two parts are fine; I have put it on your order.',
   },
+  {
+    topic: 'finish',
+    subject: 'Gloss on the back of the neck',
+    text: 'Is it too late to leave the back of the neck without gloss? My hand sticks to it.',
+    answer: null,
+  },
+  {
+    topic: 'spec',
+    subject: 'Where does the jack go?',
+    text: 'On the drawing the jack sits at the end pin. Could it move to the edge?',
+    answer: 'Not any more, the hole is in. The angled plug that I put in the case keeps the cable out of your way.',
+  },
+  {
+    topic: 'setup',
+    subject: 'Action for slide',
+    text: 'I play about a third of the time with a slide. How high can the strings be before it suffers for the rest?',
+    answer:
+      'I would stay under two millimetres at the twelfth and cut the nut a touch higher. Say stop if that sounds too much.',
+  },
+  {
+    topic: 'wood',
+    subject: 'What is the dark line in the board?',
+    text: 'In the last photo there is a dark line near the fifth fret. Is that a crack?',
+    answer: 'It is a mineral streak, hard as the rest. I tapped along it and pressed a fret right through it.',
+  },
+  {
+    topic: 'finish',
+    subject: 'A photograph in daylight',
+    text: 'Could somebody take it to the window for one picture?',
+    answer: null,
+  },
+  {
+    topic: 'schedule',
+    subject: 'May I come and see it?',
+    text: 'I pass by in two weeks. May I look in for ten minutes?',
+    answer: 'Gladly. Call from the gate, and somebody will bring you to the bench it is on.',
+  },
 ] as const;

@@ -77,7 +77,8 @@ export const accessTable: Record<string, string> = {
   'action /builds/[orderNumber]#release': '>x--xx-+-->',
   'action /builds/[orderNumber]/people#letLookOn': '>+--xx-x-->',
   'action /builds/[orderNumber]/people#stopLookingOn': '>+--xx-x-->',
-  'action /builds/[orderNumber]/people#hold': '>x--xx-+-->',
+  // Knocked on last, when the owner has taken the companion off.
+  'action /builds/[orderNumber]/people#hold': '>x---x-+-->',
   'action /builds/[orderNumber]/people#openToView': '>x--xx-+-->',
   'action /me#saveMail': signedIn,
   'action /me#saveZone': signedIn,
