@@ -113,10 +113,11 @@ test.beforeAll(async () => {
   ids.questionId = (await post(owner, '/api/questions', question())).id ?? '';
 });
 
-/** Leaves the build open to view for the tests after these. */
+/** Leaves the build as the tests after these expect it: open to view, its companion looking on. */
 test.afterAll(async () => {
-  const rep = await openAs(people.rep);
-  await callAction(rep, 'action /builds/[orderNumber]/people#openToView');
+  await callAction(await openAs(people.rep), 'action /builds/[orderNumber]/people#openToView');
+  const companion = { orderNumber: ORDER, name: 'Felix Oyelaran', email: people.companion };
+  await callAction(await openAs(people.buyer), 'action /builds/[orderNumber]/people#letLookOn', sameOrigin, companion);
 });
 
 function pathOf(door: string): string {
@@ -169,9 +170,14 @@ function bodyOf(door: string): Record<string, unknown> {
 }
 
 /** A form's call as React sends it: the previous state and the form's fields. */
-function callAction(as: APIRequestContext, door: string, headers: Record<string, string> = sameOrigin) {
+function callAction(
+  as: APIRequestContext,
+  door: string,
+  headers: Record<string, string> = sameOrigin,
+  body = bodyOf(door),
+) {
   const multipart = new FormData();
-  for (const [name, value] of Object.entries(bodyOf(door))) multipart.append(`_1_${name}`, String(value));
+  for (const [name, value] of Object.entries(body)) multipart.append(`_1_${name}`, String(value));
   multipart.append('0', JSON.stringify([{ state: 'fresh' }, '$K1']));
   return as.post(pathOf(door), { headers: { ...headers, 'next-action': actionId(door) }, multipart, maxRedirects: 0 });
 }
