@@ -1,10 +1,10 @@
 import { and, eq, sql, type SQL } from 'drizzle-orm';
-import { db } from '../client';
 import { prepared } from '../prepared';
 import { buildIsVisible, entryIsVisible } from '../scope';
 import { builds, buildStages, entries, photos, users } from '../schema';
 import { isStaffRole, type Role } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
+import { RecentTexts } from '@/lib/recent-texts';
 import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 12;
@@ -43,20 +43,15 @@ export function parseCursor(text: string | null): DiaryCursor | null {
  * @throws OutOfReach
  */
 export async function diaryState(viewer: Viewer, orderNumber: string): Promise<{ buildId: string; etag: string }> {
-  const [build] = await db()
-    .select({ buildId: builds.id, etag: etagOf(viewer.role) })
-    .from(builds)
-    .where(and(eq(builds.orderNumber, orderNumber), buildIsVisible(viewer)))
-    .limit(1);
-  if (!build) throw new OutOfReach(orderNumber);
-  return build;
+  const state = await stateQueries[viewer.role]().get({ viewerId: viewer.id, orderNumber });
+  if (!state) throw new OutOfReach(orderNumber);
+  return state;
 }
 
 /**
- * A diary's state and its page in one question, so that both are of one moment. SQLite writes the page's JSON: one row
- * crosses into JavaScript instead of one for each entry and photo, and a body that is not JSON comes out as null instead
- * of failing the page.
- * @param known the state that the reader holds already; `page` is null while it is still that
+ * A diary's state and, unless the reader holds that state already, its page as JSON text. Whether the reader may see it
+ * is asked of the database every time; only the making of the page is saved.
+ * @param known the reader's state; `page` is null while the diary is still in it
  * @throws OutOfReach
  */
 export async function diaryAnswer(
@@ -65,53 +60,79 @@ export async function diaryAnswer(
   before: DiaryCursor | null,
   known: string | null,
 ): Promise<{ etag: string; page: string | null }> {
-  const query = pageQuery(viewer.role, builds.orderNumber, before !== null);
-  const found = await query().get({ viewerId: viewer.id, build: orderNumber, known, ...before });
-  if (!found) throw new OutOfReach(orderNumber);
-  return found;
+  const { buildId, etag } = await diaryState(viewer, orderNumber);
+  if (etag === known) return { etag, page: null };
+  const place = before ? `${before.datedAt}.${before.id}` : '';
+  const page = recentPages.get(`${buildId} ${etag} ${place}`);
+  if (page !== undefined) return { etag, page };
+  const made = await makePage(viewer, buildId, before);
+  if (!made) throw new OutOfReach(orderNumber);
+  recentPages.set(`${buildId} ${made.etag} ${place}`, made.page);
+  return made;
 }
 
 /** One page of a build's diary, newest first; without entries when the build is out of reach. */
 export async function diaryPage(viewer: Viewer, buildId: string, before: DiaryCursor | null): Promise<DiaryPage> {
-  const query = pageQuery(viewer.role, builds.id, before !== null);
-  const found = await query().get({ viewerId: viewer.id, build: buildId, known: null, ...before });
-  const page: DiaryPage = JSON.parse(found?.page ?? '{"entries":[],"next":null}');
+  const made = await makePage(viewer, buildId, before);
+  const page: DiaryPage = made ? JSON.parse(made.page) : { entries: [], next: null };
   return page;
 }
 
-type BuildKey = typeof builds.orderNumber | typeof builds.id;
+/** Pages by build, state and place. The state tells the shop's side from the client's, so neither gets the other's. */
+const recentPages = new RecentTexts(64_000_000);
 
-/** A role, a key and whether there is a cursor make the text; each that is asked for is built once. */
-const pageQueries = new Map<string, ReturnType<typeof preparePage>>();
-
-function pageQuery(role: Role, key: BuildKey, hasCursor: boolean) {
-  const name = `${role} ${key.name} ${hasCursor}`;
-  const query = pageQueries.get(name) ?? preparePage(role, key, hasCursor);
-  pageQueries.set(name, query);
-  return query;
+/** The page with the state it was made in: both from one statement, so that a page is never kept under another state. */
+function makePage(viewer: Viewer, buildId: string, before: DiaryCursor | null) {
+  const query = (before ? olderPageQueries : pageQueries)[viewer.role];
+  return query().get({ viewerId: viewer.id, buildId, ...before });
 }
 
-function preparePage(role: Role, key: BuildKey, hasCursor: boolean) {
-  const reader = { id: sql.placeholder('viewerId'), role };
-  const etag = etagOf(role);
-  return prepared((on) =>
-    on
-      .select({
-        etag,
-        page: sql<
-          string | null
-        >`case when ${etag} is not ${sql.placeholder('known')} then (${pageJson(role, hasCursor)}) end`,
-      })
-      .from(builds)
-      .where(and(eq(key, sql.placeholder('build')), buildIsVisible(reader)))
-      .prepare(),
-  );
-}
+const readerOf = (role: Role) => ({ id: sql.placeholder('viewerId'), role });
 
 const etagOf = (role: Role) =>
   sql<string>`'"${sql.raw(isStaffRole(role) ? 's' : 'c')}' || ${builds.diaryRevision} || '"'`;
 
-/** The page of the outer query's build. The joins are crossed because that keeps SQLite to the order of the entries. */
+/** A role decides the shape of the conditions, so each has a text of its own. */
+function forEachRole<Query>(build: (role: Role) => Query): Record<Role, Query> {
+  return {
+    buyer: build('buyer'),
+    artist: build('artist'),
+    builder: build('builder'),
+    rep: build('rep'),
+    admin: build('admin'),
+  };
+}
+
+const stateQueries = forEachRole((role) =>
+  prepared((on) =>
+    on
+      .select({ buildId: builds.id, etag: etagOf(role) })
+      .from(builds)
+      .where(and(eq(builds.orderNumber, sql.placeholder('orderNumber')), buildIsVisible(readerOf(role))))
+      .prepare(),
+  ),
+);
+
+function preparePages(hasCursor: boolean) {
+  return forEachRole((role) =>
+    prepared((on) =>
+      on
+        .select({ etag: etagOf(role), page: sql<string>`(${pageJson(role, hasCursor)})` })
+        .from(builds)
+        .where(and(eq(builds.id, sql.placeholder('buildId')), buildIsVisible(readerOf(role))))
+        .prepare(),
+    ),
+  );
+}
+
+const pageQueries = preparePages(false);
+const olderPageQueries = preparePages(true);
+
+/**
+ * The page of the outer query's build. SQLite writes the JSON: one row crosses into JavaScript instead of one for each
+ * entry and photo, and a body that is not JSON comes out as null instead of failing the page. The joins are crossed
+ * because that keeps SQLite to the order of the entries.
+ */
 function pageJson(role: Role, hasCursor: boolean): SQL {
   const shopSide = sql`, 'audience', e.audience, 'state', e.state, 'authorId', e.author_id`;
   const older = sql`and (${entries.datedAt}, ${entries.id}) < (${sql.placeholder('datedAt')}, ${sql.placeholder('id')})`;
