@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, gt, isNotNull, isNull, lt, sql } from 'drizzle-orm';
+import { and, asc, count, desc, eq, gt, inArray, isNotNull, isNull, lt, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -178,6 +178,15 @@ export async function touchDiary(tx: Tx, buildId: string): Promise<void> {
     .update(builds)
     .set({ diaryRevision: sql`${builds.diaryRevision} + 1` })
     .where(eq(builds.id, buildId));
+}
+
+/** The same for every diary that names this author, whose department stands beside their entries. */
+export async function touchDiariesOf(tx: Tx, authorId: string): Promise<void> {
+  const written = tx.select({ id: entries.buildId }).from(entries).where(eq(entries.authorId, authorId));
+  await tx
+    .update(builds)
+    .set({ diaryRevision: sql`${builds.diaryRevision} + 1` })
+    .where(inArray(builds.id, written));
 }
 
 /** What an admin may know without stepping in: that builds exist, their numbers, and who is on them. */

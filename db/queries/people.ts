@@ -1,5 +1,6 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
+import { touchDiariesOf } from './builds';
 import { lastSeq } from './mail-settings';
 import { queueMail } from './outbox';
 import { requireCan } from './standing';
@@ -146,6 +147,7 @@ export function changePerson(viewer: Viewer, change: ChangedPerson, nowMs: numbe
     }
     const department = await requireDepartment(tx, change);
     await tx.update(users).set({ role: change.role, department }).where(eq(users.id, person.id));
+    await touchDiariesOf(tx, person.id);
     if ((person.role === 'admin') !== (change.role === 'admin')) await endWork(tx, viewer, person.id, nowMs);
     await recordEvent(
       tx,

@@ -4,6 +4,7 @@ import { db } from '@/db/client';
 import { requireBuild } from '@/db/queries/builds';
 import { diaryPage, diaryState } from '@/db/queries/diary';
 import { countHeldEntries, editEntry, postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
+import { changePerson } from '@/db/queries/people';
 import { buildStages, diaryEvents, entries, photos } from '@/db/schema';
 import { BadInput, OutOfReach } from '@/lib/errors';
 import { openTestDatabase } from '../support/database';
@@ -191,6 +192,16 @@ test('the diary’s mark changes with every post, edit, release and withdrawal, 
   await makePhoto(build, builder);
   await note();
   expect(marks.at(-1)).toBe(marks.at(-2));
+});
+
+test('the diary’s mark changes when an author moves to another department, since that stands beside their name', async () => {
+  const { build, builder, owner } = await openBench();
+  await postEntry(builder, entryFor(build), NOW_MS);
+  const before = (await diaryState(owner, build.orderNumber)).etag;
+  const change = { userId: builder.id, role: 'builder', department: 'wood' } as const;
+  await changePerson(await makePerson('admin'), change, NOW_MS);
+  expect((await diaryState(owner, build.orderNumber)).etag).not.toBe(before);
+  expect((await diaryPage(owner, build.id, null)).entries).toMatchObject([{ department: 'wood' }]);
 });
 
 test('the shop’s mark and the client’s differ, since their pages do', async () => {
