@@ -20,8 +20,8 @@ export default defineConfig({
     cwd: '../..',
     url: `${world.appUrl}/api/health`,
     timeout: 240_000,
-    // `node tests/browser/serve.mjs` in another terminal saves the start while writing a test.
-    reuseExistingServer: process.env.CI === undefined,
+    // While writing a test: `node tests/browser/serve.mjs` in another terminal, and REUSE_WORLD=1, save the start.
+    reuseExistingServer: process.env.REUSE_WORLD === '1',
     gracefulShutdown: { signal: 'SIGTERM', timeout: 10_000 },
     stdout: 'pipe',
   },
