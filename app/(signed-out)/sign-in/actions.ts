@@ -2,6 +2,7 @@
 
 import { cookies, headers } from 'next/headers';
 import { redirect } from 'next/navigation';
+import { after } from 'next/server';
 import { z } from 'zod';
 import { askForLink } from '@/db/queries/sign-in';
 import { openAction } from '@/lib/action';
@@ -30,7 +31,8 @@ export const ask = openAction(address, async ({ address: typed }) => {
     nowMs: Date.now(),
   };
   await Promise.all([askForLink(link), new Promise((answer) => setTimeout(answer, ANSWER_MS))]);
-  wakeMail();
+  // Only when the answer is out: writing the mail would make a known address answer later.
+  after(wakeMail);
   (await cookies()).set(askingBrowserCookieName(), browser, { ...cookieOptions(), maxAge: SIGN_IN_LINK_MS / 1000 });
   redirect('/sign-in/sent');
 });
