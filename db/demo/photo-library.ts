@@ -1,23 +1,12 @@
-import { randomBytes } from 'node:crypto';
 import { drawPicture, pictureKinds, type BodyKind, type StageKey } from './pictures';
 import type { finishes } from './shop-floor';
-import { mailJpegKey, variantKey } from '../queries/photos';
+import type { ReadyPhoto } from '../queries/photos';
+import { storePhoto } from '@/lib/jobs/photo-pipeline';
 import { processPhoto } from '@/lib/photos/process-photo';
-import { storeObject } from '@/lib/storage';
 
 export type Finish = (typeof finishes)[number];
 
-export type LibraryPhoto = {
-  stage: StageKey;
-  alt: string;
-  outPrefix: string;
-  keptKey: string;
-  sizeBytes: number;
-  widthPx: number;
-  heightPx: number;
-  blurDataUrl: string;
-  widthsPx: number[];
-};
+export type LibraryPhoto = ReadyPhoto & { stage: StageKey; alt: string; sizeBytes: number };
 
 /** Stages from which on a picture shows the build's own colour. */
 const coloured: readonly StageKey[] = ['colour-clear', 'sand-buff', 'hardware-setup', 'final-check'];
@@ -70,13 +59,5 @@ async function make(
   const bytes = await drawPicture(kind, { finish, woodTone: finish.wood, ...order });
   const made = await processPhoto({ bytes, contentType: 'image/jpeg', sizeBytes: bytes.length });
   if (!made.ok) throw new Error(`the drawing ${kind} did not pass the pipeline: ${made.detail}`);
-  const outPrefix = `out/${randomBytes(24).toString('base64url')}`;
-  const keptKey = `original/${randomBytes(24).toString('base64url')}`;
-  await storeObject(keptKey, bytes, 'image/jpeg');
-  await storeObject(mailJpegKey(outPrefix), made.mailJpeg, 'image/jpeg');
-  for (const { widthPx, bytes: webp } of made.variants)
-    await storeObject(variantKey(outPrefix, widthPx), webp, 'image/webp');
-  const { widthPx, heightPx, blurDataUrl } = made;
-  const widthsPx = made.variants.map((variant) => variant.widthPx);
-  return { stage, alt, outPrefix, keptKey, sizeBytes: bytes.length, widthPx, heightPx, blurDataUrl, widthsPx };
+  return { stage, alt, sizeBytes: bytes.length, ...(await storePhoto(bytes, 'image/jpeg', made)) };
 }

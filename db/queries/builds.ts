@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, gt, inArray, isNotNull, isNull, lt, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, inArray, isNotNull, isNull, lt, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -213,9 +213,4 @@ function parseStaff(json: string): AssignedPerson[] {
   const rows: (Omit<AssignedPerson, 'cleared' | 'steppedIn'> & { cleared: number; steppedIn: number })[] =
     JSON.parse(json);
   return rows.map((row) => ({ ...row, cleared: Boolean(row.cleared), steppedIn: Boolean(row.steppedIn) }));
-}
-
-export async function countBuilds(viewer: Viewer): Promise<number> {
-  const [row] = await db().select({ n: count() }).from(builds).where(buildIsVisible(viewer));
-  return row?.n ?? 0;
 }

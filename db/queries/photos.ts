@@ -105,7 +105,8 @@ export function unscopedUploadedPhotos(limit: number) {
     .limit(limit);
 }
 
-type ReadyPhoto = {
+/** Where a photo's sizes and its original lie; `widthsPx` are the widths it is served at. */
+export type ReadyPhoto = {
   outPrefix: string;
   keptKey: string;
   widthPx: number;

@@ -6,8 +6,10 @@ import {
   settleRefused,
   unscopedUploadedPhotos,
   variantKey,
+  type ReadyPhoto,
 } from '@/db/queries/photos';
 import { logFault } from '@/lib/log';
+import type { MadePhoto } from '@/lib/photos/decoder-reply';
 import { processPhoto } from '@/lib/photos/process-photo';
 import { deleteObject, findObject, readObject, storeObject } from '@/lib/storage';
 
@@ -41,16 +43,27 @@ async function develop(photo: Uploaded): Promise<PhotoOutcome> {
   const bytes = await readObject(photo.originalKey);
   const made = await processPhoto({ ...photo, bytes, sha256Hex: Buffer.from(photo.sha256, 'base64').toString('hex') });
   if (!made.ok) return refuse(photo, made.message);
+  await settleReady(photo.id, await storePhoto(bytes, photo.contentType, made), Date.now());
+  return { state: 'ready' };
+}
+
+/** Puts a photo's kept original and everything made of it into the store. @returns where it lies, and its sizes in px */
+export async function storePhoto(bytes: Buffer, contentType: string, made: MadePhoto): Promise<ReadyPhoto> {
   const outPrefix = `out/${randomBytes(24).toString('base64url')}`;
   const keptKey = `original/${randomBytes(24).toString('base64url')}`;
-  await storeObject(keptKey, bytes, photo.contentType);
+  await storeObject(keptKey, bytes, contentType);
   await storeObject(mailJpegKey(outPrefix), made.mailJpeg, 'image/jpeg');
   for (const { widthPx, bytes: webp } of made.variants)
     await storeObject(variantKey(outPrefix, widthPx), webp, 'image/webp');
   const { widthPx, heightPx, blurDataUrl } = made;
-  const widthsPx = made.variants.map((variant) => variant.widthPx);
-  await settleReady(photo.id, { outPrefix, keptKey, widthPx, heightPx, blurDataUrl, widthsPx }, Date.now());
-  return { state: 'ready' };
+  return {
+    outPrefix,
+    keptKey,
+    widthPx,
+    heightPx,
+    blurDataUrl,
+    widthsPx: made.variants.map((variant) => variant.widthPx),
+  };
 }
 
 /** Not a photo: the bytes go at once, not only with the next sweep. */
