@@ -1,4 +1,5 @@
 import type { StageKey } from './pictures';
+import type { Work } from '@/lib/work';
 
 export const departmentNames = [
   'wood room',
@@ -11,28 +12,29 @@ export const departmentNames = [
   'inspection',
 ];
 
-export type DemoStage = { key: StageKey; name: string; department: string; usualDays: number };
+export type DemoStage = { key: StageKey; name: string; department: string; work: Work; usualDays: number };
 
-const stage = (key: StageKey, name: string, department: string, usualDays: number): DemoStage => ({
+const stage = (key: StageKey, name: string, department: string, work: Work, usualDays: number): DemoStage => ({
   key,
   name,
   department,
+  work,
   usualDays,
 });
 
 const solid = [
-  stage('lumber', 'Lumber', 'wood room', 5),
-  stage('wood-room', 'Wood room', 'wood room', 32),
-  stage('blanks', 'Blanks', 'body & sanding', 7),
-  stage('machining', 'Machining', 'design & machining', 12),
-  stage('neck-board', 'Neck & board', 'neck & frets', 13),
-  stage('frets', 'Frets', 'neck & frets', 7),
-  stage('body-joint', 'Body & joint', 'body & sanding', 10),
-  stage('pre-paint', 'Pre-paint check', 'inspection', 3),
-  stage('colour-clear', 'Colour & clear', 'finish', 22),
-  stage('sand-buff', 'Wet sand & buff', 'buffing', 6),
-  stage('hardware-setup', 'Hardware & set-up', 'set-up', 5),
-  stage('final-check', 'Final check', 'inspection', 2),
+  stage('lumber', 'Lumber', 'wood room', 'wood', 5),
+  stage('wood-room', 'Wood room', 'wood room', 'wood', 32),
+  stage('blanks', 'Blanks', 'body & sanding', 'body', 7),
+  stage('machining', 'Machining', 'design & machining', 'machining', 12),
+  stage('neck-board', 'Neck & board', 'neck & frets', 'neck', 13),
+  stage('frets', 'Frets', 'neck & frets', 'neck', 7),
+  stage('body-joint', 'Body & joint', 'body & sanding', 'body', 10),
+  stage('pre-paint', 'Pre-paint check', 'inspection', 'inspection', 3),
+  stage('colour-clear', 'Colour & clear', 'finish', 'finish', 22),
+  stage('sand-buff', 'Wet sand & buff', 'buffing', 'buffing', 6),
+  stage('hardware-setup', 'Hardware & set-up', 'set-up', 'setup', 5),
+  stage('final-check', 'Final check', 'inspection', 'inspection', 2),
 ];
 
 /** Days a stage takes where a route takes longer over it. */

@@ -6,7 +6,6 @@ import { correlated } from '../correlated';
 import { buildIsVisible, entryIsVisible, isOpen } from '../scope';
 import { assignments, buildPeople, builds, buildStages, diaryVisits, entries, users } from '../schema';
 import { can, isStaffRole } from '@/lib/access';
-import { BadInput } from '@/lib/errors';
 import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 40;
@@ -88,6 +87,7 @@ export function listStages(viewer: Viewer, buildId: string) {
       key: buildStages.key,
       name: buildStages.name,
       department: buildStages.department,
+      work: buildStages.work,
       startedAt: buildStages.startedAt,
       finishedAt: buildStages.finishedAt,
       usualDays: buildStages.usualDays,
@@ -154,22 +154,6 @@ export function recordVisit(viewer: Viewer, orderNumber: string, nowMs: number):
 export function newSince({ visitedAt, visitBeforeAt }: BuildHead, nowMs: number): number | null {
   if (visitedAt === null) return null;
   return nowMs - visitedAt > VISIT_MS ? visitedAt : visitBeforeAt;
-}
-
-/** Ends the stage of now and starts another; stages that were passed over end with it. */
-export async function startStage(tx: Tx, buildId: string, stageId: string, nowMs: number): Promise<void> {
-  const [next] = await tx
-    .select({ position: buildStages.position, startedAt: buildStages.startedAt })
-    .from(buildStages)
-    .where(and(eq(buildStages.buildId, buildId), eq(buildStages.id, stageId)));
-  if (!next) throw new BadInput({ stageId: 'That stage is not on this build’s route. Choose one from the list.' });
-  if (next.startedAt !== null) return;
-  const ofBuild = eq(buildStages.buildId, buildId);
-  await tx
-    .update(buildStages)
-    .set({ finishedAt: nowMs, startedAt: sql`coalesce(${buildStages.startedAt}, ${nowMs})` })
-    .where(and(ofBuild, lt(buildStages.position, next.position), isNull(buildStages.finishedAt)));
-  await tx.update(buildStages).set({ startedAt: nowMs }).where(eq(buildStages.id, stageId));
 }
 
 /** Everything that changes a page of the diary goes through here, so that readers' pages learn of it. */

@@ -1,6 +1,7 @@
 import { and, count, eq, inArray, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
-import { startStage, touchDiary } from './builds';
+import { touchDiary } from './builds';
+import { startStage } from './stages';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { buildIsVisible, entryIsVisible } from '../scope';
@@ -43,7 +44,7 @@ export function postEntry(viewer: Viewer, entry: NewEntry, nowMs: number): Promi
       .returning({ id: entries.id, state: entries.state });
     if (!posted) throw new Error('an insert without a row');
     await attachPhotos(tx, viewer, build.id, posted.id, entry.photos);
-    if (entry.startStage) await startStage(tx, build.id, entry.stageId, nowMs);
+    if (entry.startStage) await startStage(tx, { buildId: build.id, stageId: entry.stageId, byId: viewer.id }, nowMs);
     if (state === 'published' && entry.audience === 'buyer') await tellReaders(tx, build.id, posted.id, nowMs);
     await touchDiary(tx, build.id);
     return { ...posted, repeated: false };

@@ -2,6 +2,7 @@ import { index, integer, real, sqliteTable, text, uniqueIndex } from 'drizzle-or
 import { createdAt, id, instant } from './columns';
 import { routes } from './routes';
 import { departments } from './shop';
+import { kindsOfWork } from '../../lib/work';
 
 export const builds = sqliteTable(
   'builds',
@@ -21,6 +22,11 @@ export const builds = sqliteTable(
     /** Under secrecy until this instant; null when open. */
     heldUntilAt: instant('held_until_at'),
     orderedAt: instant('ordered_at').notNull(),
+    /** When the final check passed. */
+    readyAt: instant('ready_at'),
+    shippedAt: instant('shipped_at'),
+    /** Carrier and number, for the owner. */
+    shippedBy: text('shipped_by'),
     deliveredAt: instant('delivered_at'),
     /** Grows with everything that changes a page of the diary; the diary's ETag is made of it. */
     diaryRevision: integer('diary_revision').notNull().default(0),
@@ -47,6 +53,7 @@ export const buildStages = sqliteTable(
     department: text('department')
       .notNull()
       .references(() => departments.key),
+    work: text('work', { enum: kindsOfWork }).notNull().default('body'),
     usualDays: integer('usual_days').notNull(),
     startedAt: instant('started_at'),
     finishedAt: instant('finished_at'),

@@ -8,6 +8,9 @@ export const shop = sqliteTable(
     id: integer('id').primaryKey(),
     name: text('name').notNull(),
     timeZone: text('time_zone').notNull(),
+    /** ISO 3166 codes of where the shop is, for its public holidays. */
+    holidayCountry: text('holiday_country'),
+    holidayRegion: text('holiday_region'),
   },
   (t) => [check('shop_single', sql`${t.id} = 1`)],
 );
@@ -16,4 +19,6 @@ export const departments = sqliteTable('departments', {
   key: text('key').primaryKey(),
   name: text('name').notNull(),
   position: integer('position').notNull(),
+  /** Builds a week that it can finish; null: not known. */
+  capacityPerWeek: integer('capacity_per_week'),
 });

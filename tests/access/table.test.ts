@@ -14,6 +14,19 @@ entry.edit_own              ----   ----   --a-    --a-   --a-
 entry.edit_any              ----   ----   ----    --a-   --a-
 entry.release               ----   ----   ----    --a-   --a-
 stage.move                  ----   ----   --a-    --a-   --a-
+spec.read                   o---   o---   --a-    --a-   --a-
+spec.edit                   ----   ----   --a-    --a-   --a-
+spec.send                   ----   ----   ----    --a-   --a-
+change.ask                  o---   o---   ----    ----   ----
+change.offer                ----   ----   ----    --a-   --a-
+sign_off.read               o---   o---   --a-    --a-   --a-
+sign_off.ask                ----   ----   ----    --a-   --a-
+sign_off.answer             o---   o---   ----    ----   ----
+proof.link                  ----   ----   --a-    --a-   --a-
+check.run                   ----   ----   --a-    --a-   --a-
+check.tell                  ----   ----   ----    --a-   --a-
+build.finish                ----   ----   --a-    --a-   --a-
+build.ship                  ----   ----   ----    --a-   --a-
 contacts.read               ----   ----   ----    --a-   --a-
 question.read               o---   o---   --a-    --a-   --a-
 question.read_reps_only     o---   o---   ----    --a-   --a-
@@ -27,6 +40,8 @@ build.step_in               ----   ----   ----    ----   ---n
 people.manage               ----   ----   ----    ----   ---n
 assignment.manage           ----   ----   ----    ----   ---n
 builds.count                ----   ----   ----    ----   ---n
+floor.read                  ----   ----   ---n    ---n   ---n
+shop.set_up                 ----   ----   ----    ----   ---n
 mail.watch                  ----   ----   ----    ----   ---n
 own.settings                ---n   ---n   ---n    ---n   ---n
 `;

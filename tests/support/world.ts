@@ -14,10 +14,10 @@ export const DAY_MS = 86_400_000;
 export const NOW_MS = Date.UTC(2026, 11, 1, 9);
 
 const stagesOfRoute = [
-  { key: 'wood', name: 'Wood room', department: 'wood', usualDays: 15 },
-  { key: 'neck', name: 'Neck & frets', department: 'neck', usualDays: 10 },
-  { key: 'finish', name: 'Finish', department: 'finish', usualDays: 20 },
-];
+  { key: 'wood', name: 'Wood room', department: 'wood', work: 'wood', usualDays: 15 },
+  { key: 'neck', name: 'Neck & frets', department: 'neck', work: 'neck', usualDays: 10 },
+  { key: 'finish', name: 'Finish', department: 'finish', work: 'finish', usualDays: 20 },
+] as const;
 
 const departments = [
   { key: 'wood', name: 'Wood room', position: 1 },
