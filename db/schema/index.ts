@@ -11,6 +11,7 @@ export * from './rate-limits';
 export * from './readings';
 export * from './routes';
 export * from './schedule';
+export * from './search';
 export * from './sessions';
 export * from './shop';
 export * from './sign-in-links';

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { check, index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import { check, index, integer, primaryKey, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 import { createdAt, id, instant } from './columns';
 import { users } from './users';
 import { mailKinds, type FrozenMail, type MailAbout } from '../../lib/mail/kinds';
@@ -15,6 +15,9 @@ export const mailSettings = sqliteTable(
     hourLocal: integer('hour_local').notNull().default(8),
     /** 1 is Monday, 7 is Sunday (ISO 8601). */
     weekday: integer('weekday').notNull().default(5),
+    /** Local hours between which nothing is sent but sign-in mail; null: no quiet hours. */
+    quietFromHour: integer('quiet_from_hour'),
+    quietToHour: integer('quiet_to_hour'),
     nextDigestAt: instant('next_digest_at'),
     /** The last diary event that a digest has told. */
     toldSeq: integer('told_seq').notNull().default(0),
@@ -55,12 +58,65 @@ export const outbox = sqliteTable(
     lastProblem: text('last_problem'),
     providerId: text('provider_id'),
     sentAt: instant('sent_at'),
+    /** What the provider told of it afterwards. */
+    deliveredAt: instant('delivered_at'),
+    bouncedAt: instant('bounced_at'),
+    complainedAt: instant('complained_at'),
     createdAt: createdAt(),
   },
   (t) => [
     uniqueIndex('outbox_dedupe_unique').on(t.dedupeKey),
     index('outbox_due').on(t.state, t.nextAttemptAt),
     index('outbox_user').on(t.userId, t.createdAt),
+    index('outbox_provider').on(t.providerId),
     check('outbox_state_known', sql`${t.state} in ('waiting', 'sending', 'sent', 'failed', 'parked', 'dropped')`),
   ],
+);
+
+/** How one person wants one kind of mail; no row: as the shop's defaults say. */
+export const mailChoices = sqliteTable(
+  'mail_choices',
+  {
+    userId: text('user_id')
+      .notNull()
+      .references(() => users.id, { onDelete: 'cascade' }),
+    kind: text('kind', { enum: mailKinds }).notNull(),
+    choice: text('choice', { enum: ['at_once', 'digest', 'never'] }).notNull(),
+  },
+  (t) => [
+    primaryKey({ columns: [t.userId, t.kind] }),
+    check('mail_choices_known', sql`${t.choice} in ('at_once', 'digest', 'never')`),
+  ],
+);
+
+/** Something to be told in a person's next digest instead of a mail of its own. */
+export const newsItems = sqliteTable(
+  'news_items',
+  {
+    id: id(),
+    userId: text('user_id')
+      .notNull()
+      .references(() => users.id, { onDelete: 'cascade' }),
+    kind: text('kind', { enum: mailKinds }).notNull(),
+    about: text('about', { mode: 'json' }).$type<MailAbout>().notNull(),
+    dedupeKey: text('dedupe_key').notNull(),
+    toldAt: instant('told_at'),
+    createdAt: createdAt(),
+  },
+  (t) => [
+    uniqueIndex('news_items_dedupe_unique').on(t.dedupeKey),
+    index('news_items_untold').on(t.userId, t.toldAt, t.createdAt),
+  ],
+);
+
+/** What the mail provider has told us by webhook, once each: replies that came in, and what became of what we sent. */
+export const providerEvents = sqliteTable(
+  'provider_events',
+  {
+    id: text('id').primaryKey(),
+    kind: text('kind').notNull(),
+    outcome: text('outcome').notNull(),
+    receivedAt: instant('received_at').notNull(),
+  },
+  (t) => [index('provider_events_received').on(t.receivedAt)],
 );

@@ -17,6 +17,8 @@ export const photos = sqliteTable(
       .notNull()
       .references(() => builds.id, { onDelete: 'cascade' }),
     entryId: text('entry_id').references(() => entries.id, { onDelete: 'cascade' }),
+    /** A photo of a letter; its entry is null then. No foreign key: letters come after photos. */
+    letterId: text('letter_id'),
     uploaderId: text('uploader_id')
       .notNull()
       .references(() => users.id),
@@ -43,6 +45,7 @@ export const photos = sqliteTable(
   },
   (t) => [
     index('photos_entry').on(t.entryId, t.position),
+    index('photos_letter').on(t.letterId, t.position),
     index('photos_unfinished')
       .on(t.createdAt)
       .where(sql`${t.entryId} is null`),

@@ -11,6 +11,8 @@ export const shop = sqliteTable(
     /** ISO 3166 codes of where the shop is, for its public holidays. */
     holidayCountry: text('holiday_country'),
     holidayRegion: text('holiday_region'),
+    /** Who gets a question that nobody else can answer. No foreign key: users come after the shop. */
+    fallbackUserId: text('fallback_user_id'),
   },
   (t) => [check('shop_single', sql`${t.id} = 1`)],
 );
@@ -19,6 +21,8 @@ export const departments = sqliteTable('departments', {
   key: text('key').primaryKey(),
   name: text('name').notNull(),
   position: integer('position').notNull(),
+  /** Who answers when no builder of the department is on the build. */
+  leadId: text('lead_id'),
   /** Builds a week that it can finish; null: not known. */
   capacityPerWeek: integer('capacity_per_week'),
 });

@@ -15,6 +15,17 @@ export const users = sqliteTable(
     timeZoneAskedAt: instant('time_zone_asked_at'),
     invitedById: text('invited_by_id'),
     emailVerifiedAt: instant('email_verified_at'),
+    /** Out of office between these two; questions pass them over. */
+    awayFromAt: instant('away_from_at'),
+    awayUntilAt: instant('away_until_at'),
+    /** How numbers and dates are shown: BCP 47 locale, inches or millimetres. */
+    locale: text('locale').notNull().default('en-GB'),
+    units: text('units', { enum: ['in', 'mm'] })
+      .notNull()
+      .default('in'),
+    /** Mail to this address bounced or was complained of, and stops. */
+    unreachableSinceAt: instant('unreachable_since_at'),
+    unreachableWhy: text('unreachable_why', { enum: ['bounced', 'complained'] }),
     disabledAt: instant('disabled_at'),
     createdAt: createdAt(),
   },
