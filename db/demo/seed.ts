@@ -5,7 +5,8 @@ import { enterQuestions } from './letters';
 import { enterPeople, type Cast } from './people';
 import { PhotoLibrary } from './photo-library';
 import { planBuilds } from './plan';
-import { demoRoutes, demoTopics, departmentNames } from './shop-floor';
+import { demoHolidays, enterCalendar, enterCapacities } from './schedule';
+import { demoRoutes, demoTopics, departmentNames, outlookOf } from './shop-floor';
 import { database, db, write, type Tx } from '../client';
 import { migrateDatabase } from '../migrate';
 import { departments, diaryEvents, mailSettings, routes, routeStages, shop, topics } from '../schema';
@@ -18,16 +19,22 @@ export async function seedDemoWorld(nowMs: number, tell: (line: string) => void)
   const [known] = await db().select({ n: count() }).from(shop);
   if (known && known.n > 0) return tell('The demo world is there already and stays as it is.');
   const library = new PhotoLibrary(Number(process.env.DEMO_PICTURE_WIDTH_PX) || 1600);
-  const { cast, routeIds } = await write(async (tx) => ({
-    routeIds: await enterShop(tx),
-    cast: await enterPeople(tx, nowMs),
-  }));
+  const holidays = await demoHolidays(nowMs);
+  const { cast, routeIds } = await write(async (tx) => {
+    const routeIds = await enterShop(tx);
+    const cast = await enterPeople(tx, nowMs);
+    await enterCapacities(tx, cast);
+    await enterCalendar(tx, holidays, nowMs);
+    return { routeIds, cast };
+  });
   const onFloor = await enterBuilds(cast, routeIds, library, nowMs, tell);
   await write(async (tx) => {
     await enterQuestions(tx, onFloor, cast, nowMs);
     await tellEverythingSoFar(tx);
     // Last: a seed that was cut off leaves no shop, so the next start begins again.
-    await tx.insert(shop).values({ id: 1, name: 'Quillhaven Guitar Works', timeZone: 'America/New_York' });
+    await tx
+      .insert(shop)
+      .values({ id: 1, name: 'Quillhaven Guitar Works', timeZone: 'America/New_York', holidayCountry: 'US' });
   });
   await stopDecoders();
   tell(`${library.count} pictures drawn, ${onFloor.length} builds on the floor.`);
@@ -40,7 +47,9 @@ async function enterShop(tx: Tx): Promise<string[]> {
   for (const { name, stages } of demoRoutes) {
     const routeId = newId();
     await tx.insert(routes).values({ id: routeId, name });
-    await tx.insert(routeStages).values(stages.map((step, index) => ({ ...step, routeId, position: index + 1 })));
+    await tx
+      .insert(routeStages)
+      .values(stages.map((step, index) => ({ ...step, ...outlookOf(step), routeId, position: index + 1 })));
     routeIds.push(routeId);
   }
   return routeIds;

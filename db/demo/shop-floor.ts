@@ -14,6 +14,32 @@ export const departmentNames = [
 
 export type DemoStage = { key: StageKey; name: string; department: string; work: Work; usualDays: number };
 
+/** How the shop itself expects a stage to go: working days at best, most likely and at worst, and its calendar waits. */
+export type StageOutlook = {
+  bestDays: number;
+  likelyDays: number;
+  worstDays: number;
+  minimumWaitDays: number;
+  silenceDays: number;
+};
+
+/** Calendar days that nobody can hurry: wood settling, a finish curing. */
+const minimumWaits: Partial<Record<StageKey, number>> = { 'wood-room': 21, 'colour-clear': 14 };
+
+/** Days an owner can do without news, where there is nothing to photograph for long. */
+const longSilences: Partial<Record<StageKey, number>> = { 'wood-room': 30, 'colour-clear': 16, 'final-check': 5 };
+
+export function outlookOf({ key, usualDays }: DemoStage): StageOutlook {
+  const likelyDays = Math.max(1, Math.round((usualDays * 5) / 7));
+  return {
+    bestDays: Math.max(1, Math.round(likelyDays * 0.6)),
+    likelyDays,
+    worstDays: Math.ceil(likelyDays * 2.2),
+    minimumWaitDays: minimumWaits[key] ?? 0,
+    silenceDays: longSilences[key] ?? 10,
+  };
+}
+
 const stage = (key: StageKey, name: string, department: string, work: Work, usualDays: number): DemoStage => ({
   key,
   name,
