@@ -17,6 +17,18 @@ const AREA_AND_PLACE = /^(?!Etc\/|SystemV\/)[A-Z][A-Za-z]+(?:\/[A-Za-z][A-Za-z0-
  * (+02:00, Etc/GMT+5) are refused: they know nothing of summer time. UTC itself is accepted.
  */
 export function isZone(name: string): boolean {
+  const known = knownZones.get(name);
+  if (known !== undefined) return known;
+  const sound = looksUp(name);
+  if (knownZones.size < MOST_ZONES) knownZones.set(name, sound);
+  return sound;
+}
+
+/** Looked up once each: a digest run asks for every reader. Bounded, for a name can be anything. */
+const knownZones = new Map<string, boolean>();
+const MOST_ZONES = 1000;
+
+function looksUp(name: string): boolean {
   if (name === 'UTC' || name === 'Etc/UTC') return true;
   if (!AREA_AND_PLACE.test(name)) return false;
   try {
@@ -25,6 +37,9 @@ export function isZone(name: string): boolean {
     return false;
   }
 }
+
+/** The zone itself, or UTC where the database of this machine has no such place any more. */
+export const soundZone = (name: string) => (isZone(name) ? name : 'UTC');
 
 function isWholeWithin(value: number, lowest: number, highest: number): boolean {
   return Number.isInteger(value) && value >= lowest && value <= highest;
@@ -67,9 +82,15 @@ export function nextDigestAt(plan: DigestPlan, afterMs: number): number | null {
   throw new RangeError(`no sending time within nine days in ${plan.zone}`);
 }
 
+const formats = new Map<string, Intl.DateTimeFormat>();
+const MOST_FORMATS = 500;
+
 function words(ms: number, zone: string, locale: string, parts: Intl.DateTimeFormatOptions): string {
   if (!isZone(zone)) throw new RangeError(`not a time zone of a place: ${JSON.stringify(zone)}`);
-  return new Intl.DateTimeFormat(locale, { ...parts, timeZone: zone }).format(ms);
+  const key = [zone, locale, ...Object.keys(parts)].join(' ');
+  const format = formats.get(key) ?? new Intl.DateTimeFormat(locale, { ...parts, timeZone: zone });
+  if (formats.size < MOST_FORMATS) formats.set(key, format);
+  return format.format(ms);
 }
 
 /** The reader's date in words: "29 September". @throws RangeError for an unknown zone or locale */
@@ -80,4 +101,9 @@ export function localDateWords(ms: number, zone: string, locale = 'en-GB'): stri
 /** The reader's date and clock in words: "29 September at 17:00". @throws RangeError for an unknown zone or locale */
 export function localDateTimeWords(ms: number, zone: string, locale = 'en-GB'): string {
   return words(ms, zone, locale, { day: 'numeric', month: 'long', hour: '2-digit', minute: '2-digit' });
+}
+
+/** A day of a calendar, yyyy-mm-dd, in the reader's words. It is nobody's instant, so no zone moves it. */
+export function calendarDayWords(day: string, locale = 'en-GB'): string {
+  return localDateWords(Date.parse(`${day}T12:00:00Z`), 'UTC', locale);
 }
