@@ -39,10 +39,11 @@ export function buildInLine({ instrument, ownerName }: DigestBuild): string {
   return `the ${nameInLine(instrument)} of ${nameInLine(ownerName)}`;
 }
 
+/** `lazy`, because React would have a picture that is not preloaded from a server. */
 function Photo({ cid, alt }: { cid: string; alt: string }) {
   const size = { height: 'auto', margin: '0 0 12px', maxWidth: '100%', width: '100%' };
   const style = { ...size, borderRadius: '4px', color: light.ink, font: `14px/21px ${sans}` };
-  return <Img src={`cid:${cid}`} alt={alt} width="392" className="ink" style={style} />;
+  return <Img src={`cid:${cid}`} alt={alt} width="392" loading="lazy" className="ink" style={style} />;
 }
 
 function Entry({ entry }: { entry: DigestEntry }) {

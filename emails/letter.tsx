@@ -3,7 +3,7 @@ import { Layout } from './layout';
 import { Action } from './links';
 import { Name, nameInLine } from './name';
 import { SoftLine, Title } from './prose';
-import { Quoted } from './quoted';
+import { Quoted, REPLY } from './quoted';
 
 export interface LetterProps {
   shopName: string;
@@ -16,6 +16,8 @@ export interface LetterProps {
   instrument?: string;
   excerpt?: string;
   url: string;
+  /** An answer to the mail itself becomes a letter. */
+  repliesArrive?: boolean;
 }
 
 export function subject({ reader, authorName, orderNumber }: LetterProps): string {
@@ -31,7 +33,7 @@ const why = {
 
 /** One letter of a question, to the side that did not write it. */
 export function Letter(props: LetterProps) {
-  const { shopName, reader, topic, orderNumber, instrument, excerpt, url } = props;
+  const { shopName, reader, topic, orderNumber, instrument, excerpt, url, repliesArrive = false } = props;
   const title = subject(props);
   return (
     <Layout
@@ -52,6 +54,7 @@ export function Letter(props: LetterProps) {
         {topic}
       </SoftLine>
       <Quoted waitsOnYou={reader === 'shop'}>{excerpt}</Quoted>
+      {repliesArrive && <SoftLine>{REPLY}</SoftLine>}
       <Action href={url}>{reader === 'client' ? 'Read the letter' : 'Answer the letter'}</Action>
     </Layout>
   );

@@ -3,7 +3,7 @@ import { Layout } from './layout';
 import { Action } from './links';
 import { Name, nameInLine } from './name';
 import { Line, SoftLine, Title } from './prose';
-import { Quoted } from './quoted';
+import { Quoted, REPLY } from './quoted';
 
 export interface QuestionAskedProps {
   shopName: string;
@@ -16,6 +16,8 @@ export interface QuestionAskedProps {
   /** When the answer is due, in the reader's words: "30 September at 14:00". */
   dueWords?: string;
   url: string;
+  /** An answer to the mail itself becomes a letter. */
+  repliesArrive?: boolean;
 }
 
 export function subject({ askerName, orderNumber, topic }: QuestionAskedProps): string {
@@ -24,7 +26,7 @@ export function subject({ askerName, orderNumber, topic }: QuestionAskedProps): 
 
 /** To whoever must answer. */
 export function QuestionAsked(props: QuestionAskedProps) {
-  const { shopName, orderNumber, instrument, topic, askerName, excerpt, dueWords, url } = props;
+  const { shopName, orderNumber, instrument, topic, askerName, excerpt, dueWords, url, repliesArrive = false } = props;
   const footer = <SoftLine>You get this because you hold the pen: this question waits on you.</SoftLine>;
   return (
     <Layout shopName={shopName} subject={subject(props)} preview={excerpt ?? 'You hold the pen.'} footer={footer}>
@@ -42,6 +44,7 @@ export function QuestionAsked(props: QuestionAskedProps) {
       </SoftLine>
       <Quoted waitsOnYou>{excerpt}</Quoted>
       {dueWords !== undefined && <Line>{`An answer is due by ${dueWords}.`}</Line>}
+      {repliesArrive && <SoftLine>{REPLY}</SoftLine>}
       <Action href={url}>Answer the question</Action>
     </Layout>
   );

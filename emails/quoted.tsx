@@ -2,6 +2,9 @@ import { Section } from 'react-email';
 import { light } from './palette';
 import { Line, Written } from './prose';
 
+/** Beside a letter that can be answered from the mail program. */
+export const REPLY = 'You can also answer this mail: what you write above the quoted part becomes your letter.';
+
 interface QuotedProps {
   /** What was written; undefined when mail may not carry it. */
   children: string | undefined;

@@ -1,15 +1,15 @@
 import type { ReactElement } from 'react';
-import { render, toPlainText } from 'react-email';
+import { plainText } from './plain-text';
 
-// Headings keep their letters as written: a name in capitals is another name. A picture is told by its alternative text.
-const inText = [
-  ...['h1', 'h2'].map((selector) => ({ selector, options: { uppercase: false } })),
-  { selector: 'img', format: 'image', options: { pathRewrite: () => '' } },
-  { selector: 'bdi[data-isolate=true]', format: 'inlineSurround', options: { prefix: '\u2068', suffix: '\u2069' } },
-];
+// Loaded when the first mail is written: a page's own bundle may not hold it.
+const server = () => import('react-dom/server');
+
+/** What mail programs take to mean: lay it out by the standard, tables included. */
+const DOCTYPE =
+  '<!DOCTYPE html PUBLIC "-//W3C//DTD XHTML 1.0 Transitional//EN" "http://www.w3.org/TR/xhtml1/DTD/xhtml1-transitional.dtd">';
 
 /** Both parts of a mail from one source, so that neither says more than the other. */
 export async function renderMail(element: ReactElement): Promise<{ html: string; text: string }> {
-  const html = await render(element);
-  return { html, text: toPlainText(html, { selectors: inText }) };
+  const html = `${DOCTYPE}${(await server()).renderToStaticMarkup(element)}`;
+  return { html, text: plainText(html) };
 }

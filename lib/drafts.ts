@@ -1,3 +1,5 @@
+import type { ReadingStand } from './readings/read-typed';
+import type { TypedReadings } from './readings/typed';
 import { openDB, type DBSchema, type IDBPDatabase } from 'idb';
 
 /** An entry that is not in the diary yet, as this phone keeps it. `note` is read with `readNote`, whatever is in it. */
@@ -12,7 +14,13 @@ export type KeptDraft = {
   posting: 'no' | 'wanted' | 'sent';
   /** In the order of the entry. */
   photos: { uploadKey: string; alt: string; photoId?: string }[];
+  /** A draft from before readings were taken has neither. */
+  readings?: KeptReadings;
+  proves?: string[];
 };
+
+/** `stand` is what the fields came to when they were last typed in. */
+export type KeptReadings = { typed: TypedReadings; stand: ReadingStand | null };
 
 export type KeptPhoto = { uploadKey: string; name: string; contentType: string; blob: Blob };
 

@@ -25,6 +25,15 @@ const schema = z.object({
   RESEND_API_KEY: z.string().min(1),
   RESEND_BASE_URL: z.url().optional(),
   MAIL_FROM: z.string().min(3).default('Flitchbook <diary@quillhaven.example>'),
+  /** Where answers by mail arrive; without it mail carries no address to reply to. */
+  MAIL_REPLY_DOMAIN: z.hostname().optional(),
+  RESEND_WEBHOOK_SECRET: z
+    .string()
+    .regex(/^whsec_[A-Za-z0-9+/]{32,}={0,2}$/, 'must be the signing secret of the webhook, whsec_ and base64')
+    .optional(),
+  /** Mails a second; the provider's own limit is 2 unless it was raised. Local stand-ins have none. */
+  MAIL_PER_SECOND: z.coerce.number().positive().optional(),
+  MAIL_AT_ONCE: z.coerce.number().int().min(1).max(64).default(8),
   PEER_ADDRESS_HEADER: z.string().optional(),
   DEMO_MAIL_ROOM_URL: z.url().optional(),
 });

@@ -4,15 +4,17 @@ type Link = { href: string; label: string; count?: number };
 
 const builds = { href: '/builds', label: 'Builds' };
 const bench = { href: '/bench', label: 'Bench' };
+const floor = { href: '/floor', label: 'Floor' };
 const access = { href: '/access', label: 'Access' };
 
-/** The pages that a role comes here for, most used first. */
-export function navigationFor(role: Role, waiting: number): Link[] {
+/** The pages that a role comes here for, most used first. `toSign`: sign-offs that wait for this person. */
+export function navigationFor(role: Role, waiting: number, toSign = 0): Link[] {
+  const signOffs = { href: '/sign-offs', label: 'Sign-offs', count: toSign > 0 ? toSign : undefined };
   const questions = { href: '/questions', label: 'Questions', count: waiting > 0 ? waiting : undefined };
-  if (role === 'builder') return [bench, builds, questions];
-  if (role === 'rep') return [builds, questions, bench];
-  if (role === 'admin') return [access, builds];
-  return [{ ...builds, label: 'Your builds' }, questions];
+  if (role === 'builder') return [bench, floor, builds, questions];
+  if (role === 'rep') return [builds, floor, questions, signOffs, bench];
+  if (role === 'admin') return [access, floor, builds];
+  return [{ ...builds, label: 'Your builds' }, questions, signOffs];
 }
 
 /** Where somebody lands after signing in. */

@@ -1,17 +1,32 @@
 import { shortDay } from '@/lib/date-words';
 
-type StageTimes = { name: string; usualDays: number; startedAt: number | null; finishedAt: number | null };
-type NeckStage = { name: string; startedOn?: string; finishedOn?: string; state: 'done' | 'now' | 'ahead' };
+type StageTimes = {
+  key?: string;
+  name: string;
+  usualDays: number;
+  startedAt: number | null;
+  finishedAt: number | null;
+};
+type NeckStage = {
+  name: string;
+  startedOn?: string;
+  finishedOn?: string;
+  state: 'done' | 'now' | 'ahead';
+  waits?: string;
+};
 
 const DAY_MS = 86_400_000;
 
-/** A build's stages as its neck shows them, dates in the reader's zone. */
-export function neckStages(stages: StageTimes[], zone: string): NeckStage[] {
-  return stages.map(({ name, startedAt, finishedAt }) => ({
+const WAITS = 'waits for a signature';
+
+/** A build's stages as its neck shows them, dates in the reader's zone; `blockedKeys` wait for the owner to sign. */
+export function neckStages(stages: StageTimes[], zone: string, blockedKeys: readonly string[] = []): NeckStage[] {
+  return stages.map(({ key, name, startedAt, finishedAt }) => ({
     name,
     startedOn: startedAt === null ? undefined : shortDay(startedAt, zone),
     finishedOn: finishedAt === null ? undefined : shortDay(finishedAt, zone),
     state: finishedAt !== null ? 'done' : startedAt !== null ? 'now' : 'ahead',
+    waits: startedAt === null && key !== undefined && blockedKeys.includes(key) ? WAITS : undefined,
   }));
 }
 

@@ -13,6 +13,8 @@ export const limits = {
   upload: { capacity: 60, perMs: HOUR_MS },
   upload_step: { capacity: 200, perMs: 10 * MINUTE_MS },
   visit: { capacity: 60, perMs: 10 * MINUTE_MS },
+  check_line: { capacity: 300, perMs: 10 * MINUTE_MS },
+  paper: { capacity: 20, perMs: 10 * MINUTE_MS },
   manage: { capacity: 120, perMs: 10 * MINUTE_MS },
 } as const;
 

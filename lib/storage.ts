@@ -58,6 +58,18 @@ export function presignView(key: string, nowMs: number): Promise<string> {
   return getSignedUrl(s3(), command, { expiresIn: LINK_SECONDS, signingDate });
 }
 
+/** A link that opens one stored PDF, as a PDF and nothing else, and dies within five minutes. */
+export function presignDocument(key: string, fileName: string, nowMs: number): Promise<string> {
+  const command = new GetObjectCommand({
+    ...at(key),
+    ResponseContentType: 'application/pdf',
+    ResponseContentDisposition: `inline; filename="${fileName}"`,
+    ResponseCacheControl: `private, max-age=${LINK_SECONDS}`,
+  });
+  const signingDate = new Date(Math.floor(nowMs / LINK_STEP_MS) * LINK_STEP_MS);
+  return getSignedUrl(s3(), command, { expiresIn: LINK_SECONDS, signingDate });
+}
+
 /** What the store holds under a key, or null. */
 export async function findObject(key: string) {
   try {

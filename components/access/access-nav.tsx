@@ -4,14 +4,14 @@ import Link from 'next/link';
 import { usePathname } from 'next/navigation';
 import { currentHref } from '@/components/shell/current-href';
 
-/** The access pages, side by side. */
-export function AccessNav({ links }: { links: { href: string; label: string }[] }) {
+/** Pages that belong together, side by side. */
+export function AccessNav({ label = 'Access', links }: { label?: string; links: { href: string; label: string }[] }) {
   const current = currentHref(
     usePathname(),
     links.map(({ href }) => href),
   );
   return (
-    <nav aria-label="Access" className="border-b border-line bg-sheet print:hidden">
+    <nav aria-label={label} className="border-b border-line bg-sheet print:hidden">
       <ul role="list" className="mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {links.map(({ href, label }) => (
           <li key={href} className="md:first:-ml-3">

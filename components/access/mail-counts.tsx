@@ -1,6 +1,6 @@
-import type { TroubledMail } from '@/db/queries/outbox';
+import type { WatchedMail } from '@/db/queries/mail-watch';
 
-type MailState = TroubledMail['state'];
+type MailState = WatchedMail['state'];
 
 const figures: { state: MailState; words: string; isTrouble?: boolean }[] = [
   { state: 'waiting', words: 'waiting' },

@@ -1,20 +1,13 @@
 import { ButtonForm } from '@/components/people/button-form';
-import type { TroubledMail } from '@/db/queries/outbox';
+import type { WatchedMail } from '@/db/queries/mail-watch';
 import type { FormAction } from '@/lib/action';
 import { clockWords, dayWords } from '@/lib/date-words';
+import { mailRules } from '@/lib/mail/choices';
 
-const kindWords: Record<TroubledMail['kind'], string> = {
-  sign_in: 'sign-in link',
-  invitation: 'invitation',
-  digest: 'diary mail',
-  question: 'a question',
-  letter: 'a letter',
-};
+type MailListProps = { mails: WatchedMail[]; retry: FormAction; sendAgain: FormAction; zone: string; nowMs: number };
 
-type MailListProps = { mails: TroubledMail[]; retry: FormAction; zone: string; nowMs: number };
-
-/** Mail that has not gone out as it should, why, and what can be done about it. */
-export function MailList({ mails, retry, zone, nowMs }: MailListProps) {
+/** Mail, what became of it, why, and what can be done about it. */
+export function MailList({ mails, retry, sendAgain, zone, nowMs }: MailListProps) {
   const when = (ms: number) => `${dayWords(ms, zone, nowMs)} at ${clockWords(ms, zone)}`;
   return (
     <ul role="list" className="border-t-2 border-ink">
@@ -28,33 +21,63 @@ export function MailList({ mails, retry, zone, nowMs }: MailListProps) {
               <bdi>{mail.person}</bdi>
             </p>
             <p className="text-sm text-soft">
-              {kindWords[mail.kind]}, written {when(mail.createdAt)}
+              {mailRules[mail.kind].words}, written {when(mail.createdAt)}
             </p>
           </div>
-          <div className="min-w-0 break-words">
-            <p>
-              <span className={mail.state === 'waiting' ? undefined : 'font-semibold text-late'}>{mail.state}</span>
-              {mail.attempts > 0 && `, tried ${mail.attempts === 1 ? 'once' : `${mail.attempts} times`}`}
-            </p>
-            {mail.problem && <p className="text-sm text-soft">{mail.problem}</p>}
-          </div>
-          <NextStep mail={mail} retry={retry} nextTry={when(mail.nextAttemptAt)} />
+          <MailState mail={mail} when={when} />
+          <NextStep mail={mail} retry={retry} sendAgain={sendAgain} nextTry={when(mail.nextAttemptAt)} />
         </li>
       ))}
     </ul>
   );
 }
 
-function NextStep({ mail, retry, nextTry }: { mail: TroubledMail; retry: FormAction; nextTry: string }) {
+const isTrouble = ({ state, bouncedAt, complainedAt }: WatchedMail) =>
+  state === 'failed' || state === 'parked' || bouncedAt !== null || complainedAt !== null;
+
+function MailState({ mail, when }: { mail: WatchedMail; when: (ms: number) => string }) {
+  const { attempts, sentAt, deliveredAt, bouncedAt, complainedAt } = mail;
+  const told = [
+    attempts > 1 || (attempts === 1 && mail.state !== 'sent')
+      ? `tried ${attempts === 1 ? 'once' : `${attempts} times`}`
+      : '',
+    sentAt === null ? '' : when(sentAt),
+    deliveredAt === null ? '' : `delivered ${when(deliveredAt)}`,
+    bouncedAt === null ? '' : `came back ${when(bouncedAt)}`,
+    complainedAt === null ? '' : `called unwanted ${when(complainedAt)}`,
+  ];
+  return (
+    <div className="min-w-0 break-words">
+      <p>
+        <span className={isTrouble(mail) ? 'font-semibold text-late' : undefined}>{mail.state}</span>
+        {told.filter(Boolean).map((words) => `, ${words}`)}
+      </p>
+      {mail.problem && <p className="text-sm text-soft">{mail.problem}</p>}
+    </div>
+  );
+}
+
+type NextStepProps = { mail: WatchedMail; retry: FormAction; sendAgain: FormAction; nextTry: string };
+
+function NextStep({ mail, retry, sendAgain, nextTry }: NextStepProps) {
   const quiet = 'text-sm text-soft';
-  if (mail.state === 'waiting') return <p className={quiet}>Tried again by itself on {nextTry}.</p>;
-  if (mail.state === 'parked')
-    return <p className={quiet}>It may have arrived. Sent again it could come twice, so it stays here.</p>;
+  const { words } = mailRules[mail.kind];
+  if (mail.state === 'waiting' || mail.state === 'sending')
+    return <p className={quiet}>Goes out by itself on {nextTry}.</p>;
   if (mail.kind === 'sign_in')
     return <p className={quiet}>Its link is dead by now. Its reader asks for a new one at the sign-in page.</p>;
+  if (mail.state === 'failed')
+    return (
+      <ButtonForm send={retry} values={{ mailId: mail.id }} name={`Try again: ${words} to ${mail.person}`}>
+        Try again
+      </ButtonForm>
+    );
   return (
-    <ButtonForm send={retry} values={{ mailId: mail.id }} name={`Try again: ${kindWords[mail.kind]} to ${mail.person}`}>
-      Try again
-    </ButtonForm>
+    <div className="grid justify-items-start gap-2">
+      {mail.state === 'parked' && <p className={quiet}>It may have arrived. Sent again it could come twice.</p>}
+      <ButtonForm send={sendAgain} values={{ mailId: mail.id }} name={`Send once more: ${words} to ${mail.person}`}>
+        Send once more
+      </ButtonForm>
+    </div>
   );
 }

@@ -37,6 +37,9 @@ export function EditForm({ orderNumber, entryId, revision, body }: EditFormProps
         disabled={isBusy}
         invalid={state.step === 'refused' ? state.note : undefined}
       />
+      <p className="text-soft">
+        Photos and readings stay as they were posted. To change a reading, withdraw the entry and post it again.
+      </p>
       <EditTrouble state={state} note={note} href={`/bench/${orderNumber}/entries/${entryId}`} />
       <Button size="bench" isWide disabled={isBusy} onClick={() => void save()}>
         {state.step === 'saving' ? 'Saving' : 'Save the note'}

@@ -1,6 +1,7 @@
 import { readDraftNote, type BenchPhoto, type Draft } from './draft-state';
 import { KEPT_FOR_PHOTOS, type Posting } from './posting-state';
 import type { KeptDraft, KeptPhoto } from '@/lib/drafts';
+import { nothingTyped } from '@/lib/readings/typed';
 import { PHOTO_TYPES } from '@/lib/photos/limits';
 
 export function blankDraft(idempotencyKey: string): Draft {
@@ -11,15 +12,18 @@ export function blankDraft(idempotencyKey: string): Draft {
     startStage: false,
     audience: 'buyer',
     photos: [],
+    readings: { typed: nothingTyped, stand: null },
+    proves: [],
     posting: { step: 'writing' },
   };
 }
 
 /** What is written down of a draft; its photos' bytes are kept once, when they are chosen. */
 export function toKept(draft: Draft): KeptDraft {
-  const { idempotencyKey, note, stageId, startStage, audience, posting } = draft;
+  const { idempotencyKey, note, stageId, startStage, audience, readings, proves, posting } = draft;
   const photos = draft.photos.map(({ uploadKey, alt, photoId }) => ({ uploadKey, alt, photoId }));
-  return { idempotencyKey, note, stageId, startStage, audience, posting: postingMark(posting), photos };
+  const written = { idempotencyKey, note, stageId, startStage, audience, readings, proves };
+  return { ...written, posting: postingMark(posting), photos };
 }
 
 function postingMark(posting: Posting): KeptDraft['posting'] {
@@ -40,7 +44,13 @@ export function fromKept(kept: { draft?: KeptDraft; photos: KeptPhoto[] }, fresh
   return { ...blankDraft(draft.idempotencyKey), ...chosen(draft), note: readDraftNote(draft.note), photos, posting };
 }
 
-const chosen = ({ stageId, startStage, audience }: KeptDraft) => ({ stageId, startStage, audience });
+const chosen = ({ stageId, startStage, audience, readings, proves }: KeptDraft) => ({
+  stageId,
+  startStage,
+  audience,
+  readings: { typed: { ...nothingTyped, ...readings?.typed }, stand: readings?.stand ?? null },
+  proves: proves ?? [],
+});
 
 function inOrder({ draft, photos }: { draft?: KeptDraft; photos: KeptPhoto[] }): BenchPhoto[] {
   const listed = draft?.photos ?? [];

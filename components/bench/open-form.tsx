@@ -13,6 +13,7 @@ import { entryFrom } from './post-entry';
 import { SignalBanner } from './signal-banner';
 import { stageOf } from './stage-choice';
 import { StageField } from './stage-field';
+import { StageParts } from './stage-parts';
 import { useKeepDraft } from './use-keep-draft';
 import { usePhotos } from './use-photos';
 import { usePosting } from './use-posting';
@@ -22,7 +23,7 @@ import { LazyNoteEditor } from '@/components/rich-text/lazy-note-editor';
 type OpenFormProps = PostFormProps & { opened: OpenedDraft; isKeeping: boolean; onDiscarded: () => void };
 
 /** The form itself, once the draft is there. Give it another `key` for another draft. */
-export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, onDiscarded }: OpenFormProps) {
+export function OpenForm({ orderNumber, stages, bench, isHeldFirst, opened, isKeeping, onDiscarded }: OpenFormProps) {
   const { keeper } = opened;
   const [first] = useState<Draft>(opened.draft);
   const [draft, dispatch] = useReducer(draftReducer, first);
@@ -32,7 +33,7 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
     draft,
     dispatch,
     keeper,
-    entryFrom: (whole, ready) => entryFrom({ draft: whole, orderNumber, stages, photos: ready }),
+    entryFrom: (whole, ready) => entryFrom({ draft: whole, orderNumber, stages, items: bench.items, photos: ready }),
     onPhotosMissing: photos.recheck,
   });
   const tryAll = () => {
@@ -43,6 +44,7 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
   const problem = draft.posting.step === 'writing' ? draft.posting.problem : undefined;
   const form = useRef<HTMLFormElement>(null);
   useShowProblem(form, problem);
+  const stageId = stageOf(stages, draft.stageId);
   return (
     <>
       <SignalBanner draft={draft} isKeeping={isKeeping} />
@@ -63,9 +65,18 @@ export function OpenForm({ orderNumber, stages, isHeldFirst, opened, isKeeping, 
         />
         <StageField
           stages={stages}
-          stageId={stageOf(stages, draft.stageId)}
+          stageId={stageId}
           startStage={draft.startStage}
           error={problem?.fields.stageId}
+          isLocked={isLocked}
+          dispatch={dispatch}
+        />
+        <StageParts
+          draft={draft}
+          stages={stages}
+          stageId={stageId}
+          bench={bench}
+          fields={problem?.fields ?? {}}
           isLocked={isLocked}
           dispatch={dispatch}
         />

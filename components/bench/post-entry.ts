@@ -1,8 +1,11 @@
 import type { Audience, Draft } from './draft-state';
 import type { PostingEvent, Problem, ProblemField } from './posting-state';
+import { provenAt } from './proof-choice';
 import { stageOf, type StageChoice } from './stage-choice';
 import type { NoteDoc } from '@/lib/rich-text/doc';
 import { callShop, isPassing, type Answer } from '@/lib/photos/upload-answer';
+import type { BenchItem } from '@/lib/readings/plan';
+import type { NewReading } from '@/lib/readings/reading';
 import { plainNote } from '@/lib/rich-text/plain-text';
 
 export type EntryToPost = {
@@ -13,6 +16,8 @@ export type EntryToPost = {
   audience: Audience;
   note: NoteDoc;
   photos: { id: string; alt: string }[];
+  readings: NewReading[];
+  proves: string[];
 };
 
 type Posted = { id: string; state: 'held' | 'published' | 'withdrawn' };
@@ -44,7 +49,7 @@ function kept(message: string, over: { isSignedOut?: boolean; mayHaveArrived?: b
   return { type: 'send-kept', message, isSignedOut: false, mayHaveArrived: false, ...over };
 }
 
-const shown: readonly ProblemField[] = ['note', 'photos', 'stageId', 'audience'];
+const shown: readonly ProblemField[] = ['note', 'photos', 'stageId', 'audience', 'readings', 'proves'];
 
 /** Sentences go to the fields they belong to; one without a field on this page stands by the button. */
 function problemFrom(message: string | undefined, sentences: Record<string, string>): Problem {
@@ -57,10 +62,28 @@ function problemFrom(message: string | undefined, sentences: Record<string, stri
   return problem;
 }
 
-type Parts = { draft: Draft; orderNumber: string; stages: StageChoice[]; photos: EntryToPost['photos'] };
+type Parts = {
+  draft: Draft;
+  orderNumber: string;
+  stages: StageChoice[];
+  items: BenchItem[];
+  photos: EntryToPost['photos'];
+};
 
-export function entryFrom({ draft, orderNumber, stages, photos }: Parts): EntryToPost {
+/** Readings and ticks that belong to another stage stay on the phone. */
+export function entryFrom({ draft, orderNumber, stages, items, photos }: Parts): EntryToPost {
   const { idempotencyKey, startStage, audience, note } = draft;
   const stageId = stageOf(stages, draft.stageId);
-  return { orderNumber, idempotencyKey, stageId, startStage, audience, note: note ?? plainNote(''), photos };
+  const { stand } = draft.readings;
+  return {
+    orderNumber,
+    idempotencyKey,
+    stageId,
+    startStage,
+    audience,
+    note: note ?? plainNote(''),
+    photos,
+    readings: stand?.stageId === stageId ? stand.readings : [],
+    proves: provenAt(items, stages, stageId).flatMap(({ key }) => (draft.proves.includes(key) ? [key] : [])),
+  };
 }

@@ -37,6 +37,7 @@ export function PostFoot({ draft, dispatch, isReading, onTryNow }: PostFootProps
         {labels[posting.step]}
       </Button>
       <p id={`${id}-why`} className="text-center text-soft empty:hidden">
+        {isWriting && upCount === 0 && outsideWords(draft)}
         {isWriting && upCount > 0 && `${upCount === 1 ? 'A photo is' : `${upCount} photos are`} still going up.`}
         {posting.step === 'kept' &&
           posting.wasSent &&
@@ -49,4 +50,11 @@ export function PostFoot({ draft, dispatch, isReading, onTryNow }: PostFootProps
       )}
     </div>
   );
+}
+
+/** Never in the way of posting: what was measured is what is written down. */
+function outsideWords({ readings: { stand } }: Draft): string | null {
+  if (!stand || stand.outsideCount === 0) return null;
+  const which = stand.outsideCount === 1 ? 'One reading is' : `${stand.outsideCount} readings are`;
+  return `${which} out of tolerance. It is posted as measured; say in the note what comes of it.`;
 }

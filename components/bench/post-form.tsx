@@ -8,11 +8,14 @@ import { OpenElsewhere } from './open-elsewhere';
 import type { StageChoice } from './stage-choice';
 import { useSoleTab } from './use-sole-tab';
 import { SkeletonText } from '@/components/ui/skeleton';
+import type { BenchBuild } from '@/lib/readings/plan';
 
 export type PostFormProps = {
   viewerId: string;
   orderNumber: string;
   stages: StageChoice[];
+  /** What readings and proof are measured against. */
+  bench: BenchBuild;
   /** What this person posts for the buyer waits for a rep's release. */
   isHeldFirst: boolean;
 };

@@ -1,4 +1,4 @@
-export type ProblemField = 'note' | 'photos' | 'stageId' | 'audience';
+export type ProblemField = 'note' | 'photos' | 'stageId' | 'audience' | 'readings' | 'proves';
 
 export type Problem = {
   message?: string;
@@ -54,6 +54,6 @@ export function nextPosting(posting: Posting, event: PostingEvent): Posting {
 export function mended(posting: Posting, field: ProblemField): Posting {
   if (posting.step !== 'writing' || !posting.problem) return posting;
   const fields = { ...posting.problem.fields, [field]: undefined };
-  if (field === 'photos') fields.note = undefined;
+  if (field === 'photos' || field === 'readings') fields.note = undefined;
   return { step: 'writing', problem: { fields, isTouched: true } };
 }

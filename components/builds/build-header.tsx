@@ -1,13 +1,26 @@
+import type { ReactNode } from 'react';
 import { NeckTrack } from './neck-track';
 import type { BuildHead, StageRow } from '@/db/queries/builds';
 import { dayWords } from '@/lib/date-words';
+import { leavingWords } from '@/lib/leaving-words';
 import { neckStages, nowShare } from '@/lib/neck-stages';
 
-type BuildHeaderProps = { build: BuildHead; stages: StageRow[]; ownerName?: string; zone: string; nowMs: number };
+type BuildHeaderProps = {
+  build: BuildHead;
+  stages: StageRow[];
+  /** Stages that wait for the owner to sign. */
+  blockedKeys?: readonly string[];
+  ownerName?: string;
+  zone: string;
+  nowMs: number;
+  /** When it will be ready. */
+  children?: ReactNode;
+};
 
 /** What is being made, for whom, and how far it is. */
-export function BuildHeader({ build, stages, ownerName, zone, nowMs }: BuildHeaderProps) {
+export function BuildHeader({ build, stages, blockedKeys, ownerName, zone, nowMs, children }: BuildHeaderProps) {
   const facts = [build.finishName, `${build.scaleLengthIn} in scale`, ownerName && `built for ${ownerName}`];
+  const leaving = leavingWords(build, (ms) => dayWords(ms, zone, nowMs));
   return (
     <header className="border-b border-line bg-sheet">
       <div className="mx-auto grid max-w-[82rem] gap-6 px-4.5 pt-6 pb-5 md:px-10 md:pt-10 md:pb-8">
@@ -20,13 +33,15 @@ export function BuildHeader({ build, stages, ownerName, zone, nowMs }: BuildHead
             <FinishDot />
             <span>{facts.filter(Boolean).join(' · ')}</span>
           </p>
+          {leaving !== null && <p className="mt-2 font-semibold">{leaving}</p>}
           {build.heldUntilAt !== null && build.heldUntilAt > nowMs && (
             <p className="mt-2 font-semibold text-brass-deep">
               Held from view until {dayWords(build.heldUntilAt, zone, nowMs)}
             </p>
           )}
+          {children}
         </div>
-        <NeckTrack stages={neckStages(stages, zone)} nowShare={nowShare(stages, nowMs)} />
+        <NeckTrack stages={neckStages(stages, zone, blockedKeys)} nowShare={nowShare(stages, nowMs)} />
       </div>
     </header>
   );

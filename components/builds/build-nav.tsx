@@ -26,7 +26,7 @@ export function BuildNav({ links, instrument, isAlone }: BuildNavProps) {
       <ul role="list" className="mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {isAlone && (
           <li className="md:hidden">
-            <Link href="/builds" className="flex min-h-11 items-center px-3 text-soft">
+            <Link href="/builds" className="flex min-h-11 items-center px-3 whitespace-nowrap text-soft">
               Your builds
             </Link>
           </li>
@@ -36,7 +36,7 @@ export function BuildNav({ links, instrument, isAlone }: BuildNavProps) {
             <Link
               href={href}
               aria-current={href === current ? 'page' : undefined}
-              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 text-soft aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink"
+              className="flex min-h-11 items-center border-b-[3px] border-transparent px-3 whitespace-nowrap text-soft aria-[current]:border-finish-deep aria-[current]:font-semibold aria-[current]:text-ink"
             >
               {label}
             </Link>

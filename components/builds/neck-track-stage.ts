@@ -6,6 +6,8 @@ export type NeckStage = {
   state: 'done' | 'now' | 'ahead';
   /** Shown beside the stage of now: "coat 4 of 9". */
   noteShort?: string;
+  /** What a stage ahead waits for: "waits for a signature". */
+  waits?: string;
 };
 
 export type NeckDateLabels = {
@@ -30,7 +32,7 @@ export function nowNote(stage: NeckStage, dates: NeckDateLabels): string {
 export function stageDate(stage: NeckStage, isLast: boolean, dates: NeckDateLabels): string {
   if (stage.state === 'now') return dates.now ?? (stage.startedOn ? `since ${stage.startedOn}` : '');
   if (stage.state === 'done') return stage.startedOn ?? stage.finishedOn ?? '';
-  return isLast ? (dates.end ?? '') : '';
+  return stage.waits ?? (isLast ? (dates.end ?? '') : '');
 }
 
 /** How a stage stands, in words. */
@@ -40,7 +42,7 @@ export function stageState(stage: NeckStage, isLast: boolean, dates: NeckDateLab
     const days = [stage.startedOn, stage.finishedOn].filter(Boolean).join(' to ');
     return days ? `finished, ${days}` : 'finished';
   }
-  return isLast && dates.end ? `ahead, ${dates.end}` : 'ahead';
+  return ['ahead', stage.waits, isLast && dates.end].filter(Boolean).join(', ');
 }
 
 /** Where a build stands, in one sentence for a strip that shows no names. */

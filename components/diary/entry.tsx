@@ -2,6 +2,7 @@
 
 import dynamic from 'next/dynamic';
 import { useState } from 'react';
+import { EntryReadings } from './entry-readings';
 import { PhotoGrid } from '@/components/photos/photo-grid';
 import { LargeView } from '@/components/photos/large-view';
 import { NoteText } from '@/components/rich-text/note-text';
@@ -47,6 +48,7 @@ export function Entry({ entry, isFirst, ...view }: EntryView & { entry: DiaryEnt
         </p>
         {!isBlank(entry.body) && <NoteText doc={entry.body} />}
         <PhotoGrid photos={entry.photos} isFirst={isFirst} onOpen={setOpenAt} />
+        <EntryReadings entry={entry} orderNumber={view.orderNumber} />
         <Foot entry={entry} {...view} />
       </article>
       {openAt !== null && <LargeView photos={entry.photos} startAt={openAt} onClose={() => setOpenAt(null)} />}

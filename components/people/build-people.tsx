@@ -4,9 +4,21 @@ import { workWords } from './person-words';
 import type { Role } from '@/lib/access';
 
 type Staff = { id: string; name: string; role: Role; department: string | null };
-type Client = { id: string; name: string; role: Role; standing: 'owner' | 'companion'; email: string | null };
+type Client = {
+  id: string;
+  name: string;
+  role: Role;
+  standing: 'owner' | 'companion';
+  email: string | null;
+  unreachableWhy: 'bounced' | 'complained' | null;
+};
 
 type BuildPeopleProps = { staff: Staff[]; clients: Client[]; viewerId: string };
+
+const unreachableWords = {
+  bounced: 'Mail comes back from this address, so none goes out. Ask for another one.',
+  complained: 'Our mail was called unwanted there, so none goes out. Ask how to reach them.',
+};
 
 /** The two sides of a build. Addresses stand only where the query gave them. */
 export function BuildPeople({ staff, clients, viewerId }: BuildPeopleProps) {
@@ -31,6 +43,9 @@ export function BuildPeople({ staff, clients, viewerId }: BuildPeopleProps) {
                   <>
                     {person.standing === 'owner' ? `owner, ${person.role}` : 'companion, looks on'}
                     {person.email && person.id !== viewerId && <span className="block break-all">{person.email}</span>}
+                    {person.unreachableWhy && (
+                      <span className="block font-semibold text-late">{unreachableWords[person.unreachableWhy]}</span>
+                    )}
                   </>
                 }
               />

@@ -104,6 +104,61 @@ const sentences: Record<AuditAction, (parts: Parts) => ReactNode> = {
       {who} released an entry of {build}
     </>
   ),
+  sign_off_asked: ({ who, build }) => (
+    <>
+      {who} put something of {build} before its owner to sign
+    </>
+  ),
+  sign_off_withdrawn: ({ who, build }) => (
+    <>
+      {who} took back what its owner was to sign for {build}
+    </>
+  ),
+  sign_off_signed: ({ who, build }) => (
+    <>
+      {who} signed for {build}
+    </>
+  ),
+  sign_off_change_asked: ({ who, build }) => (
+    <>
+      {who} asked for a change instead of signing for {build}
+    </>
+  ),
+  check_passed: ({ who, build, reason }) => (
+    <>
+      {who} passed the inspection {reason} of {build}
+    </>
+  ),
+  check_failed: ({ who, build, reason }) => (
+    <>
+      {who} failed the inspection {reason} of {build}
+    </>
+  ),
+  check_told: ({ who, build }) => (
+    <>
+      {who} told the player of a failed inspection of {build}
+    </>
+  ),
+  check_kept: ({ who, build }) => (
+    <>
+      {who} kept a failed inspection of {build} in the shop
+    </>
+  ),
+  final_check_passed: ({ who, build }) => (
+    <>
+      {who} passed the final check of {build}
+    </>
+  ),
+  shipped: ({ who, build, reason }) => (
+    <>
+      {who} shipped {build} with {reason}
+    </>
+  ),
+  delivered: ({ who, build }) => (
+    <>
+      {who} marked {build} as delivered
+    </>
+  ),
   build_read: ({ who, build }) => (
     <>
       {who} asked for {build}

@@ -3,6 +3,7 @@
 import Link from 'next/link';
 import { useRouter } from 'next/navigation';
 import type { FormEvent, ReactNode } from 'react';
+import { LetterPhotos } from './letter-photos';
 import { RefusedNotice } from './refused-notice';
 import { useDraftForm, useIsBrowser } from './use-draft-form';
 import { LazyNoteEditor } from '@/components/rich-text/lazy-note-editor';
@@ -24,7 +25,7 @@ type AskFormProps = {
   quoted?: ReactNode;
 };
 
-const shownFields = ['topicId', 'subject', 'note'];
+const shownFields = ['topicId', 'subject', 'note', 'photos'];
 
 export function AskForm(props: AskFormProps) {
   const isBrowser = useIsBrowser();
@@ -33,14 +34,16 @@ export function AskForm(props: AskFormProps) {
 
 function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: AskFormProps & { isBrowser: boolean }) {
   const router = useRouter();
-  const form = useDraftForm(`question/${viewerId}/${orderNumber}`, isBrowser);
-  const { draft, change, refused, isSending } = form;
+  const form = useDraftForm({ name: `question/${viewerId}/${orderNumber}`, orderNumber, isBrowser });
+  const { draft, change, photos, refused, isSending } = form;
   const topic = topics.find(({ id }) => id === draft.topicId);
 
   async function submit(event: FormEvent) {
     event.preventDefault();
+    const chosen = form.photosToSend();
+    if (chosen === null) return;
     const note = draft.note ?? plainNote('');
-    const answer = await form.send('/api/questions', { ...draft, note, orderNumber, entryId });
+    const answer = await form.send('/api/questions', { ...draft, note, photos: chosen, orderNumber, entryId });
     const id = wordIn(answer, 'id');
     if (id) router.push(`/questions/${id}`);
   }
@@ -75,6 +78,7 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
         disabled={isSending}
         invalid={refused?.fields.note}
       />
+      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isSending} />
       <RefusedNotice refused={refused} shown={shownFields} />
       <div className="flex flex-wrap items-center gap-x-5 gap-y-3">
         <Button type="submit" disabled={isSending} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
@@ -91,7 +95,9 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
   );
 }
 
-function answererWords({ answerer }: AskableTopic): string {
-  if (!answerer) return 'Nobody on your build answers this yet. It is kept for the rep the shop puts on it.';
-  return `${answerer.name}, ${partWords(answerer)}, answers and gets it by mail at once.`;
+function answererWords({ answerer, dueHours }: AskableTopic): string {
+  if (!answerer)
+    return 'Nobody on your build answers this just now. Ask all the same: the shop has it and finds somebody.';
+  const hours = dueHours === 1 ? 'one working hour' : `${dueHours} working hours`;
+  return `${answerer.name}, ${partWords(answerer)}, answers, as a rule within ${hours}, and gets it by mail.`;
 }

@@ -5,7 +5,7 @@ export function NextPageLink({ path, next }: { path: string; next: string | null
   if (!next) return null;
   return (
     <div>
-      <LinkButton variant="quiet" href={`${path}?after=${next}`}>
+      <LinkButton variant="quiet" href={`${path}${path.includes('?') ? '&' : '?'}after=${next}`}>
         Show the questions after these
       </LinkButton>
     </div>

@@ -33,7 +33,7 @@ export function QuestionHeader({ question, reader }: QuestionHeaderProps) {
             <StandingWords question={question} reader={reader} />
           </Fact>
           <Fact name={isMine ? 'hold the pen' : 'holds the pen'}>
-            <bdi>{isMine ? 'You' : (question.penHolderName ?? 'Nobody yet')}</bdi>
+            <bdi>{isMine ? 'You' : (question.penHolderName ?? (reader.isStaff ? 'Nobody yet' : 'The shop'))}</bdi>
           </Fact>
           {heldUntilAt !== null && heldUntilAt > reader.nowMs && (
             <Fact name="held from view until">{dayWords(heldUntilAt, reader.zone, reader.nowMs)}</Fact>

@@ -34,7 +34,11 @@ function QuestionTable({ caption, questions, reader }: QuestionListProps) {
       {questions.map((question) => (
         <Row key={question.id} className="hover:bg-tint">
           <RowHead note={question.topic}>
-            <Link href={`/questions/${question.id}`} className="text-finish-deep wrap-anywhere hover:underline">
+            <Link
+              data-question-link
+              href={`/questions/${question.id}`}
+              className="text-finish-deep wrap-anywhere hover:underline"
+            >
               <bdi>{question.subject}</bdi>
             </Link>
           </RowHead>
@@ -67,6 +71,7 @@ function PhoneRow({ question, reader }: { question: QuestionRow; reader: ListRea
         {question.topic}
       </p>
       <Link
+        data-question-link
         href={`/questions/${question.id}`}
         className="text-lg leading-snug font-semibold wrap-anywhere after:absolute after:inset-0"
       >

@@ -2,20 +2,26 @@
 
 import { useRouter } from 'next/navigation';
 import { useState, type FormEvent } from 'react';
+import { LetterPhotos } from './letter-photos';
+import { PhraseField, type FilledPhrase } from './phrase-field';
 import { RefusedNotice } from './refused-notice';
 import { useDraftForm, useIsBrowser } from './use-draft-form';
 import { LazyNoteEditor } from '@/components/rich-text/lazy-note-editor';
 import { Button } from '@/components/ui/button';
+import { appendPhrase } from '@/lib/questions/append-phrase';
 import { plainNote } from '@/lib/rich-text/plain-text';
 
 type ReplyFormProps = {
   questionId: string;
+  orderNumber: string;
   /** Drafts are kept for each person: a tab may see another one sign in. */
   viewerId: string;
   label: string;
   button: string;
   /** Who gets it by mail, as a sentence. */
   mailWords: string;
+  /** Saved phrases with their fields filled in; none for the client side. */
+  phrases: FilledPhrase[];
 };
 
 export function ReplyForm(props: ReplyFormProps) {
@@ -23,43 +29,56 @@ export function ReplyForm(props: ReplyFormProps) {
   return <Form key={String(isBrowser)} isBrowser={isBrowser} {...props} />;
 }
 
-function Form({ questionId, viewerId, isBrowser, label, button, mailWords }: ReplyFormProps & { isBrowser: boolean }) {
+type FormProps = ReplyFormProps & { isBrowser: boolean };
+
+function Form({ questionId, orderNumber, viewerId, isBrowser, label, button, mailWords, phrases }: FormProps) {
   const router = useRouter();
   const [isSent, setIsSent] = useState(false);
-  const { draft, change, send, refused, isSending } = useDraftForm(`letter/${viewerId}/${questionId}`, isBrowser);
+  const [insertions, setInsertions] = useState(0);
+  const form = useDraftForm({ name: `letter/${viewerId}/${questionId}`, orderNumber, isBrowser });
+  const { draft, change, photos, refused, isSending } = form;
 
   async function submit(event: FormEvent) {
     event.preventDefault();
     setIsSent(false);
+    const chosen = form.photosToSend();
+    if (chosen === null) return;
     const { idempotencyKey, note } = draft;
-    const answer = await send(`/api/questions/${questionId}/letters`, {
-      idempotencyKey,
-      note: note ?? plainNote(''),
-    });
+    const letter = { idempotencyKey, note: note ?? plainNote(''), photos: chosen };
+    const answer = await form.send(`/api/questions/${questionId}/letters`, letter);
     if (answer === null) return;
     setIsSent(true);
     router.refresh();
   }
 
+  function insert(text: string) {
+    change({ note: appendPhrase(draft.note, text) });
+    setInsertions((count) => count + 1);
+  }
+
   return (
     <form onSubmit={submit} className="grid gap-4">
+      {phrases.length > 0 && <PhraseField phrases={phrases} isLocked={isSending} onInsert={insert} />}
       <LazyNoteEditor
-        key={draft.idempotencyKey}
+        key={`${draft.idempotencyKey} ${insertions}`}
         initial={draft.note ?? undefined}
         label={label}
         onChange={(note) => change({ note })}
         disabled={isSending}
         invalid={refused?.fields.note}
       />
-      {!refused?.fields.note && <RefusedNotice refused={refused} shown={['note']} />}
+      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isSending} />
+      {!refused?.fields.note && !refused?.fields.photos && (
+        <RefusedNotice refused={refused} shown={['note', 'photos']} />
+      )}
       <div className="flex flex-wrap items-center justify-between gap-x-6 gap-y-3">
-        <Button type="submit" size="normal" disabled={isSending} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
+        <Button type="submit" disabled={isSending} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
           {isSending ? 'Sending' : button}
         </Button>
         <p className="text-sm text-soft">{mailWords}</p>
       </div>
       <p role="status" className="text-sm font-semibold text-finish-deep empty:hidden">
-        {isSent && !refused ? 'Sent.' : ''}
+        {isSent && !refused ? 'Sent. For two minutes you can still correct it.' : ''}
       </p>
     </form>
   );

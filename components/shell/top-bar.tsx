@@ -27,7 +27,14 @@ export function TopBar({ shopName, links, personName, homeHref = '/' }: TopBarPr
           </span>
           <span className="text-on-night-soft">{shopName}</span>
         </span>
-        <Link href="/me" className="ml-auto flex h-14 items-center md:order-last md:ml-5">
+        <Link
+          href="/search"
+          className="ml-auto flex size-12 items-center justify-center text-on-night-soft hover:text-on-night md:order-last md:ml-3"
+        >
+          <SearchSign />
+          <span className="sr-only">Search</span>
+        </Link>
+        <Link href="/me" className="flex h-14 items-center md:order-last md:ml-2">
           <Avatar name={personName} className="[--finish-deep:#00464c] [--tint:#e0f1f2]" />
           <span className="sr-only">{personName}: your settings</span>
         </Link>
@@ -39,6 +46,15 @@ export function TopBar({ shopName, links, personName, homeHref = '/' }: TopBarPr
         </nav>
       </div>
     </header>
+  );
+}
+
+function SearchSign() {
+  return (
+    <svg viewBox="0 0 20 20" aria-hidden="true" className="size-5 fill-none stroke-current stroke-[1.75]">
+      <circle cx="8.5" cy="8.5" r="5.5" />
+      <path d="m12.7 12.7 4.8 4.8" strokeLinecap="round" />
+    </svg>
   );
 }
 

@@ -51,7 +51,7 @@ const lookOf = ({ finish, instrument }: PlannedBuild) => ({ finish, body: instru
 const bodyOf = (text: string) => JSON.stringify(plainNote(text));
 
 function photoCount({ isFeatured, deliveredAt }: PlannedBuild, index: number): number {
-  if (deliveredAt !== null) return 0;
+  if (deliveredAt !== null && !isFeatured) return 0;
   return isFeatured ? (index === 0 ? 3 : 1) : 1;
 }
 

@@ -130,3 +130,38 @@ export const buyerQuestions = [
     answer: 'Gladly. Call from the gate, and somebody will bring you to the bench it is on.',
   },
 ] as const;
+
+/** What the rep asks beside a question, and what the bench answers: read at the shop only. */
+export const marginWords = [
+  {
+    asks: 'Before I promise anything: is there still material on the edge to lighten it?',
+    answers: 'A little. I would not go further than one more pass, so do not offer two.',
+  },
+  {
+    asks: 'They asked the same in spring. Can you give me one sentence that settles it?',
+    answers: 'It stays within the drawing. Say that, and that I measured it this morning.',
+  },
+  {
+    asks: 'Could it be strung for ten minutes on Wednesday afternoon?',
+    answers: 'Strings on, yes. The nut is not done, so nobody plays it.',
+  },
+] as const;
+
+/** The shop's own phrases for letters. */
+export const shopPhrases = [
+  { title: 'Where it is now', words: '{owner}, your {instrument} is in {stage} just now.' },
+  {
+    title: 'Ready window',
+    words: 'As things stand we expect it {window}. If that moves, you read it in the diary first.',
+  },
+  { title: 'I will find out', words: 'Let me ask at the bench. You will have an answer from me today.' },
+  { title: 'A photo will follow', words: 'I will ask for a photo in daylight and put it into the diary of {order}.' },
+  {
+    title: 'Too late to change',
+    words: 'That part is made already, so it cannot change any more. What we can still do is this:',
+  },
+  {
+    title: 'Costs and days',
+    words: 'That is possible. It would add its price and some days; I send you both to sign before anybody starts.',
+  },
+] as const;

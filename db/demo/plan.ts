@@ -1,7 +1,7 @@
 import { artists } from './cast';
 import { mulberry32 } from './pictures/random';
 import { demoRoutes, finishes, instruments } from './shop-floor';
-import { DAY_MS, walkDelivered, walkStages, type Random, type TimedStage } from './timeline';
+import { DAY_MS, travelWith, walkDelivered, walkStages, type Random, type TimedStage } from './timeline';
 
 export type PlannedBuild = {
   orderNumber: string;
@@ -20,6 +20,13 @@ export type PlannedBuild = {
 
 export const FLOOR_BUILDS = 42;
 export const DELIVERED_BUILDS = 200;
+/** So many of those delivered last have every page, reading and photo. */
+export const WHOLE_DELIVERED = 3;
+
+/** Stages that the builds of one rack pass together. */
+const GLUED = 7;
+/** Builds on the floor that have been in their stage for far too long. */
+const STUCK = [12, 16, 35];
 
 function pick<T>(list: readonly T[], index: number): T {
   const found = list[index % list.length];
@@ -32,7 +39,18 @@ export function planBuilds(nowMs: number): PlannedBuild[] {
   const random = mulberry32(2417);
   const floor = Array.from({ length: FLOOR_BUILDS }, (_, index) => planFloorBuild(index, nowMs, random));
   const delivered = Array.from({ length: DELIVERED_BUILDS }, (_, index) => planDelivered(index, nowMs, random));
-  return [...floor, ...delivered];
+  return [...floor, ...delivered.map((build, index) => onOneRack(build, delivered[index - 1], index, nowMs))];
+}
+
+/** Every fifth delivered build went with the one before on one rack, where they are of one kind. */
+function onOneRack(build: PlannedBuild, other: PlannedBuild | undefined, index: number, nowMs: number): PlannedBuild {
+  const isBatch = index % 5 === 2 && index > WHOLE_DELIVERED && other?.instrument.route === build.instrument.route;
+  const isMate = index % 5 === 1 && index >= WHOLE_DELIVERED;
+  const rack = `rack ${1 + (Math.floor(index / 5) % 12)}`;
+  if (!isBatch || !other) return isMate ? { ...build, rack } : build;
+  const stages = travelWith(other.stages, build.stages, GLUED);
+  const deliveredAt = stages.at(-1)?.finishedAt ?? null;
+  return deliveredAt === null || deliveredAt > nowMs - DAY_MS ? build : { ...build, rack, stages, deliveredAt };
 }
 
 function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBuild {
@@ -41,7 +59,9 @@ function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBu
   const { stages } = pick(demoRoutes, instrument.route);
   // The first is in the finish room, so that whoever opens the demo finds a diary with a story.
   const position = index === 0 ? 8 : index === 1 ? 10 : Math.floor(random() * stages.length);
-  const daysIn = Math.floor(random() * (stages[position]?.usualDays ?? 4));
+  const usually = stages[position]?.usualDays ?? 4;
+  const share = random();
+  const daysIn = STUCK.includes(index) ? Math.round(usually * 1.9) + 5 : Math.floor(share * usually);
   return {
     orderNumber: `Q-${2417 + index}`,
     instrument,
@@ -52,8 +72,14 @@ function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBu
     stages: walkStages(stages, position, daysIn, nowMs, random),
     deliveredAt: null,
     heldUntilAt: index === 1 ? nowMs + 45 * DAY_MS : null,
-    isFeatured: index < 6 || index === 9,
+    isFeatured: index < 6 || index === 9 || position === stages.length - 1,
   };
+}
+
+/** The whole ones wear finishes that the floor has pictures of. */
+function finishOfDelivered(index: number, random: Random) {
+  const drawn = Math.floor(random() * finishes.length);
+  return pick(finishes, index < WHOLE_DELIVERED ? index * 3 : drawn);
 }
 
 function planDelivered(index: number, nowMs: number, random: Random): PlannedBuild {
@@ -64,7 +90,7 @@ function planDelivered(index: number, nowMs: number, random: Random): PlannedBui
   return {
     orderNumber: `Q-${2416 - index}`,
     instrument,
-    finish: pick(finishes, Math.floor(random() * finishes.length)),
+    finish: finishOfDelivered(index, random),
     // Some come back for another; Maren, the first, has just the one.
     owner: isArtist ? index % artists.length : 3 + Math.floor(random() * 120),
     isArtist,
@@ -72,6 +98,6 @@ function planDelivered(index: number, nowMs: number, random: Random): PlannedBui
     stages: walkDelivered(stages, deliveredAt, random),
     deliveredAt,
     heldUntilAt: null,
-    isFeatured: false,
+    isFeatured: index < WHOLE_DELIVERED,
   };
 }

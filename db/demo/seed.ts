@@ -1,17 +1,27 @@
 import { count, max } from 'drizzle-orm';
+import { drawCheckPicture, enterChecks } from './checks';
 import { planEntries } from './diary';
 import { enterBuild, type EnteredBuild } from './enter-build';
 import { enterQuestions } from './letters';
 import { enterPeople, type Cast } from './people';
 import { PhotoLibrary } from './photo-library';
-import { planBuilds } from './plan';
+import { planBuilds, WHOLE_DELIVERED } from './plan';
+import { enterReadings } from './readings';
 import { demoHolidays, enterCalendar, enterCapacities } from './schedule';
+import { enterSignOffs, planSignOffs } from './sign-offs';
+import { enterSpecs } from './specs';
 import { demoRoutes, demoTopics, departmentNames, outlookOf } from './shop-floor';
+import { enterWindows } from './windows';
 import { database, db, write, type Tx } from '../client';
 import { migrateDatabase } from '../migrate';
 import { departments, diaryEvents, mailSettings, routes, routeStages, shop, topics } from '../schema';
 import { newId } from '../schema/columns';
 import { stopDecoders } from '@/lib/photos/process-photo';
+
+/** The latest delivered builds have their specs in the book; the older ones were built from paper. */
+const SPECS_OF_DELIVERED = 40;
+
+const ZONE = 'America/New_York';
 
 /** Fills an empty database with the demo world; leaves one that has a shop in it alone. */
 export async function seedDemoWorld(nowMs: number, tell: (line: string) => void): Promise<void> {
@@ -27,14 +37,26 @@ export async function seedDemoWorld(nowMs: number, tell: (line: string) => void)
     await enterCalendar(tx, holidays, nowMs);
     return { routeIds, cast };
   });
-  const onFloor = await enterBuilds(cast, routeIds, library, nowMs, tell);
+  const { onFloor, delivered } = await enterBuilds(cast, routeIds, library, nowMs, tell);
+  const toSign = await planSignOffs(onFloor, library);
+  const checkPicture = await drawCheckPicture(onFloor, library);
   await write(async (tx) => {
+    await enterSpecs(tx, [...onFloor, ...delivered.slice(0, SPECS_OF_DELIVERED)], cast, nowMs);
+    await enterSignOffs(tx, toSign, nowMs);
+    await enterReadings(tx, [...onFloor, ...delivered.slice(0, WHOLE_DELIVERED)], nowMs);
+    await enterChecks(tx, { onFloor, delivered, routeIds, cast, picture: checkPicture }, nowMs);
     await enterQuestions(tx, onFloor, cast, nowMs);
+  });
+  await enterWindows(
+    [...onFloor, ...delivered].map(({ id }) => id),
+    routeIds,
+    ZONE,
+    nowMs,
+  );
+  await write(async (tx) => {
     await tellEverythingSoFar(tx);
     // Last: a seed that was cut off leaves no shop, so the next start begins again.
-    await tx
-      .insert(shop)
-      .values({ id: 1, name: 'Quillhaven Guitar Works', timeZone: 'America/New_York', holidayCountry: 'US' });
+    await tx.insert(shop).values({ id: 1, name: 'Quillhaven Guitar Works', timeZone: ZONE, holidayCountry: 'US' });
   });
   await stopDecoders();
   tell(`${library.count} pictures drawn, ${onFloor.length} builds on the floor.`);
@@ -63,16 +85,20 @@ async function enterBuilds(
   tell: (line: string) => void,
 ) {
   const onFloor: EnteredBuild[] = [];
+  const delivered: EnteredBuild[] = [];
   for (const plan of planBuilds(nowMs)) {
     const pages = await planEntries(plan, cast, library, nowMs);
     const entered = await write((tx) =>
       enterBuild(tx, plan, routeIds[plan.instrument.route] ?? '', cast, pages, nowMs),
     );
-    if (plan.deliveredAt !== null) continue;
+    if (plan.deliveredAt !== null) {
+      delivered.push(entered);
+      continue;
+    }
     onFloor.push(entered);
     if (onFloor.length % 6 === 0) tell(`${onFloor.length} builds entered, ${library.count} pictures drawn`);
   }
-  return onFloor;
+  return { onFloor, delivered };
 }
 
 /** What is in the diaries from the start is old news: no digest tells it. */

@@ -74,13 +74,13 @@ export const demoRoutes = [
 ] as const;
 
 export const demoTopics = [
-  { id: 'spec', name: 'Spec & drawings', answeredBy: 'department', department: 'design & machining' },
-  { id: 'wood', name: 'Wood & neck', answeredBy: 'department', department: 'neck & frets' },
-  { id: 'finish', name: 'Finish & colour', answeredBy: 'department', department: 'finish' },
-  { id: 'setup', name: 'Set-up & feel', answeredBy: 'department', department: 'set-up' },
-  { id: 'schedule', name: 'Schedule & delivery', answeredBy: 'rep', department: null },
-  { id: 'money', name: 'Money', answeredBy: 'rep', department: null, repsOnly: true },
-  { id: 'artist', name: 'Artist matters', answeredBy: 'rep', department: null, repsOnly: true },
+  { id: 'spec', name: 'Spec & drawings', dueHours: 12, answeredBy: 'department', department: 'design & machining' },
+  { id: 'wood', name: 'Wood & neck', dueHours: 8, answeredBy: 'department', department: 'neck & frets' },
+  { id: 'finish', name: 'Finish & colour', dueHours: 8, answeredBy: 'department', department: 'finish' },
+  { id: 'setup', name: 'Set-up & feel', dueHours: 8, answeredBy: 'department', department: 'set-up' },
+  { id: 'schedule', name: 'Schedule & delivery', dueHours: 6, answeredBy: 'rep', department: null },
+  { id: 'money', name: 'Money', dueHours: 8, answeredBy: 'rep', department: null, repsOnly: true },
+  { id: 'artist', name: 'Artist matters', dueHours: 4, answeredBy: 'rep', department: null, repsOnly: true },
 ] as const;
 
 export const instruments = [

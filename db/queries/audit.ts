@@ -23,6 +23,17 @@ export type AuditAction =
   | 'held'
   | 'opened'
   | 'entry_released'
+  | 'sign_off_asked'
+  | 'sign_off_withdrawn'
+  | 'sign_off_signed'
+  | 'sign_off_change_asked'
+  | 'check_passed'
+  | 'check_failed'
+  | 'check_told'
+  | 'check_kept'
+  | 'final_check_passed'
+  | 'shipped'
+  | 'delivered'
   | 'build_read';
 
 type AuditEvent = {

@@ -65,6 +65,9 @@ export async function requireBuild(viewer: Viewer, orderNumber: string) {
       scaleLengthIn: builds.scaleLengthIn,
       rack: builds.rack,
       heldUntilAt: builds.heldUntilAt,
+      readyAt: builds.readyAt,
+      shippedAt: builds.shippedAt,
+      shippedBy: builds.shippedBy,
       deliveredAt: builds.deliveredAt,
       releaseNeeded: builds.releaseNeeded,
       visitedAt: diaryVisits.visitedAt,
@@ -123,6 +126,7 @@ export async function listClients(viewer: Viewer, orderNumber: string) {
       role: users.role,
       standing: buildPeople.standing,
       email: withContacts ? users.email : sql<null>`null`,
+      unreachableWhy: isStaffRole(viewer.role) && withContacts ? users.unreachableWhy : sql<null>`null`,
     })
     .from(buildPeople)
     .innerJoin(users, eq(users.id, buildPeople.userId))

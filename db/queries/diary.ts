@@ -1,9 +1,10 @@
 import { and, eq, sql, type SQL } from 'drizzle-orm';
 import { prepared } from '../prepared';
 import { buildIsVisible, entryIsVisible } from '../scope';
-import { builds, buildStages, entries, photos, users } from '../schema';
+import { builds, buildStages, entries, photos, proofs, readings, users } from '../schema';
 import { isStaffRole, type Role } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
+import type { ShownReading } from '@/lib/readings/reading';
 import { RecentTexts } from '@/lib/recent-texts';
 import type { Viewer } from '@/lib/viewer';
 
@@ -21,6 +22,10 @@ export type DiaryEntry = {
   edited: number;
   body: unknown;
   photos: DiaryPhoto[];
+  /** As they were when they were taken; null for one that is damaged. */
+  readings: (ShownReading | null)[];
+  /** The spec items it shows, by name. */
+  shows: string[];
   /** Staff only: who reads it, whether it waits for release, and whose it is. */
   audience?: 'buyer' | 'shop';
   state?: 'held' | 'published';
@@ -142,7 +147,8 @@ function pageJson(role: Role, hasCursor: boolean): SQL {
       'entries', json_group_array(json_object('id', e.id, 'stage', s.name, 'author', u.name,
           'department', u.department, 'datedAt', e.dated_at, 'edited', e.edited_at is not null,
           'body', json(case when json_valid(e.body) then e.body else 'null' end),
-          'photos', json((${photosOfEntry})) ${isStaffRole(role) ? shopSide : sql``})) filter (where e.place <= ${PAGE}),
+          'photos', json((${photosOfEntry})), 'readings', json((${readingsOfEntry})),
+          'shows', json((${showsOfEntry})) ${isStaffRole(role) ? shopSide : sql``})) filter (where e.place <= ${PAGE}),
       'next', iif(count(*) > ${PAGE}, max(e.dated_at || '.' || e.id) filter (where e.place = ${PAGE}), null))
     from (select ${entries.id}, ${entries.datedAt}, ${entries.body}, ${entries.editedAt}, ${entries.audience}, ${entries.state},
         ${entries.authorId}, ${entries.stageId}, row_number() over (order by ${newestFirst}) as place
@@ -157,3 +163,10 @@ const photosOfEntry = sql`
     'blur', p.blur_data_url, 'alt', p.alt, 'widthsPx', p.variant_widths_px))
   from (select id, width_px, height_px, blur_data_url, alt, variant_widths_px from ${photos}
     where entry_id = e.id and state = 'ready' order by position) p`;
+
+const readingsOfEntry = sql`
+  select json_group_array(json(case when json_valid(r.shown) then r.shown else 'null' end))
+  from (select shown from ${readings} where entry_id = e.id order by position) r`;
+
+const showsOfEntry = sql`
+  select json_group_array(p.label) from (select label from ${proofs} where entry_id = e.id and label <> '' order by rowid) p`;

@@ -1,6 +1,8 @@
-import { and, count, eq, inArray, isNull, sql } from 'drizzle-orm';
+import { and, asc, count, eq, inArray, isNull, sql } from 'drizzle-orm';
 import { recordEvent } from './audit';
 import { touchDiary } from './builds';
+import { storeReadings } from './readings';
+import { isUnbound } from './photos';
 import { startStage } from './stages';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -14,8 +16,8 @@ import type { Viewer } from '@/lib/viewer';
 export type PostedEntry = { id: string; state: 'held' | 'published' | 'withdrawn'; repeated: boolean };
 
 /**
- * Posts one entry with its photos, once, however often the same idempotency key arrives.
- * @throws OutOfReach, Denied, or BadInput for a stage or photo that does not belong here
+ * Posts one entry with its photos and readings, once, however often the same idempotency key arrives.
+ * @throws OutOfReach, Denied, or BadInput for a stage, photo, reading or proof that does not belong here
  */
 export function postEntry(viewer: Viewer, entry: NewEntry, nowMs: number): Promise<PostedEntry> {
   return write(async (tx) => {
@@ -44,6 +46,7 @@ export function postEntry(viewer: Viewer, entry: NewEntry, nowMs: number): Promi
       .returning({ id: entries.id, state: entries.state });
     if (!posted) throw new Error('an insert without a row');
     await attachPhotos(tx, viewer, build.id, posted.id, entry.photos);
+    await storeReadings(tx, { viewer, buildId: build.id, entryId: posted.id }, entry, nowMs);
     if (entry.startStage) await startStage(tx, { buildId: build.id, stageId: entry.stageId, byId: viewer.id }, nowMs);
     if (state === 'published' && entry.audience === 'buyer') await tellReaders(tx, build.id, posted.id, nowMs);
     await touchDiary(tx, build.id);
@@ -84,6 +87,7 @@ async function attachPhotos(
           eq(photos.uploaderId, viewer.id),
           eq(photos.state, 'ready'),
           isNull(photos.entryId),
+          isUnbound,
         ),
       )
       .returning({ id: photos.id });
@@ -96,7 +100,7 @@ async function attachPhotos(
 }
 
 /** Puts an entry on the list that digests are written from, and wakes those who want mail at once. */
-async function tellReaders(tx: Tx, buildId: string, entryId: string, nowMs: number): Promise<void> {
+export async function tellReaders(tx: Tx, buildId: string, entryId: string, nowMs: number): Promise<void> {
   await tx.insert(diaryEvents).values({ buildId, entryId, at: nowMs });
   const readers = tx.select({ id: buildPeople.userId }).from(buildPeople).where(eq(buildPeople.buildId, buildId));
   await tx
@@ -223,6 +227,26 @@ export function releaseEntry(viewer: Viewer, entryId: string, nowMs: number): Pr
     await recordEvent(tx, event, nowMs);
     return entry.orderNumber;
   });
+}
+
+/** The entries that wait for the viewer to release them, the oldest first. */
+export async function listHeldEntries(viewer: Viewer) {
+  if (!can(viewer.role, 'assigned', 'entry.release')) return [];
+  return db()
+    .select({
+      id: entries.id,
+      orderNumber: builds.orderNumber,
+      instrument: builds.instrument,
+      author: users.name,
+      datedAt: entries.datedAt,
+      text: entries.bodyText,
+    })
+    .from(entries)
+    .innerJoin(builds, eq(builds.id, entries.buildId))
+    .innerJoin(users, eq(users.id, entries.authorId))
+    .where(and(eq(entries.state, 'held'), buildIsVisible(viewer)))
+    .orderBy(asc(entries.datedAt), asc(entries.id))
+    .limit(20);
 }
 
 /** How many entries wait for the viewer to release them. */

@@ -2,9 +2,21 @@ import { and, desc, eq, gt, inArray, isNull } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { db } from '../client';
 import { buildIsVisible, entryIsVisible, isOpen, photoIsVisible, questionIsVisible } from '../scope';
-import { builds, buildStages, entries, letters, photos, questions, shop, signInLinks, topics, users } from '../schema';
+import {
+  builds,
+  buildStages,
+  entries,
+  letters,
+  mailSettings,
+  photos,
+  questions,
+  shop,
+  signInLinks,
+  topics,
+  users,
+} from '../schema';
 import { sql } from 'drizzle-orm';
-import { MAX_ENTRIES_TOLD } from './mail-settings';
+import { MAX_ENTRIES_TOLD } from './digests';
 import type { Viewer } from '@/lib/viewer';
 
 /** The reader of a mail with what sending needs; null when the account is closed. */
@@ -17,8 +29,15 @@ export async function findMailReader(userId: string) {
       role: users.role,
       department: users.department,
       timeZone: users.timeZone,
+      locale: users.locale,
+      units: users.units,
+      unreachableWhy: users.unreachableWhy,
+      cadence: mailSettings.cadence,
+      quietFromHour: mailSettings.quietFromHour,
+      quietToHour: mailSettings.quietToHour,
     })
     .from(users)
+    .leftJoin(mailSettings, eq(mailSettings.userId, users.id))
     .where(and(eq(users.id, userId), isNull(users.disabledAt)));
   return reader ?? null;
 }
@@ -77,6 +96,7 @@ export async function findMailedLetter(reader: Viewer, letterId: string) {
       held: sql<number>`not ${isOpen}`,
       topic: topics.name,
       subject: questions.subject,
+      dueAt: questions.dueAt,
       side: letters.side,
       text: letters.bodyText,
       writerName: writer.name,

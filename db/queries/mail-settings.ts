@@ -1,14 +1,23 @@
-import { and, eq, gt, inArray, isNotNull, isNull, lt, lte, max, or, sql } from 'drizzle-orm';
-import { queueMail } from './outbox';
+import { and, eq, isNull, sql } from 'drizzle-orm';
 import { db, write } from '../client';
-import { buildIsVisible, entryIsVisible } from '../scope';
-import { buildPeople, builds, diaryEvents, entries, mailSettings, users } from '../schema';
-import { nextDigestAt, type DigestPlan } from '@/lib/schedule/digest-times';
+import { diaryEvents, mailSettings, users } from '../schema';
+import { isStaffRole } from '@/lib/access';
+import { isZone, nextDigestAt, type DigestPlan } from '@/lib/schedule/digest-times';
 import type { Viewer } from '@/lib/viewer';
 
-export type MailWish = Omit<DigestPlan, 'zone'>;
+export type MailWish = Omit<DigestPlan, 'zone'> & {
+  /** Hours on the reader's clock between which nothing but sign-in links is mailed; left out: as they were. */
+  quietFromHour?: number | null;
+  quietToHour?: number | null;
+};
 
-const defaults: MailWish = { cadence: 'weekly', hourLocal: 8, weekday: 5 };
+/** How a person's words are written: dates by the locale, measures in inches or millimetres. */
+export type Wording = { locale: string; units: 'in' | 'mm' };
+
+/** Clients get their diary once a week; staff what waits on them, each morning. */
+export function usualWish(role: Viewer['role']): MailWish {
+  return { cadence: isStaffRole(role) ? 'daily' : 'weekly', hourLocal: 8, weekday: 5 };
+}
 
 /** How the viewer gets the diary by mail. */
 export async function findMailSettings(viewer: Viewer) {
@@ -17,15 +26,26 @@ export async function findMailSettings(viewer: Viewer) {
       cadence: mailSettings.cadence,
       hourLocal: mailSettings.hourLocal,
       weekday: mailSettings.weekday,
+      quietFromHour: mailSettings.quietFromHour,
+      quietToHour: mailSettings.quietToHour,
       nextDigestAt: mailSettings.nextDigestAt,
     })
     .from(mailSettings)
     .where(eq(mailSettings.userId, viewer.id));
-  return row ?? { ...defaults, nextDigestAt: null };
+  return row ?? { ...usualWish(viewer.role), nextDigestAt: null };
 }
 
 /** The newest event there is; what came before a reader is old news to them. */
 export const lastSeq = sql<number>`(select coalesce(max(${diaryEvents.seq}), 0) from ${diaryEvents})`;
+
+/** Between which events the viewer's next digest lies. Without settings nothing is old news yet, and nothing new. */
+export async function findCursor(viewer: Viewer): Promise<{ toldSeq: number; upToSeq: number }> {
+  const [row] = await db()
+    .select({ toldSeq: mailSettings.toldSeq, upToSeq: lastSeq })
+    .from(mailSettings)
+    .where(eq(mailSettings.userId, viewer.id));
+  return row ?? { toldSeq: 0, upToSeq: 0 };
+}
 
 /**
  * Saves when the viewer wants mail, and where they are. What happened before the first wish, or while they wanted none,
@@ -48,10 +68,19 @@ export function saveMailSettings(viewer: Viewer, wish: MailWish, zone: string, n
   });
 }
 
-/** Saves where the viewer is, for staff, who get no diary by mail. */
-export function saveTimeZone(viewer: Viewer, zone: string, nowMs: number): Promise<void> {
+/** How the viewer has words written; `lostZone` is their time zone when no clock of this machine knows it any more. */
+export async function findWording(viewer: Viewer): Promise<Wording & { lostZone: string | null }> {
+  const [row] = await db()
+    .select({ locale: users.locale, units: users.units, zone: users.timeZone })
+    .from(users)
+    .where(eq(users.id, viewer.id));
+  const { locale = 'en-GB', units = 'in', zone = 'UTC' } = row ?? {};
+  return { locale, units, lostZone: isZone(zone) ? null : zone };
+}
+
+export function saveWording(viewer: Viewer, wording: Wording): Promise<void> {
   return write(async (tx) => {
-    await tx.update(users).set({ timeZone: zone, timeZoneAskedAt: nowMs }).where(eq(users.id, viewer.id));
+    await tx.update(users).set(wording).where(eq(users.id, viewer.id));
   });
 }
 
@@ -64,95 +93,6 @@ export function unsubscribe(userId: string): Promise<boolean> {
       .where(eq(mailSettings.userId, userId))
       .returning({ userId: mailSettings.userId });
     return stopped.length === 1;
-  });
-}
-
-export type DueReader = { viewer: Viewer; wish: MailWish; toldSeq: number; upToSeq: number; dueAt: number };
-
-/**
- * Takes the next reader whose digest is due, for `leaseMs`; null when nobody is. No viewer: the job's own list, and what
- * it finds for a reader is read with that reader's rights.
- */
-export function claimDueReader(owner: string, nowMs: number, leaseMs: number): Promise<DueReader | null> {
-  return write(async (tx) => {
-    const free = or(isNull(mailSettings.leaseEndsAt), lt(mailSettings.leaseEndsAt, nowMs));
-    const next = tx
-      .select({ id: mailSettings.userId })
-      .from(mailSettings)
-      .where(and(isNotNull(mailSettings.nextDigestAt), lte(mailSettings.nextDigestAt, nowMs), free))
-      .orderBy(mailSettings.nextDigestAt)
-      .limit(1);
-    const [claimed] = await tx
-      .update(mailSettings)
-      .set({ leaseOwner: owner, leaseEndsAt: nowMs + leaseMs })
-      .where(inArray(mailSettings.userId, next))
-      .returning();
-    if (!claimed) return null;
-    const [viewer] = await tx
-      .select({
-        id: users.id,
-        role: users.role,
-        name: users.name,
-        department: users.department,
-        timeZone: users.timeZone,
-      })
-      .from(users)
-      .where(eq(users.id, claimed.userId));
-    const [last] = await tx.select({ seq: max(diaryEvents.seq) }).from(diaryEvents);
-    if (!viewer) throw new Error('mail settings of nobody');
-    const { cadence, hourLocal, weekday, toldSeq, nextDigestAt: dueAt } = claimed;
-    return { viewer, wish: { cadence, hourLocal, weekday }, toldSeq, upToSeq: last?.seq ?? 0, dueAt: dueAt ?? nowMs };
-  });
-}
-
-export const MAX_ENTRIES_TOLD = 500;
-
-/** The entries that this reader has not been told of yet and may read now, oldest first, at most 500. */
-export function listUntold({ viewer, toldSeq, upToSeq }: DueReader) {
-  const own = db().select({ id: buildPeople.buildId }).from(buildPeople).where(eq(buildPeople.userId, viewer.id));
-  return db()
-    .selectDistinct({ entryId: diaryEvents.entryId })
-    .from(diaryEvents)
-    .innerJoin(entries, eq(entries.id, diaryEvents.entryId))
-    .innerJoin(builds, eq(builds.id, diaryEvents.buildId))
-    .where(
-      and(
-        inArray(diaryEvents.buildId, own),
-        gt(diaryEvents.seq, toldSeq),
-        lte(diaryEvents.seq, upToSeq),
-        buildIsVisible(viewer),
-        entryIsVisible(viewer),
-      ),
-    )
-    .orderBy(diaryEvents.seq)
-    .limit(MAX_ENTRIES_TOLD);
-}
-
-/**
- * Writes the digest, advances the reader's cursor and sets the next one, or none of these. A reader who wants mail at
- * once and was woken again in the meantime stays woken.
- */
-export function writeDigest(due: DueReader, entryIds: string[], owner: string, nowMs: number): Promise<boolean> {
-  const { viewer, wish, toldSeq, upToSeq, dueAt } = due;
-  const regular = nextDigestAt({ ...wish, zone: viewer.timeZone }, nowMs);
-  const next =
-    wish.cadence === 'at_once'
-      ? sql`case when ${mailSettings.nextDigestAt} = ${dueAt} then null else ${mailSettings.nextDigestAt} end`
-      : sql`case when ${mailSettings.cadence} = 'none' then null else ${regular} end`;
-  return write(async (tx) => {
-    const moved = await tx
-      .update(mailSettings)
-      .set({ toldSeq: upToSeq, nextDigestAt: next, leaseOwner: null, leaseEndsAt: null })
-      .where(
-        and(eq(mailSettings.userId, viewer.id), eq(mailSettings.leaseOwner, owner), eq(mailSettings.toldSeq, toldSeq)),
-      )
-      .returning({ cadence: mailSettings.cadence });
-    const [settings] = moved;
-    if (!settings) return false;
-    if (entryIds.length === 0 || settings.cadence === 'none') return true;
-    const dedupeKey = `digest/${viewer.id}/${upToSeq}`;
-    await queueMail(tx, { kind: 'digest', userId: viewer.id, about: { entryIds }, dedupeKey }, nowMs);
-    return true;
   });
 }
 

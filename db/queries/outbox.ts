@@ -1,19 +1,45 @@
-import { and, count, desc, eq, inArray, lt, lte, or, sql } from 'drizzle-orm';
+import { and, eq, gt, gte, inArray, lt, lte, ne, or, sql } from 'drizzle-orm';
+import { findChoice } from './mail-choices';
+import { addNews } from './news';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
-import { outbox, users } from '../schema';
+import { outbox } from '../schema';
 import { Denied, OutOfReach } from '@/lib/errors';
 import type { FrozenMail, MailAbout, MailKind } from '@/lib/mail/kinds';
 import type { Viewer } from '@/lib/viewer';
 
-type NewMail = { kind: MailKind; userId: string; about: MailAbout; dedupeKey: string };
+type NewMail = {
+  kind: MailKind;
+  userId: string;
+  about: MailAbout;
+  dedupeKey: string;
+  /** Not sent before this moment: what it tells of may still change. */
+  notBeforeAt?: number;
+};
 
-/** Writes a mail to be sent, in the transaction of what it tells of. The same dedupe key writes nothing twice. */
+/**
+ * Tells somebody of something in the way they chose for its kind: by a mail of its own, in their next digest, or not at
+ * all; written in the transaction of what it tells of. The same dedupe key tells nothing twice.
+ */
 export async function queueMail(tx: Tx, mail: NewMail, nowMs: number): Promise<void> {
+  const { kind, userId, about, dedupeKey } = mail;
+  const choice = await findChoice(tx, userId, kind);
+  if (choice === 'at_once') await insertMail(tx, mail, nowMs);
+  if (choice === 'digest') await addNews(tx, { kind, userId, about, dedupeKey }, nowMs);
+}
+
+/** Writes a mail whatever its reader chose: the digest itself, and what an admin sends again. */
+export async function insertMail(tx: Tx, { notBeforeAt = 0, ...mail }: NewMail, nowMs: number): Promise<void> {
   await tx
     .insert(outbox)
-    .values({ ...mail, state: 'waiting', nextAttemptAt: nowMs, createdAt: nowMs })
+    .values({ ...mail, state: 'waiting', nextAttemptAt: Math.max(nowMs, notBeforeAt), createdAt: nowMs })
     .onConflictDoNothing({ target: outbox.dedupeKey });
+}
+
+/** Lets a mail that waits for its time go now. */
+export async function hastenMail(tx: Tx, dedupeKey: string, nowMs: number): Promise<void> {
+  const waiting = and(eq(outbox.dedupeKey, dedupeKey), eq(outbox.state, 'waiting'), gt(outbox.nextAttemptAt, nowMs));
+  await tx.update(outbox).set({ nextAttemptAt: nowMs }).where(waiting);
 }
 
 export type ClaimedMail = {
@@ -23,15 +49,16 @@ export type ClaimedMail = {
   about: MailAbout;
   dedupeKey: string;
   frozen: FrozenMail | null;
+  /** Tries made before this one. */
   attempts: number;
   firstAttemptAt: number | null;
 };
 
 /**
- * Takes the next mail that is due, or one whose sender died, for `leaseMs`; null when there is none. The lease is
- * longer than the client's time-out, so that no two senders try at once.
+ * Takes the mails that are due next, or whose sender died, for `leaseMs`. No try begins so late that it could last
+ * longer than the lease, so that no two senders try at once.
  */
-export function claimMail(owner: string, nowMs: number, leaseMs: number): Promise<ClaimedMail | null> {
+export function claimMails(owner: string, nowMs: number, leaseMs: number, limit: number): Promise<ClaimedMail[]> {
   return write(async (tx) => {
     const due = and(eq(outbox.state, 'waiting'), lte(outbox.nextAttemptAt, nowMs));
     const abandoned = and(eq(outbox.state, 'sending'), lt(outbox.leaseEndsAt, nowMs));
@@ -40,15 +67,13 @@ export function claimMail(owner: string, nowMs: number, leaseMs: number): Promis
       .from(outbox)
       .where(or(due, abandoned))
       .orderBy(outbox.nextAttemptAt)
-      .limit(1);
-    const [claimed] = await tx
+      .limit(limit);
+    return tx
       .update(outbox)
       .set({
         state: 'sending',
         leaseOwner: owner,
         leaseEndsAt: nowMs + leaseMs,
-        attempts: sql`${outbox.attempts} + 1`,
-        firstAttemptAt: sql`coalesce(${outbox.firstAttemptAt}, ${nowMs})`,
       })
       .where(inArray(outbox.id, next))
       .returning({
@@ -61,25 +86,40 @@ export function claimMail(owner: string, nowMs: number, leaseMs: number): Promis
         attempts: outbox.attempts,
         firstAttemptAt: outbox.firstAttemptAt,
       });
-    return claimed ?? null;
   });
 }
 
 const held = (mailId: string, owner: string) =>
   and(eq(outbox.id, mailId), eq(outbox.leaseOwner, owner), eq(outbox.state, 'sending'));
 
-/** Keeps the bytes before the first try: from here on every try sends the same. */
-export function freezeMail(mailId: string, owner: string, frozen: FrozenMail): Promise<boolean> {
+type Beginning = { mail: Pick<ClaimedMail, 'id' | 'attempts' | 'frozen'>; frozen: FrozenMail };
+
+/**
+ * Counts a try of each of these mails before it is made, and keeps the bytes of a first one: from here on every try sends
+ * the same. A sender that dies before this has tried nothing.
+ * @returns the ids of those that the sender still holds
+ */
+export function beginTries(owner: string, mails: Beginning[], nowMs: number): Promise<Set<string>> {
   return write(async (tx) => {
-    const kept = await tx.update(outbox).set({ frozen }).where(held(mailId, owner)).returning({ id: outbox.id });
-    return kept.length === 1;
+    const kept = new Set<string>();
+    for (const { mail, frozen } of mails) {
+      const firstAttemptAt = sql`coalesce(${outbox.firstAttemptAt}, ${nowMs})`;
+      const begun = { attempts: mail.attempts + 1, firstAttemptAt, ...(mail.frozen ? {} : { frozen }) };
+      const [row] = await tx.update(outbox).set(begun).where(held(mail.id, owner)).returning({ id: outbox.id });
+      if (row) kept.add(row.id);
+    }
+    return kept;
   });
 }
 
-type Settled =
+export type Settled =
   | { state: 'sent'; providerId: string; nowMs: number }
   | { state: 'waiting'; nextAttemptAt: number; problem: string }
+  /** Not tried at all: it waits for a better hour. */
+  | { state: 'postponed'; untilMs: number }
   | { state: 'failed' | 'parked' | 'dropped'; problem: string };
+
+export type Ended = { mail: Pick<ClaimedMail, 'id' | 'kind' | 'attempts'>; settled: Settled };
 
 const free = { leaseOwner: null, leaseEndsAt: null };
 
@@ -87,20 +127,46 @@ const free = { leaseOwner: null, leaseEndsAt: null };
 const ended = ({ kind }: Pick<ClaimedMail, 'kind'>) =>
   kind === 'sign_in' ? { ...free, about: {}, frozen: null } : free;
 
-/** Ends one try. Secrets of a sign-in mail go with its last one. */
-export function settleMail(mail: Pick<ClaimedMail, 'id' | 'kind'>, owner: string, settled: Settled): Promise<void> {
+function outcomeOf(mail: Ended['mail'], settled: Settled) {
+  const attempts = mail.attempts + 1;
+  if (settled.state === 'postponed') return { ...free, state: 'waiting' as const, nextAttemptAt: settled.untilMs };
+  if (settled.state === 'waiting')
+    return {
+      ...free,
+      state: settled.state,
+      attempts,
+      nextAttemptAt: settled.nextAttemptAt,
+      lastProblem: settled.problem,
+    };
+  const { state } = settled;
+  if (state === 'sent')
+    return {
+      ...ended(mail),
+      state,
+      attempts,
+      providerId: settled.providerId,
+      sentAt: settled.nowMs,
+      lastProblem: null,
+    };
+  return { ...ended(mail), state, lastProblem: settled.problem, ...(state === 'failed' ? { attempts } : {}) };
+}
+
+/** Ends one try of each of these mails. Secrets of a sign-in mail go with its last one. */
+export function settleMails(owner: string, mails: Ended[]): Promise<void> {
   return write(async (tx) => {
-    const outcome =
-      settled.state === 'sent'
-        ? { state: settled.state, providerId: settled.providerId, sentAt: settled.nowMs, lastProblem: null }
-        : settled.state === 'waiting'
-          ? { state: settled.state, nextAttemptAt: settled.nextAttemptAt, lastProblem: settled.problem }
-          : { state: settled.state, lastProblem: settled.problem };
-    await tx
-      .update(outbox)
-      .set({ ...outcome, ...(settled.state === 'waiting' ? free : ended(mail)) })
-      .where(held(mail.id, owner));
+    for (const { mail, settled } of mails)
+      await tx.update(outbox).set(outcomeOf(mail, settled)).where(held(mail.id, owner));
   });
+}
+
+/** Whether another sign-in mail to this person was tried since; somebody whose mail bounces gets one a day. */
+export async function wasSignInTried({ id, userId }: ClaimedMail, sinceMs: number): Promise<boolean> {
+  const [row] = await db()
+    .select({ id: outbox.id })
+    .from(outbox)
+    .where(and(eq(outbox.userId, userId), eq(outbox.kind, 'sign_in'), ne(outbox.id, id), gte(outbox.sentAt, sinceMs)))
+    .limit(1);
+  return row !== undefined;
 }
 
 /** Drops a mail whose reader lost the right to part of it, and writes one about the rest under a new key. */
@@ -111,7 +177,7 @@ export function replaceMail(mail: ClaimedMail, owner: string, about: MailAbout, 
       .set({ state: 'dropped', lastProblem: 'part of it may no longer be read', ...ended(mail) })
       .where(held(mail.id, owner));
     const { kind, userId } = mail;
-    await queueMail(tx, { kind, userId, about, dedupeKey: `${mail.dedupeKey}+` }, nowMs);
+    await insertMail(tx, { kind, userId, about, dedupeKey: `${mail.dedupeKey}+` }, nowMs);
   });
 }
 
@@ -142,29 +208,21 @@ export function retryMail(viewer: Viewer, mailId: string, nowMs: number): Promis
   });
 }
 
-/** For the admin: how much mail is in which state, and the mail that waits for another try, failed or was parked, with why. No texts. */
-export async function listMailProblems(viewer: Viewer) {
-  await requireCan(viewer, 'mail.watch');
-  const counts = await db().select({ state: outbox.state, n: count() }).from(outbox).groupBy(outbox.state);
-  const troubled = await db()
-    .select({
-      id: outbox.id,
-      kind: outbox.kind,
-      state: outbox.state,
-      attempts: outbox.attempts,
-      problem: outbox.lastProblem,
-      createdAt: outbox.createdAt,
-      nextAttemptAt: outbox.nextAttemptAt,
-      person: users.name,
-    })
-    .from(outbox)
-    .innerJoin(users, eq(users.id, outbox.userId))
-    .where(
-      or(inArray(outbox.state, ['failed', 'parked']), and(eq(outbox.state, 'waiting'), sql`${outbox.attempts} > 0`)),
-    )
-    .orderBy(desc(outbox.createdAt))
-    .limit(50);
-  return { counts, troubled };
+/**
+ * Writes a mail anew that went out, was dropped or was parked, as its reader may have it now, under a new key: it may
+ * then come twice, which the admin who asks for it knows.
+ * @throws OutOfReach, or Denied for a mail that still waits, and for a sign-in link, which is dead
+ */
+export function sendAgain(viewer: Viewer, mailId: string, nowMs: number): Promise<void> {
+  return write(async (tx) => {
+    await requireCan(viewer, 'mail.watch');
+    const [mail] = await tx.select().from(outbox).where(eq(outbox.id, mailId));
+    if (!mail) throw new OutOfReach();
+    const { kind, userId, about, state } = mail;
+    if (kind === 'sign_in')
+      throw new Denied('conflict', 'Its link is dead by now. Its reader asks for a new one at the sign-in page.');
+    if (state === 'waiting' || state === 'sending')
+      throw new Denied('conflict', 'This mail is still on its way. It goes out by itself.');
+    await insertMail(tx, { kind, userId, about, dedupeKey: `again/${mailId}/${nowMs}` }, nowMs);
+  });
 }
-
-export type TroubledMail = Awaited<ReturnType<typeof listMailProblems>>['troubled'][number];

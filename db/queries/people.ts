@@ -3,6 +3,7 @@ import { recordEvent } from './audit';
 import { touchDiariesOf } from './builds';
 import { lastSeq } from './mail-settings';
 import { queueMail } from './outbox';
+import { routeAgain } from './pen';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { correlated } from '../correlated';
@@ -149,6 +150,7 @@ export function changePerson(viewer: Viewer, change: ChangedPerson, nowMs: numbe
     await tx.update(users).set({ role: change.role, department }).where(eq(users.id, person.id));
     await touchDiariesOf(tx, person.id);
     if ((person.role === 'admin') !== (change.role === 'admin')) await endWork(tx, viewer, person.id, nowMs);
+    else await routeAgain(tx, { holderId: person.id }, nowMs);
     await recordEvent(
       tx,
       { actorId: viewer.id, action: 'role_changed', subjectId: person.id, reason: change.role },
@@ -189,6 +191,7 @@ async function endWork(tx: Tx, viewer: Viewer, userId: string, nowMs: number): P
     .update(standingAssignments)
     .set({ endedAt: nowMs })
     .where(and(eq(standingAssignments.userId, userId), isNull(standingAssignments.endedAt)));
+  await routeAgain(tx, { holderId: userId }, nowMs);
 }
 
 /** Opens a closed account again, without its old assignments. */
@@ -253,6 +256,7 @@ async function addAssignment(
   if (!added) return cleared ? clearForHold(tx, viewer, { buildId, userId }, nowMs) : 0;
   const action = reason === null ? 'assigned' : 'stepped_in';
   await recordEvent(tx, { actorId: viewer.id, action, buildId, subjectId: userId, reason: reason ?? undefined }, nowMs);
+  await routeAgain(tx, { buildId }, nowMs);
   return 1;
 }
 
@@ -290,6 +294,7 @@ export function endAssignment(viewer: Viewer, assignmentId: string, nowMs: numbe
     if (!ended) throw new OutOfReach();
     const { buildId, userId } = ended;
     await recordEvent(tx, { actorId: viewer.id, action: 'assignment_ended', buildId, subjectId: userId }, nowMs);
+    await routeAgain(tx, { buildId, holderId: userId }, nowMs);
   });
 }
 
@@ -367,5 +372,6 @@ export function holdBuild(viewer: Viewer, orderNumber: string, untilAt: number |
       await addAssignment(tx, viewer, { buildId: build.id, userId: viewer.id, cleared: true, reason: null }, nowMs);
     const action = untilAt === null ? 'opened' : 'held';
     await recordEvent(tx, { actorId: viewer.id, action, buildId: build.id }, nowMs);
+    await routeAgain(tx, { buildId: build.id }, nowMs);
   });
 }

@@ -3,7 +3,7 @@ import { and, asc, count, eq, inArray, isNull, lt, lte, sql } from 'drizzle-orm'
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { buildIsVisible, photoIsVisible } from '../scope';
-import { builds, doomedObjects, photos } from '../schema';
+import { builds, checkMarks, documents, doomedObjects, photos } from '../schema';
 import { Denied, OutOfReach } from '@/lib/errors';
 import type { NewPhoto } from '@/lib/validation/photos';
 import type { Viewer } from '@/lib/viewer';
@@ -11,6 +11,9 @@ import type { Viewer } from '@/lib/viewer';
 export const GRANT_MS = 5 * 60_000;
 const DAY_MS = 86_400_000;
 const MAX_UNPOSTED = 36;
+
+/** What a letter holds, an owner is asked to sign, or an inspection shows, stays: such a photo is neither posted elsewhere nor swept away. */
+export const isUnbound = sql`(${photos.letterId} is null and not exists (select 1 from ${documents} where ${documents.photoId} = ${photos.id}) and not exists (select 1 from ${checkMarks} where ${checkMarks.photoId} = ${photos.id}))`;
 
 const newKey = (area: string) => `${area}/${randomBytes(24).toString('base64url')}`;
 
@@ -31,7 +34,7 @@ const grantColumns = {
  */
 export function grantPhoto(viewer: Viewer, orderNumber: string, photo: NewPhoto, nowMs: number) {
   return write(async (tx) => {
-    const build = await requireCan(viewer, 'entry.post', orderNumber, tx);
+    const build = await requireCan(viewer, 'photo.send', orderNumber, tx);
     const mine = and(eq(photos.uploaderId, viewer.id), eq(photos.uploadKey, photo.uploadKey));
     const [earlier] = await tx
       .update(photos)
@@ -56,7 +59,7 @@ async function requireRoom(tx: Tx, viewer: Viewer): Promise<void> {
   const [row] = await tx
     .select({ n: count() })
     .from(photos)
-    .where(and(eq(photos.uploaderId, viewer.id), isNull(photos.entryId)));
+    .where(and(eq(photos.uploaderId, viewer.id), isNull(photos.entryId), isUnbound));
   if ((row?.n ?? 0) < MAX_UNPOSTED) return;
   throw new Denied(
     'too_many',
@@ -71,7 +74,13 @@ export async function requireOwnPhoto(viewer: Viewer, photoId: string) {
     .from(photos)
     .innerJoin(builds, eq(builds.id, photos.buildId))
     .where(
-      and(eq(photos.id, photoId), eq(photos.uploaderId, viewer.id), isNull(photos.entryId), buildIsVisible(viewer)),
+      and(
+        eq(photos.id, photoId),
+        eq(photos.uploaderId, viewer.id),
+        isNull(photos.entryId),
+        isNull(photos.letterId),
+        buildIsVisible(viewer),
+      ),
     );
   if (!photo) throw new OutOfReach();
   return photo;
@@ -189,7 +198,7 @@ async function remove(tx: Tx, gone: Unposted[], nowMs: number): Promise<void> {
 /** Removes the viewer's own photo that is in no entry, with everything made of it. */
 export function discardPhoto(viewer: Viewer, photoId: string, nowMs: number): Promise<void> {
   return write(async (tx) => {
-    const own = and(eq(photos.id, photoId), eq(photos.uploaderId, viewer.id), isNull(photos.entryId));
+    const own = and(eq(photos.id, photoId), eq(photos.uploaderId, viewer.id), isNull(photos.entryId), isUnbound);
     await remove(tx, await tx.select(unpostedColumns).from(photos).where(own), nowMs);
   });
 }
@@ -200,7 +209,7 @@ export function sweepUnfinishedPhotos(nowMs: number): Promise<number> {
     const old = await tx
       .select(unpostedColumns)
       .from(photos)
-      .where(and(isNull(photos.entryId), lt(photos.createdAt, nowMs - DAY_MS)))
+      .where(and(isNull(photos.entryId), isUnbound, lt(photos.createdAt, nowMs - DAY_MS)))
       .limit(200);
     await remove(tx, old, nowMs);
     return old.length;

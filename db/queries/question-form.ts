@@ -1,9 +1,10 @@
-import { and, asc, eq, isNull, or } from 'drizzle-orm';
+import { and, asc, eq } from 'drizzle-orm';
+import { openRouter, type Router } from './answerers';
 import { requireCan } from './standing';
-import { db, type Db, type Tx } from '../client';
-import { buildIsVisible, entryIsVisible, isOpen } from '../scope';
-import { assignments, builds, entries, topics, users } from '../schema';
-import { penHolder } from '@/lib/questions/pen-holder';
+import { db } from '../client';
+import { buildIsVisible, entryIsVisible } from '../scope';
+import { builds, entries, topics, users } from '../schema';
+import type { RoutingTopic } from '@/lib/questions/route-question';
 import { excerpt } from '@/lib/rich-text/excerpt';
 import type { Viewer } from '@/lib/viewer';
 
@@ -35,40 +36,33 @@ export type QuotedEntry = NonNullable<Awaited<ReturnType<typeof findQuotedEntry>
  * when none was named or it cannot be read.
  * @throws OutOfReach, or Denied for anybody but the owner
  */
-export async function requireAskable(viewer: Viewer, orderNumber: string, entryId: string | null) {
+export async function requireAskable(
+  viewer: Viewer,
+  orderNumber: string,
+  entryId: string | null,
+  nowMs: number = Date.now(),
+) {
   const build = await requireCan(viewer, 'question.ask', orderNumber);
-  const [list, staff, entry] = await Promise.all([
+  const [list, router, entry] = await Promise.all([
     db().select().from(topics).orderBy(asc(topics.position)).limit(40),
-    staffOn(db(), build.id),
+    openRouter(db(), build.id, nowMs),
     entryId ? findQuotedEntry(viewer, entryId) : null,
   ]);
   return {
     orderNumber: build.orderNumber,
-    topics: list.map((topic) => ({ id: topic.id, name: topic.name, answerer: answererOf(topic, staff) })),
+    topics: list.map((topic) => ({
+      id: topic.id,
+      name: topic.name,
+      dueHours: topic.dueHours,
+      answerer: answererOf(topic, router),
+    })),
     entry: entry?.buildId === build.id ? entry : null,
   };
 }
 
-/**
- * Who may hold the pen on a build, in the order in which they were put on it. While it is held from view, only who is
- * cleared for it: anybody else could not read what they should answer.
- */
-export function staffOn(reader: Db | Tx, buildId: string) {
-  return reader
-    .select({ id: users.id, name: users.name, role: users.role, department: users.department })
-    .from(assignments)
-    .innerJoin(users, and(eq(users.id, assignments.userId), isNull(users.disabledAt)))
-    .innerJoin(builds, eq(builds.id, assignments.buildId))
-    .where(and(eq(builds.id, buildId), isNull(assignments.endedAt), or(eq(assignments.cleared, true), isOpen)))
-    .orderBy(asc(assignments.startedAt), asc(assignments.id));
-}
-
-type Staff = Awaited<ReturnType<typeof staffOn>>;
-
-function answererOf(topic: Parameters<typeof penHolder>[0], staff: Staff) {
-  const holderId = penHolder(topic, staff);
-  const answerer = staff.find(({ id }) => id === holderId);
-  return answerer ? { name: answerer.name, role: answerer.role, department: answerer.department } : null;
+function answererOf(topic: RoutingTopic, router: Router) {
+  const { holder } = router.route(topic);
+  return holder ? { name: holder.name, role: holder.role, department: holder.department } : null;
 }
 
 export type AskableTopic = Awaited<ReturnType<typeof requireAskable>>['topics'][number];

@@ -5,6 +5,7 @@ import { prepared } from '../prepared';
 import { sessions, users } from '../schema';
 import { hashToken } from '@/lib/auth/secrets';
 import { sessionLimits } from '@/lib/auth/session-limits';
+import { soundZone } from '@/lib/schedule/digest-times';
 import type { Viewer } from '@/lib/viewer';
 
 /** Idle time is written at most this often, so that reading a diary is not a stream of writes. */
@@ -42,7 +43,8 @@ const liveSession = prepared((on) =>
 export async function findSessionViewer(token: string, nowMs: number): Promise<SessionViewer | null> {
   const row = await liveSession().get({ tokenHash: hashToken(token), nowMs });
   if (!row) return null;
-  const { lastSeenAt, ...viewer } = row;
+  const { lastSeenAt, timeZone, ...person } = row;
+  const viewer = { ...person, timeZone: soundZone(timeZone) };
   if (nowMs - lastSeenAt > TOUCH_EVERY_MS) await touchSession(viewer, nowMs);
   return viewer;
 }

@@ -1,6 +1,7 @@
 import { and, asc, desc, eq, gt, inArray, isNull, lt, sql } from 'drizzle-orm';
+import { unpassedLists } from './check-gate';
 import type { Tx } from '../client';
-import { buildStages, signOffs, stageMoves } from '../schema';
+import { builds, buildStages, signOffs, stageMoves } from '../schema';
 import { BadInput, Denied } from '@/lib/errors';
 
 type Move = { buildId: string; stageId: string; byId: string };
@@ -35,13 +36,14 @@ function requireOnRoute(stages: Stage[], stageId: string): Stage {
 /**
  * Ends the stage of now and starts another; stages that were passed over end with it. Starting it twice is starting it
  * once. @returns the move, or null when the stage had begun before
- * @throws BadInput for a stage of another route, or when a sign-off that blocks it is not signed
+ * @throws BadInput for a stage of another route, or when a sign-off that blocks it is not signed, or an inspection before it not passed
  */
 export async function startStage(tx: Tx, move: Move, nowMs: number): Promise<string | null> {
   const stages = await stagesOf(tx, move.buildId);
   const next = requireOnRoute(stages, move.stageId);
   if (next.startedAt !== null) return null;
   await requireUnblocked(tx, move.buildId, stages, next);
+  await requireInspected(tx, move.buildId, stages, next);
   const moveId = await keepMove(tx, stages, move, null, nowMs);
   await tx
     .update(buildStages)
@@ -81,6 +83,16 @@ async function requireUnblocked(tx: Tx, buildId: string, stages: Stage[], next: 
   });
 }
 
+/** Where a route has an inspection list for a stage, the build leaves that stage only when the list is passed. */
+async function requireInspected(tx: Tx, buildId: string, stages: Stage[], next: Stage): Promise<void> {
+  const left = stages.filter(({ position, finishedAt }) => position < next.position && finishedAt === null);
+  const [list] = await unpassedLists(tx, buildId, left);
+  if (!list) return;
+  throw new BadInput({
+    stageId: `${next.name} can start when the list “${list.name}” is passed. Go through it on this build’s page of checks.`,
+  });
+}
+
 /**
  * Takes a build back to an earlier stage: that one is open again, and the later ones are as if they had not begun.
  * @throws BadInput when there is no reason, or the stage does not lie behind
@@ -98,6 +110,8 @@ export async function moveBack(tx: Tx, move: Move, reason: string, nowMs: number
     .update(buildStages)
     .set({ startedAt: null, finishedAt: null })
     .where(and(eq(buildStages.buildId, move.buildId), gt(buildStages.position, target.position)));
+  // What passed the final check passed as it was then.
+  await tx.update(builds).set({ readyAt: null }).where(eq(builds.id, move.buildId));
   return moveId;
 }
 

@@ -16,6 +16,8 @@ export const checkLists = sqliteTable(
       .references(() => routes.id, { onDelete: 'cascade' }),
     stageKey: text('stage_key').notNull(),
     name: text('name').notNull(),
+    /** Taken out of use; what was inspected by it stays. */
+    retiredAt: instant('retired_at'),
   },
   (t) => [index('check_lists_route').on(t.routeId, t.stageKey)],
 );
@@ -30,6 +32,8 @@ export const checkLines = sqliteTable(
     position: integer('position').notNull(),
     text: text('text').notNull(),
     photoNeeded: integer('photo_needed', { mode: 'boolean' }).notNull().default(false),
+    /** Removed, or reworded after it had been marked: the marks keep the words they were made on. */
+    retiredAt: instant('retired_at'),
   },
   (t) => [index('check_lines_list').on(t.listId, t.position)],
 );
@@ -90,6 +94,7 @@ export const checkMarks = sqliteTable(
   },
   (t) => [
     primaryKey({ columns: [t.runId, t.lineId] }),
+    index('check_marks_photo').on(t.photoId),
     check('check_marks_known', sql`${t.mark} in ('pass', 'fail', 'not_applicable')`),
   ],
 );

@@ -116,6 +116,10 @@ export const providerEvents = sqliteTable(
     id: text('id').primaryKey(),
     kind: text('kind').notNull(),
     outcome: text('outcome').notNull(),
+    /** Whom it concerns, where that is known. */
+    userId: text('user_id').references(() => users.id, { onDelete: 'set null' }),
+    /** Why a reply was not kept, as a sentence; no address, no text of it. */
+    note: text('note'),
     receivedAt: instant('received_at').notNull(),
   },
   (t) => [index('provider_events_received').on(t.receivedAt)],

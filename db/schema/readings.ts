@@ -3,7 +3,7 @@ import { createdAt, id } from './columns';
 import { builds } from './builds';
 import { entries } from './entries';
 import { users } from './users';
-import type { ReadingValue } from '../../lib/readings/reading';
+import type { ReadingValue, ShownReading } from '../../lib/readings/reading';
 
 /** A number taken at the bench, carried by an entry; `item_key` names the spec item it measures. */
 export const readings = sqliteTable(
@@ -18,6 +18,8 @@ export const readings = sqliteTable(
       .references(() => builds.id, { onDelete: 'cascade' }),
     position: integer('position').notNull(),
     value: text('value', { mode: 'json' }).$type<ReadingValue>().notNull(),
+    /** What the diary says of it, computed when it was taken, against the spec as it was then. */
+    shown: text('shown', { mode: 'json' }).$type<ShownReading>(),
     itemKey: text('item_key'),
   },
   (t) => [index('readings_entry').on(t.entryId, t.position), index('readings_build').on(t.buildId, t.itemKey)],
@@ -32,6 +34,8 @@ export const proofs = sqliteTable(
       .notNull()
       .references(() => builds.id, { onDelete: 'cascade' }),
     itemKey: text('item_key').notNull(),
+    /** What the spec called the item when the entry showed it; empty where that was not written down. */
+    label: text('label').notNull().default(''),
     entryId: text('entry_id')
       .notNull()
       .references(() => entries.id, { onDelete: 'cascade' }),

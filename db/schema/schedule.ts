@@ -3,6 +3,8 @@ import { check, index, integer, primaryKey, real, sqliteTable, text, uniqueIndex
 import { id, instant } from './columns';
 import { builds, buildStages } from './builds';
 import { users } from './users';
+import type { KeptGrounds } from '../../lib/floor/grounds';
+import type { CurvePoint } from '../../lib/schedule/ready-window';
 
 /** When the shop works, in its own zone: one row for each stretch of a weekday; 1 is Monday, 7 is Sunday (ISO 8601). */
 export const workingHours = sqliteTable(
@@ -52,8 +54,18 @@ export const readyWindows = sqliteTable(
     earliestOn: text('earliest_on'),
     likelyOn: text('likely_on'),
     latestOn: text('latest_on'),
+    /** What it waits for ("the finish sample"), or why nothing can be said. */
+    words: text('words'),
     /** What the shown window was widened by against the bare one, for calibration. */
     widenedBy: real('widened_by').notNull().default(1),
+    /** The bare window and the yardstick of its adjustment, so that the next adjustment can be measured. */
+    rawEarliestOn: text('raw_earliest_on'),
+    rawLatestOn: text('raw_latest_on'),
+    yardstickDays: real('yardstick_days'),
+    /** Kept of a build's latest window, and of the first in each stage. */
+    curve: text('curve', { mode: 'json' }).$type<CurvePoint[]>(),
+    /** What it rested on, to explain the next by; null of a window that nothing will be compared with. */
+    grounds: text('grounds', { mode: 'json' }).$type<KeptGrounds>(),
     /** Why it moved against the one before, in a sentence; null when it did not. */
     movedWhy: text('moved_why'),
     computedAt: instant('computed_at').notNull(),

@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { check, integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import { instant } from './columns';
 
 /** The one row that says whose shop this is. */
 export const shop = sqliteTable(
@@ -13,6 +14,10 @@ export const shop = sqliteTable(
     holidayRegion: text('holiday_region'),
     /** Who gets a question that nobody else can answer. No foreign key: users come after the shop. */
     fallbackUserId: text('fallback_user_id'),
+    /** When the calendar, an estimate or a route last changed: windows from before it are out of date. */
+    scheduleChangedAt: instant('schedule_changed_at').notNull().default(0),
+    /** When a ready window was last computed. */
+    windowsComputedAt: instant('windows_computed_at').notNull().default(0),
   },
   (t) => [check('shop_single', sql`${t.id} = 1`)],
 );

@@ -20,7 +20,7 @@ export const documents = sqliteTable(
     photoId: text('photo_id').references(() => photos.id),
     objectKey: text('object_key'),
     sizeBytes: integer('size_bytes'),
-    /** Of the very bytes that are shown, hex; null until they have arrived. */
+    /** Of the very bytes that are shown, hex; until a PDF has been checked, of those that were promised. */
     sha256: text('sha256'),
     state: text('state', { enum: ['granted', 'ready', 'refused'] }).notNull(),
     refusal: text('refusal'),
@@ -33,6 +33,7 @@ export const documents = sqliteTable(
   },
   (t) => [
     index('documents_build').on(t.buildId, t.createdAt),
+    index('documents_photo').on(t.photoId),
     uniqueIndex('documents_upload_unique').on(t.uploaderId, t.uploadKey),
     check('documents_state_known', sql`${t.state} in ('granted', 'ready', 'refused')`),
   ],
@@ -61,6 +62,8 @@ export const signOffs = sqliteTable(
     /** What a concession says, word for word: signed value, measured value, reason. */
     concession: text('concession', { mode: 'json' }).$type<{ signed: string; measured: string; reason: string }>(),
     contentHash: text('content_hash').notNull(),
+    /** The sign-off of the same thing that stood here before: a change asks again, and the chain stays to be read. */
+    replacesId: text('replaces_id'),
     /** The day it is asked for by, as yyyy-mm-dd in the shop's zone. */
     dueOn: text('due_on').notNull(),
     blocksStageKey: text('blocks_stage_key'),
@@ -70,6 +73,7 @@ export const signOffs = sqliteTable(
       .references(() => users.id),
     askedAt: instant('asked_at').notNull(),
     answeredById: text('answered_by_id').references(() => users.id),
+    /** When its wait ended: answered, taken back, or superseded, which nobody answers. */
     answeredAt: instant('answered_at'),
     /** The name the owner typed. */
     signedName: text('signed_name'),
@@ -82,6 +86,8 @@ export const signOffs = sqliteTable(
   (t) => [
     index('sign_offs_build').on(t.buildId, t.askedAt),
     index('sign_offs_open').on(t.state, t.dueOn),
+    index('sign_offs_document').on(t.documentId),
+    index('sign_offs_replaces').on(t.replacesId),
     check('sign_offs_state_known', sql`${t.state} in ('asked', 'signed', 'change_asked', 'superseded', 'withdrawn')`),
     check('sign_offs_signed_has_name', sql`${t.state} <> 'signed' or ${t.signedName} is not null`),
   ],

@@ -10,6 +10,8 @@ export interface Fault {
   afterAccepting: boolean;
   /** How long the answer is held back, in milliseconds. */
   hold_ms: number;
+  /** It hits one request in so many, the first of each round; 1 hits every one. */
+  oneIn: number;
 }
 
 /** The switch that lets a test or a demonstration make a stand-in misbehave. */
@@ -22,15 +24,19 @@ export interface FaultSwitch {
 
 export function createFaultSwitch(): FaultSwitch {
   let current: Fault | undefined;
+  let requests = 0;
   return {
     set: (fault) => {
       current = { ...fault };
+      requests = 0;
     },
     clear: () => {
       current = undefined;
     },
     take: () => {
       if (current === undefined || current.times < 1) return undefined;
+      requests += 1;
+      if ((requests - 1) % current.oneIn !== 0) return undefined;
       current.times -= 1;
       return { ...current };
     },
@@ -44,7 +50,7 @@ function wholeNumber(value: unknown, fallback: number): number {
 }
 
 /**
- * Reads `{ status, times, retryAfterSeconds?, afterAccepting?, holdMs? }`; `times` is 1 unless given.
+ * Reads `{ status, times, retryAfterSeconds?, afterAccepting?, holdMs?, oneIn? }`; `times` is 1 unless given.
  * @throws RangeError naming what is wrong
  */
 export function readFault(value: unknown): Fault {
@@ -56,6 +62,7 @@ export function readFault(value: unknown): Fault {
     times: wholeNumber(value.times, 1),
     afterAccepting: value.afterAccepting === true,
     hold_ms: wholeNumber(value.holdMs, 0),
+    oneIn: Math.max(1, wholeNumber(value.oneIn, 1)),
   };
   return value.retryAfterSeconds === undefined
     ? fault

@@ -1,6 +1,7 @@
 import { join } from 'node:path';
 import type { RunningFake } from './loopback';
 import { startMailRoom } from './mail-room/server';
+import type { WebhookTarget } from './mail-room/webhooks';
 import { startObjectStore } from './object-store/server';
 
 const NAMES = [
@@ -36,6 +37,12 @@ function localPort(name: string, fallback: number): number {
   return Number(port || 80);
 }
 
+/** The program's door for the provider, where it has a secret to check what comes in. */
+function webhookTarget(appUrl: string): WebhookTarget | undefined {
+  const secret = process.env.RESEND_WEBHOOK_SECRET;
+  return secret ? { url: new URL('/api/webhooks/mail', appUrl).href, secret } : undefined;
+}
+
 async function startFakes(): Promise<RunningFake[]> {
   const settings = requireSettings();
   const folder = process.env.FAKES_DIR || '.data';
@@ -52,6 +59,7 @@ async function startFakes(): Promise<RunningFake[]> {
     port: localPort('RESEND_BASE_URL', 4569),
     dataDir: join(folder, 'mails'),
     apiKey: settings.RESEND_API_KEY,
+    webhook: webhookTarget(settings.APP_URL),
   });
   console.log(`Mail room: ${mailRoom.url}`);
   return [objectStore, mailRoom];

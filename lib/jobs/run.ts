@@ -3,7 +3,11 @@ import { Cron } from 'croner';
 import { writeDueDigests } from './digests';
 import { sendDueMail } from './outbox';
 import { developLeftovers } from './photo-pipeline';
+import { tendQuestions } from './question-clock';
 import { sweep } from './sweep';
+import { queueQuietReminders } from '@/db/queries/quiet';
+import { refreshWindows } from '@/db/queries/ready-windows';
+import { queueSignOffReminders } from '@/db/queries/sign-off-reminders';
 import { logFault } from '@/lib/log';
 
 const owner = randomUUID();
@@ -47,5 +51,9 @@ export function startJobs(): void {
   state().started = true;
   every('*/5 * * * * *', 'mail', async () => wakeMail());
   every('30 * * * * *', 'photos', developLeftovers);
+  every('20 * * * * *', 'answers due', () => tendQuestions(Date.now()));
+  every('*/15 * * * * *', 'ready windows', () => refreshWindows(Date.now()));
+  every('50 */15 * * * *', 'quiet builds', () => queueQuietReminders(Date.now()));
+  every('40 */15 * * * *', 'sign-off reminders', () => queueSignOffReminders(Date.now()));
   every('15 */10 * * * *', 'sweep', () => sweep(Date.now()));
 }

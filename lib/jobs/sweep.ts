@@ -1,3 +1,4 @@
+import { sweepUnusedDocuments } from '@/db/queries/documents';
 import { settleDoomed, sweepUnfinishedPhotos, unscopedDoomedObjects } from '@/db/queries/photos';
 import { purgeExpiredSignIns } from '@/db/queries/sign-in';
 import { deleteObject } from '@/lib/storage';
@@ -20,6 +21,7 @@ export async function deleteDoomedObjects(nowMs: number): Promise<number> {
 /** What time has made useless: uploads that never finished, dead links, ended sessions, doomed objects. */
 export async function sweep(nowMs: number): Promise<void> {
   while ((await sweepUnfinishedPhotos(nowMs)) > 0);
+  while ((await sweepUnusedDocuments(nowMs)) > 0);
   await purgeExpiredSignIns(nowMs);
   while ((await deleteDoomedObjects(nowMs)) > 0);
 }

@@ -44,3 +44,8 @@ export function unsubscribeHeaders(url: string): MailHeaders {
 export function autoHeaders(): MailHeaders {
   return { 'Auto-Submitted': 'auto-generated', 'X-Auto-Response-Suppress': 'OOF, AutoReply' };
 }
+
+/** Names what the mail belongs to, for filters (RFC 2919, 3): a phrase and an id on the shop's own host. */
+export function listHeaders(host: string): MailHeaders {
+  return { 'List-Id': requireHeader('List-Id', `Build diary <diary.${host}>`) };
+}

@@ -8,9 +8,15 @@ export const hourWords = (hourLocal: number) => `${String(hourLocal).padStart(2,
 /** A zone's place as people say it: `America/New_York` gives "New York". */
 export const placeWords = (zone: string) => zone.split('/').at(-1)?.replaceAll('_', ' ') ?? zone;
 
-/** When somebody's diary mail comes, as a sentence. */
-export function mailWords({ cadence, hourLocal, weekday }: MailPlan, zone: string): string {
+/** When somebody's digest comes, as a sentence; staff have no diary in theirs. */
+export function mailWords(
+  { cadence, hourLocal, weekday }: MailPlan,
+  zone: string,
+  side: 'client' | 'shop' = 'client',
+): string {
   const time = `${hourWords(hourLocal)}, ${placeWords(zone)} time, when there is something new.`;
+  if (side === 'shop' && cadence === 'none') return 'No digest.';
+  if (side === 'shop' && cadence === 'at_once') return 'A mail at once, whenever there is something.';
   if (cadence === 'none') return 'No diary mail. You read it here.';
   if (cadence === 'at_once') return 'A mail at once, whenever a page is added.';
   return cadence === 'daily' ? `A digest every day at ${time}` : `A digest every ${weekdays[weekday - 1]} at ${time}`;

@@ -21,13 +21,14 @@ export function shopTransport(orderNumber: string): UploadTransport {
   };
 }
 
-async function measure(blob: Blob): Promise<string> {
+/** SHA-256 in base64. @throws when the bytes cannot be read */
+export async function measure(blob: Blob): Promise<string> {
   const digest = await crypto.subtle.digest('SHA-256', await blob.arrayBuffer());
   return btoa(String.fromCharCode(...new Uint8Array(digest)));
 }
 
-/** XMLHttpRequest, because fetch does not tell how much of a body has left. */
-function send(
+/** Puts a blob behind a link. XMLHttpRequest, because fetch does not tell how much of a body has left. */
+export function send(
   link: UploadLink,
   blob: Blob,
   onShare: (share: number) => void,

@@ -21,10 +21,28 @@ export type CoatReading = {
 /** Finish: a colour measured against the approved sample. */
 export type ColourReading = { kind: 'colour'; l: number; a: number; b: number; illuminant: 'D50' | 'D65' };
 
-/** One measured length, angle or count, as typed: a scale, a nut width, a line of the set-up sheet. */
-export type MeasureReading = { kind: 'measure'; name: string; measured: Measure };
+/** One measured length, angle or count, as typed: a scale, a nut width, a line of the set-up sheet by its key. */
+export type MeasureReading = { kind: 'measure'; name: string; measured: Measure; setupLine?: string };
 
 /** Sanding: the papers used, in order. */
 export type AbrasiveReading = { kind: 'abrasives'; grades: string[] };
 
 export type ReadingValue = WoodRoomReading | CoatReading | ColourReading | MeasureReading | AbrasiveReading;
+
+/** A reading as it is taken: `itemKey` names the spec item it measures, null for one that measures none. */
+export type NewReading = { value: ReadingValue; itemKey: string | null };
+
+/** A reading in words, with the bar it is drawn as; the diary shows this and computes nothing. */
+export type ShownReading = {
+  kind: ReadingValue['kind'];
+  /** What was measured. */
+  label: string;
+  /** The value, lengths in both unit systems. */
+  figures: string;
+  /** What follows from it, or how it stands to its tolerance; '' where there is nothing to say. */
+  words: string;
+  /** Null where it has no tolerance. */
+  standing: 'within' | 'outside' | null;
+  /** The tolerance and the value, all in one unit; a limit has no `low`. Null where there is nothing to draw. */
+  bar: { low?: number; high: number; value: number; aim?: number } | null;
+};

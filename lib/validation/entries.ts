@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { provesField, readingsField } from './readings';
 import { MAX_PHOTOS_PER_ENTRY } from '@/lib/photos/limits';
 import { checkNote } from '@/lib/rich-text/check';
 import { cleanLine } from '@/lib/rich-text/names';
@@ -37,10 +38,12 @@ export const newEntry = z
         MAX_PHOTOS_PER_ENTRY,
         `An entry holds at most ${MAX_PHOTOS_PER_ENTRY} photos. Post the rest in a second one.`,
       ),
+    readings: readingsField,
+    proves: provesField,
   })
-  .refine((entry) => entry.note.text.trim() !== '' || entry.photos.length > 0, {
+  .refine((entry) => entry.note.text.trim() !== '' || entry.photos.length > 0 || entry.readings.length > 0, {
     path: ['note'],
-    message: 'There is nothing in it yet. Add a photo or write a line.',
+    message: 'There is nothing in it yet. Add a photo or a reading, or write a line.',
   });
 
 export type NewEntry = z.output<typeof newEntry>;

@@ -1,4 +1,7 @@
 import { z } from 'zod';
+import { mailChoiceNames } from '@/lib/mail/choices';
+import { mailKinds } from '@/lib/mail/kinds';
+import { localeTags } from '@/lib/mail/locales';
 import { isZone } from '@/lib/schedule/digest-times';
 
 const zone = z
@@ -14,12 +17,43 @@ const wholeWithin = (lowest: number, highest: number, sentence: string) =>
     .transform(Number)
     .refine((value) => value >= lowest && value <= highest, sentence);
 
-export const zoneForm = z.object({ zone });
+const NO_SUCH_HOUR = 'Choose an hour from the list, or none.';
 
-export const mailForm = z.object({
-  zone,
-  cadence: z.enum(['at_once', 'daily', 'weekly', 'none'], { error: 'Choose how the diary comes by mail.' }),
-  hourLocal: wholeWithin(0, 23, 'Choose an hour from the list.'),
-  weekday: wholeWithin(1, 7, 'Choose a day of the week.'),
-});
+/** An hour, or none. */
+const hourOrNone = z
+  .string()
+  .regex(/^\d{0,2}$/, NO_SUCH_HOUR)
+  .transform((hour) => (hour === '' ? null : Number(hour)))
+  .refine((hour) => hour === null || hour <= 23, NO_SUCH_HOUR)
+  .optional();
+
+const quietTogether = 'Choose both ends of your quiet hours, or neither, and two different hours.';
+
+export const mailForm = z
+  .object({
+    zone,
+    cadence: z.enum(['at_once', 'daily', 'weekly', 'none'], { error: 'Choose how the diary comes by mail.' }),
+    hourLocal: wholeWithin(0, 23, 'Choose an hour from the list.'),
+    weekday: wholeWithin(1, 7, 'Choose a day of the week.'),
+    quietFromHour: hourOrNone,
+    quietToHour: hourOrNone,
+  })
+  .refine(
+    ({ quietFromHour: from = null, quietToHour: to = null }) =>
+      from === null ? to === null : to !== null && to !== from,
+    {
+      path: ['quietToHour'],
+      error: quietTogether,
+    },
+  );
 export type MailForm = z.output<typeof mailForm>;
+
+/** How each kind of mail comes, as the page of choices sends it. */
+export const choicesForm = z
+  .partialRecord(z.enum(mailKinds), z.enum(mailChoiceNames, { error: 'Choose one of the three.' }))
+  .transform((chosen) => mailKinds.flatMap((kind) => (chosen[kind] ? [{ kind, choice: chosen[kind] }] : [])));
+
+export const wordingForm = z.object({
+  locale: z.enum(localeTags, { error: 'Choose a way to write dates from the list.' }),
+  units: z.enum(['in', 'mm'], { error: 'Choose inches or millimetres.' }),
+});

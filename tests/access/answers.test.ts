@@ -1,15 +1,19 @@
 import { beforeEach, expect, test, vi } from 'vitest';
 import { count, eq } from 'drizzle-orm';
+import { GET as getSheet } from '@/app/api/builds/[orderNumber]/as-built/pdf/route';
+import { POST as postLine } from '@/app/api/builds/[orderNumber]/checks/[runId]/route';
 import { GET as getDiary } from '@/app/api/builds/[orderNumber]/diary/route';
 import { POST as visit } from '@/app/api/builds/[orderNumber]/visits/route';
 import { PATCH as patchEntry } from '@/app/api/entries/[entryId]/route';
 import { POST as postLetter } from '@/app/api/questions/[questionId]/letters/route';
 import { GET as getPhoto } from '@/app/api/photos/[photoId]/[widthPx]/route';
 import { POST as finishPhoto } from '@/app/api/photos/[photoId]/route';
+import { GET as getDocument, POST as finishDocument } from '@/app/api/documents/[documentId]/route';
 import { db } from '@/db/client';
 import { auditEvents } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { openTestDatabase } from '../support/database';
+import { makeDocument } from '../support/sign-off-world';
 import {
   makeBuild,
   makeEntry,
@@ -43,13 +47,21 @@ async function openForeign() {
   const build = await makeBuild({ owner, staff: [{ person: author }] });
   const entryId = await makeEntry(build, author);
   const photoId = await makePhoto(build, author, { entryId });
-  return { build, entryId, photoId, questionId: await makeQuestion(build, owner) };
+  const documentId = await makeDocument(build, author);
+  return { build, entryId, documentId, photoId, questionId: await makeQuestion(build, owner) };
 }
 
 const note = noteOf('Rewritten.').doc;
 const doors = [
   { name: 'reading a diary', handler: getDiary, id: 'orderNumber' },
   { name: 'marking a visit', handler: visit, id: 'orderNumber', body: {} },
+  { name: 'fetching the as-built sheet', handler: getSheet, id: 'orderNumber' },
+  {
+    name: 'marking a line of a check',
+    handler: postLine,
+    id: 'orderNumber',
+    body: { lineId: 'line', mark: 'pass', note: '', photoId: null },
+  },
   { name: 'editing an entry', handler: patchEntry, id: 'entryId', body: { revision: 1, note } },
   {
     name: 'writing a letter',
@@ -58,6 +70,8 @@ const doors = [
     body: { note, idempotencyKey: 'a-letter-sent-once' },
   },
   { name: 'looking at a photo', handler: getPhoto, id: 'photoId' },
+  { name: 'opening a drawing', handler: getDocument, id: 'documentId' },
+  { name: 'finishing a drawing', handler: finishDocument, id: 'documentId', body: {} },
   { name: 'finishing an upload', handler: finishPhoto, id: 'photoId', body: {} },
 ] as const;
 

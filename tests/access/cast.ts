@@ -7,6 +7,7 @@ import {
   makePerson,
   makePhoto,
   makeQuestion,
+  makeReading,
   NOW_MS,
   type Person,
   type TestBuild,
@@ -116,6 +117,7 @@ export async function openCast() {
     held: await makeEntry(open, author, { state: 'held' }),
     withdrawn: await makeEntry(open, author, { state: 'withdrawn' }),
   };
+  for (const entryId of Object.values(entries)) await makeReading(open, entryId);
   await makeEntry(held, author);
   const ownPhoto = await forEverybody((name) => makePhoto(open, people(name)));
   const questions = {

@@ -3,6 +3,7 @@ import { listBuilds, listClients, listStaff, listStages, requireBuild } from '@/
 import { diaryPage, diaryState } from '@/db/queries/diary';
 import { requirePhotoObject } from '@/db/queries/photos';
 import { listBuildQuestions, listQueue } from '@/db/queries/question-lists';
+import { listReadings } from '@/db/queries/readings';
 import { requireQuestion } from '@/db/queries/questions';
 import { OutOfReach } from '@/lib/errors';
 import { openTestDatabase } from '../support/database';
@@ -30,7 +31,7 @@ const expected: Record<
     open: true,
     held: false,
     entries: client,
-    photos: client,
+    photos: `${client}, own`,
     questions: 'neck, money',
     addresses: 'owner, companion',
   },
@@ -128,6 +129,14 @@ describe.each(castNames.map((who) => ({ who, ...expected[who] })))('$who', ({ wh
     const read = Object.entries(cast.entries).filter(([, id]) => entries.some((entry) => entry.id === id));
     expect(read.map(([name]) => name).join(', ')).toBe(may.entries ?? '');
     expect(entries).toHaveLength(read.length);
+  });
+
+  test('reads exactly the readings of these entries', async () => {
+    const rows = may.open ? await listReadings(cast.people(who), cast.open.orderNumber) : [];
+    const read = Object.entries(cast.entries).filter(([, id]) => rows.some(({ entryId }) => entryId === id));
+    expect(read.map(([name]) => name).join(', ')).toBe(may.entries ?? '');
+    expect(rows).toHaveLength(read.length);
+    expect(await reaches(listReadings(cast.people(who), cast.open.orderNumber))).toBe(may.open);
   });
 
   test('sees exactly these photos', async () => {

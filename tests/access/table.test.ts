@@ -10,6 +10,7 @@ action                      buyer  artist builder rep    admin
 diary.read                  oc--   oc--   --a-    --a-   --a-
 diary.read_shop_side        ----   ----   --a-    --a-   --a-
 entry.post                  ----   ----   --a-    --a-   --a-
+photo.send                  o---   o---   --a-    --a-   --a-
 entry.edit_own              ----   ----   --a-    --a-   --a-
 entry.edit_any              ----   ----   ----    --a-   --a-
 entry.release               ----   ----   ----    --a-   --a-
@@ -33,6 +34,14 @@ question.read_reps_only     o---   o---   ----    --a-   --a-
 question.ask                o---   o---   ----    ----   ----
 question.answer_with_pen    ----   ----   --a-    --a-   --a-
 question.answer_any         ----   ----   ----    --a-   --a-
+question.end                o---   o---   ----    --a-   --a-
+pen.pass                    ----   ----   --a-    --a-   --a-
+pen.pass_any                ----   ----   ----    --a-   --a-
+margin.read                 ----   ----   --a-    --a-   --a-
+margin.write                ----   ----   --a-    --a-   --a-
+phrase.keep                 ----   ----   ---n    ---n   ---n
+phrase.keep_shop            ----   ----   ----    ---n   ---n
+away.set                    ----   ----   ---n    ---n   ---n
 companion.manage            o---   o---   ----    ----   ----
 access.read_events          o---   o---   ----    --a-   --a-
 build.hold                  ----   ----   ----    --a-   --a-

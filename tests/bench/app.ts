@@ -7,7 +7,7 @@ import { demoEnvironment } from '../../db/demo/settings.mjs';
 import { reachable, start } from '../../db/demo/steps.mjs';
 import { fillDatabase } from './fill';
 
-export type App = { url: string; pid: number; stop: () => Promise<void> };
+export type App = { url: string; pid: number; env: Awaited<ReturnType<typeof settings>>; stop: () => Promise<void> };
 
 async function freePort(): Promise<number> {
   const server = createServer().listen(0, '127.0.0.1');
@@ -43,11 +43,14 @@ function stopping(child: ReturnType<typeof start>) {
   };
 }
 
-/** The built app with a database of its own that holds so many builds, and the local stand-ins where they are needed. */
-export async function openApp(builds: number, withStandIns = false): Promise<App> {
+/**
+ * The built app with a database of its own that holds so many builds, and the local stand-ins where they are needed.
+ * `fill` writes the database.
+ */
+export async function openApp(builds: number, withStandIns = false, fill = fillDatabase): Promise<App> {
   const folder = mkdtempSync(join(tmpdir(), 'flitchbook-bench-'));
   const env = await settings(folder);
-  await fillDatabase(join(folder, 'diary.db'), builds, Date.now());
+  await fill(join(folder, 'diary.db'), builds, Date.now());
   const standIns = withStandIns ? start('npx', ['tsx', 'lib/fakes/start.ts'], env, 'ignore') : undefined;
   if (standIns) await reachable(`${env.RESEND_BASE_URL}/`, 60);
   const next = ['node_modules/next/dist/bin/next', 'start', '-H', '127.0.0.1', '-p', new URL(env.APP_URL).port];
@@ -58,5 +61,5 @@ export async function openApp(builds: number, withStandIns = false): Promise<App
     if (standIns) await stopping(standIns)();
     rmSync(folder, { recursive: true, force: true });
   };
-  return { url: env.APP_URL, pid: app.pid ?? 0, stop };
+  return { url: env.APP_URL, pid: app.pid ?? 0, env, stop };
 }

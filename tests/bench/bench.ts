@@ -1,15 +1,36 @@
 import { writeFileSync } from 'node:fs';
 import { stopAll } from '../../db/demo/steps.mjs';
+import { asBuiltPdf } from './as-built-pdf';
 import { diary } from './diary';
 import { diaryJs } from './diary-js';
+import { digestKill } from './digest-kill';
+import { digestRun } from './digest-run';
+import { floor500 } from './floor-500';
 import { photoMemory } from './photo-memory';
 import { photoPipeline } from './photos';
 import type { Bench, Row } from './row';
+import { specKeystroke } from './spec-keystroke';
+import { search } from './search';
+import { windowCoverage } from './window-coverage';
+import { windows500 } from './windows-500';
 
 const FILE = '.data/bench.json';
 
 /** In this order; another bench is one more file and one more name here. */
-const benches: Bench[] = [diaryJs, photoPipeline, photoMemory, diary];
+const benches: Bench[] = [
+  diaryJs,
+  specKeystroke,
+  photoPipeline,
+  photoMemory,
+  diary,
+  floor500,
+  windows500,
+  windowCoverage,
+  asBuiltPdf,
+  digestRun,
+  digestKill,
+  search,
+];
 
 const inShort = (value: number) => (value >= 100 ? value.toFixed(0) : value.toPrecision(3));
 

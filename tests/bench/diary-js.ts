@@ -6,8 +6,8 @@ import { openApp } from './app';
 import { orderNumberOf, ownerToken } from './fill';
 import { ratioAtMost, type Bench } from './row';
 
-/** Words that only the editor, and only the shop's side of an entry, bring with them. */
-const NOT_FOR_READERS = /prosemirror|tiptap|Release to the buyer/i;
+/** Words that only the editor, the shop's side of an entry, or the fields of a reading bring with them. */
+const NOT_FOR_READERS = /prosemirror|tiptap|Release to the buyer|What was put on/i;
 
 /** Every script that a page fetched, preloads included, until it had nothing more to fetch: address and text. */
 async function scriptsOf(context: BrowserContext, url: string): Promise<Map<string, string>> {

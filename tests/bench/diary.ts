@@ -12,7 +12,8 @@ const FEW_BUILDS = BUILDS / 100;
 const ROUNDS = 9;
 const ROUND_SECONDS = 3;
 
-function openLoad() {
+/** Whoever asks the app, in a process of its own. */
+export function openLoad() {
   const child = fork(join(process.cwd(), 'tests/bench/load.ts'));
   const ask = async (load: Omit<Load, 'seconds'>): Promise<Answered> => {
     child.send({ ...load, seconds: ROUND_SECONDS });

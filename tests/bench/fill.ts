@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { sql } from 'drizzle-orm';
 import { Database } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
+import { showWoodRoom } from '@/lib/readings/wood-room';
 
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
@@ -14,19 +15,19 @@ export const ownerToken = (build: number) => `bench-owner-${build}`;
 export const staffToken = (person: number) => `bench-staff-${person}`;
 
 /** The numbers from 0 up to `count`, as the table `n`. */
-const numbers = (count: number) =>
+export const numbers = (count: number) =>
   sql`with recursive n(i) as (select 0 union all select i + 1 from n where i + 1 < ${count})`;
-const newId = sql`lower(hex(randomblob(11)))`;
+export const newId = sql`lower(hex(randomblob(11)))`;
 /** Written out: libSQL binds a number as REAL, and the remainder would be one too. */
 const staff = sql.raw(String(STAFF));
 
-const shopStatements = [
+export const shopStatements = [
   sql`insert into shop (id, name, time_zone) values (1, 'Quillhaven Guitar Works', 'Europe/Lisbon')`,
   sql`insert into departments (key, name, position) values ('wood', 'Wood room', 1), ('neck', 'Neck & frets', 2), ('finish', 'Finish', 3)`,
   sql`insert into routes (id, name) values ('solid', 'Solid body')`,
 ];
 
-const peopleStatements = (builds: number, nowMs: number) => [
+export const peopleStatements = (builds: number, nowMs: number) => [
   sql`${numbers(STAFF)} insert into users (id, email, name, role, department, created_at)
       select 'staff-' || i, 'staff-' || i || '@quillhaven.example', 'Bench hand ' || i, 'builder', 'neck', ${nowMs} from n`,
   sql`${numbers(builds)} insert into users (id, email, name, role, time_zone_asked_at, created_at)
@@ -34,7 +35,7 @@ const peopleStatements = (builds: number, nowMs: number) => [
   sql`insert into mail_settings (user_id, cadence) select id, 'none' from users where role = 'buyer'`,
 ];
 
-const buildStatements = (builds: number, nowMs: number) => [
+export const buildStatements = (builds: number, nowMs: number) => [
   sql`${numbers(builds)} insert into builds (id, order_number, instrument, finish_name, finish_hex, scale_length_in, route_id, ordered_at, created_at)
       select ${newId}, 'Q-' || (10000 + i), 'Nightjar', 'Oxblood', '#5a1a1f', 25.5, 'solid', ${nowMs - 200 * DAY_MS}, ${nowMs} from n`,
   sql`${numbers(8)} insert into build_stages (id, build_id, position, key, name, department, usual_days, started_at, finished_at)
@@ -45,13 +46,15 @@ const buildStatements = (builds: number, nowMs: number) => [
       select ${newId}, builds.id, 'staff-' || ((builds.rowid + i) % ${staff}), ${nowMs} from builds, n`,
 ];
 
+const air = { kind: 'wood_room', temperatureC: 21, relativeHumidityPercent: 45, moisturePercent: 9.1 } as const;
+
 const WORDS =
   'The second coat went on this morning after a night in the warm room, and the grain has come up the way we hoped. ' +
   'We levelled it by hand, looked at it under the lamp, and there is one spot near the heel that';
 
 /**
  * Entry by entry over all builds, as the days went: the rows of one build lie far apart in the file. One in eight is the
- * shop's own; three or four photos each.
+ * shop's own; three or four photos each, and a reading in every third.
  */
 const diaryStatements = (builds: number, nowMs: number) => [
   sql`${numbers(ENTRIES_A_BUILD)} insert into entries
@@ -69,10 +72,12 @@ const diaryStatements = (builds: number, nowMs: number) => [
         hex(randomblob(22)), 'original/' || hex(randomblob(16)), 'out/' || hex(randomblob(16)), 4000, 3000,
         'data:image/webp;base64,' || hex(randomblob(114)), '320,640,1280,2048', 'The heel under the lamp', i, ${nowMs}, ${nowMs}
       from entries e join n on i < 3 or e.rowid % 3 = 0`,
+  sql`insert into readings (id, build_id, entry_id, position, value, shown)
+      select ${newId}, build_id, id, 0, ${JSON.stringify(air)}, ${JSON.stringify(showWoodRoom(air))} from entries where rowid % 3 = 0`,
 ];
 
 /** Last seen an hour from now: no round pays for writing down that a session was used. */
-function sessionsStatement(builds: number, nowMs: number) {
+export function sessionsStatement(builds: number, nowMs: number) {
   const hashOf = (token: string) => createHash('sha256').update(token).digest('hex');
   const owners = Array.from({ length: builds }, (_, i) => ({ id: `owner-${i}`, hash: hashOf(ownerToken(i)) }));
   const staff = Array.from({ length: STAFF }, (_, i) => ({ id: `staff-${i}`, hash: hashOf(staffToken(i)) }));

@@ -1,20 +1,28 @@
 import autocannon from 'autocannon';
-import { orderNumberOf, ownerToken } from './fill';
+import { orderNumberOf, ownerToken, staffToken } from './fill';
 import { median } from './row';
 
 /** Runs in a process of its own: what asks must not take time from what answers more than the machine makes it. */
 
-export type Load = { url: string; door: 'diary' | 'bare'; builds: number; seconds: number };
+export type Load = { url: string; door: 'diary' | 'bare' | 'floor' | 'empty'; builds: number; seconds: number };
 export type Answered = { requestsPerSecond: number; p50Ms: number };
 
 const CONNECTIONS = 8;
 
-/** Asks for random builds, each as its owner; the bare handler gets the same cookies. */
+/** A random build's diary as its owner reads it, or the floor as its lead does; what is bare gets the same cookies. */
+function askFor(door: Load['door'], builds: number): { path: string; token: string } {
+  const build = Math.floor(Math.random() * builds);
+  if (door === 'floor' || door === 'empty') return { path: `/${door}`, token: staffToken(0) };
+  return {
+    path: door === 'bare' ? '/api/bare' : `/api/builds/${orderNumberOf(build)}/diary`,
+    token: ownerToken(build),
+  };
+}
+
 async function hammer({ url, door, builds, seconds }: Load): Promise<Answered> {
   const setupRequest = (request: object) => {
-    const build = Math.floor(Math.random() * builds);
-    const path = door === 'bare' ? '/api/bare' : `/api/builds/${orderNumberOf(build)}/diary`;
-    return { ...request, method: 'GET', path, headers: { cookie: `flitchbook-session=${ownerToken(build)}` } };
+    const { path, token } = askFor(door, builds);
+    return { ...request, method: 'GET', path, headers: { cookie: `flitchbook-session=${token}` } };
   };
   const tookMs: number[] = [];
   const others: number[] = [];

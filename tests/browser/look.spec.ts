@@ -9,9 +9,14 @@ const build = `/builds/${ORDER}`;
 const pages: [keyof typeof people | 'nobody', string[]][] = [
   ['nobody', ['/sign-in', '/sign-in/sent', '/sign-in/open', '/unsubscribe/some-token']],
   ['buyer', [build, '/builds', `${build}/people`, `${build}/questions`, `${build}/questions/new`, '/questions', '/me']],
+  ['buyer', [`${build}/window`]],
   ['companion', [build, `${build}/people`]],
   ['builder', ['/bench', `/bench/${ORDER}`, '/builds', '/questions', '/me', build]],
+  ['builder', ['/floor', '/floor/load', '/floor/windows', '/floor/racks/rack%209']],
   ['rep', ['/builds', '/questions', build, `${build}/people`]],
+  ['rep', ['/questions?show=late', '/questions/phrases', '/search', '/search?words=edge']],
+  ['admin', ['/access/topics']],
+  ['admin', ['/access/calendar', '/access/stages', '/floor']],
   [
     'admin',
     ['/access', '/access/builds', `/access/builds/${ORDER}`, '/access/mail', '/access/record?check=1', '/builds'],
@@ -49,7 +54,7 @@ async function lookAt(page: Page, path: string) {
 }
 
 for (const [who, paths] of pages) {
-  test(`${who}: no page complains, scrolls sideways or fails axe, on desk and phone, light and dark`, async ({
+  test(`${who}, from ${paths[0]} on: no page complains, scrolls sideways or fails axe, on desk and phone, light and dark`, async ({
     browser,
   }) => {
     test.setTimeout(180_000);

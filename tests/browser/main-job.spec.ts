@@ -36,8 +36,9 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
   await player.goto(`/builds/${ORDER}`);
   await expect(player.getByRole('heading', { level: 1, name: 'Nightjar baritone' })).toBeVisible();
   await player.goto('/me');
-  await player.getByRole('radio', { name: /^At once/ }).check();
-  await player.getByRole('button', { name: /^Save/ }).click();
+  const diaryMail = player.locator('form').filter({ has: player.locator('input[name=cadence]') });
+  await diaryMail.getByRole('radio', { name: /^At once/ }).check();
+  await diaryMail.getByRole('button', { name: /^Save/ }).click();
   await expect(player.getByText('A mail at once')).toBeVisible();
   await player.goto(`/builds/${ORDER}`);
 
@@ -99,12 +100,14 @@ test('a builder posts from the bench, the player sees it, asks, is answered and 
     await player.getByLabel('Your question in a few words').fill(question);
     await player.getByRole('textbox', { name: 'What would you like to know?' }).fill('I am counting the days.');
     await player.getByRole('button', { name: /^Send/ }).click();
-    await player.waitForURL('**/questions/**');
+    await player.waitForURL(/\/questions\/[\w-]+$/);
+    await player.getByRole('button', { name: 'Send it now' }).click();
     const asked = await mailTo(people.builder, ({ text }) => text.includes('I am counting the days.'));
     await bench.goto(/http\S+\/questions\/[\w-]+/.exec(asked.text)?.[0] ?? '');
     await bench.locator('[contenteditable=true]').fill('Two more, a day apart.');
     await bench.getByRole('button', { name: /^Send/ }).click();
     await expect(bench.getByText('Two more, a day apart.').first()).toBeVisible();
+    await bench.getByRole('button', { name: 'Send it now' }).click();
     await mailTo(people.buyer, ({ text }) => text.includes('Two more, a day apart.'));
     await expect(player.getByText('Two more, a day apart.')).toBeVisible({ timeout: 30_000 });
   });

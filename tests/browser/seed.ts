@@ -27,6 +27,7 @@ await write(async (tx) => {
     nextAttemptAt: nowMs,
   } as const;
   await tx.insert(outbox).values({ ...mail, state: 'failed', lastProblem: 'given up: the address was refused' });
+  await tx.insert(outbox).values({ ...mail, dedupeKey: `${mail.dedupeKey}/dropped`, state: 'dropped' });
   // One whose time is over: its cookie must open nothing.
   const over = { lastSeenAt: nowMs - 9e8, idleEndsAt: nowMs - 1000, endsAt: nowMs - 1000 };
   await tx.insert(sessions).values({ userId: somebody.id, tokenHash: hashToken(tokenFor('ended')), ...over });

@@ -88,7 +88,7 @@ test('the client’s page holds nothing that is the shop’s: not the state, not
   await makePhoto(build, builder, { entryId });
   const [entry] = (await diaryPage(owner, build.id, null)).entries;
   expect(Object.keys(entry ?? {}).sort()).toEqual(
-    ['author', 'body', 'datedAt', 'department', 'edited', 'id', 'photos', 'stage'].sort(),
+    ['author', 'body', 'datedAt', 'department', 'edited', 'id', 'photos', 'readings', 'shows', 'stage'].sort(),
   );
   expect(Object.keys(entry?.photos[0] ?? {}).sort()).toEqual(['alt', 'blur', 'heightPx', 'id', 'widthPx', 'widthsPx']);
   expect(JSON.stringify(entry)).not.toContain(builder.id);

@@ -2,14 +2,8 @@ import { eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { db } from '@/db/client';
 import { postEntry } from '@/db/queries/entries';
-import {
-  adoptTimeZone,
-  claimDueReader,
-  findMailSettings,
-  listUntold,
-  saveMailSettings,
-  unsubscribe,
-} from '@/db/queries/mail-settings';
+import { claimDueReaders, listUntold } from '@/db/queries/digests';
+import { adoptTimeZone, findMailSettings, saveMailSettings, unsubscribe } from '@/db/queries/mail-settings';
 import { mailSettings, users } from '@/db/schema';
 import { openTestDatabase } from '../support/database';
 import { DAY_MS, entryFor, makeBuild, makePerson, NOW_MS, openShop, type Person } from '../support/world';
@@ -31,7 +25,7 @@ const post = async ({ build, builder }: Diary) => (await postEntry(builder, entr
 /** What the next digest of this reader would tell. */
 async function untoldTo(reader: Person): Promise<string[]> {
   for (;;) {
-    const due = await claimDueReader('test', NOW_MS + 30 * DAY_MS, 1000);
+    const [due] = await claimDueReaders('test', NOW_MS + 30 * DAY_MS, 1000, 1);
     if (!due) throw new Error('nobody is due');
     if (due.viewer.id === reader.id) return (await listUntold(due)).map(({ entryId }) => entryId);
   }
@@ -46,6 +40,8 @@ describe('what a reader wants', () => {
       cadence: 'weekly',
       hourLocal: 18,
       weekday: 5,
+      quietFromHour: null,
+      quietToHour: null,
       nextDigestAt: Date.UTC(2026, 11, 4, 23),
     });
     expect(await zoneOf(owner)).toBe('America/New_York');
@@ -104,9 +100,9 @@ test('a reader who is due is taken by one of many workers, and by the next when 
   const at = NOW_MS + 90 * DAY_MS;
   const takenBy = async (workers: string[], nowMs: number) => {
     const taken = await Promise.all(
-      workers.flatMap((worker) => Array.from({ length: 20 }, () => claimDueReader(worker, nowMs, 60_000))),
+      workers.flatMap((worker) => Array.from({ length: 20 }, () => claimDueReaders(worker, nowMs, 60_000, 1))),
     );
-    return taken.filter((due) => due?.viewer.id === owner.id).length;
+    return taken.flat().filter(({ viewer }) => viewer.id === owner.id).length;
   };
   expect(await takenBy(['one', 'two', 'three'], at)).toBe(1);
   expect(await takenBy(['four'], at + 60_000)).toBe(0);

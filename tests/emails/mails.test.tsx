@@ -5,7 +5,7 @@ import { dark, light } from '@/emails/palette';
 import { renderMail } from '@/emails/render-mail';
 import { SignIn } from '@/emails/sign-in';
 import { UnsafeLink } from '@/lib/mail/mail-link';
-import { digest, invitation, letter, oneOfEach, plainWords, question, signIn } from './samples';
+import { digest, invitation, letter, notice, oneOfEach, plainWords, question, signIn } from './samples';
 
 const mails = oneOfEach(plainWords);
 const propsOf = {
@@ -14,6 +14,7 @@ const propsOf = {
   digest: digest(plainWords),
   question: question(plainWords),
   letter: letter(plainWords),
+  notice: notice(plainWords),
 };
 
 /** Every string and number in a mail's props, as deep as they lie; ids of pictures and the reader's side are not facts. */

@@ -1,6 +1,8 @@
 import { Digest, subject as digestSubject, type DigestProps } from '@/emails/digest';
 import { Invitation, subject as invitationSubject, type InvitationProps } from '@/emails/invitation';
 import { Letter, subject as letterSubject, type LetterProps } from '@/emails/letter';
+import { nameInLine } from '@/emails/name';
+import { Notice, subject as noticeSubject, type NoticeProps } from '@/emails/notice';
 import { QuestionAsked, subject as questionSubject, type QuestionAskedProps } from '@/emails/question-asked';
 import { SignIn, subject as signInSubject, type SignInProps } from '@/emails/sign-in';
 
@@ -57,6 +59,7 @@ export function digest({ person, shopName, instrument, excerpt }: Words): Digest
         moreCount: 3,
       },
     ],
+    news: [{ words: `${person} answered your question`, url: `${site}/questions/77` }],
     held: [{ url: `${site}/me/orders` }],
     settingsUrl: `${site}/me/mail`,
     unsubscribeUrl: `${site}/u/abc`,
@@ -74,6 +77,19 @@ export function letter({ person, shopName, instrument, excerpt }: Words): Letter
   return { shopName, reader: 'client', authorName: person, excerpt, url: `${site}/questions/77`, ...about };
 }
 
+export function notice({ person, shopName, instrument, excerpt }: Words): NoticeProps {
+  return {
+    shopName,
+    title: `${nameInLine(person)} signed: Drawing of the headstock`,
+    build: { orderNumber: 'Q-2417', instrument },
+    lines: [`${nameInLine(person)} holds the pen.`],
+    quoted: excerpt,
+    action: 'See the sign-off',
+    url: `${site}/builds/Q-2417`,
+    why: 'You get this because you are on this build.',
+  };
+}
+
 /** One of each mail, with its subject. */
 export function oneOfEach(words: Words) {
   return [
@@ -85,6 +101,7 @@ export function oneOfEach(words: Words) {
     },
     { mail: 'digest', element: <Digest {...digest(words)} />, subject: digestSubject(digest(words)) },
     { mail: 'question', element: <QuestionAsked {...question(words)} />, subject: questionSubject(question(words)) },
+    { mail: 'notice', element: <Notice {...notice(words)} />, subject: noticeSubject(notice(words)) },
     { mail: 'letter', element: <Letter {...letter(words)} />, subject: letterSubject(letter(words)) },
   ];
 }

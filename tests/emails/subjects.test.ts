@@ -2,13 +2,14 @@ import { describe, expect, test } from 'vitest';
 import { subject as digestSubject } from '@/emails/digest';
 import { subject as invitationSubject } from '@/emails/invitation';
 import { subject as letterSubject } from '@/emails/letter';
+import { subject as noticeSubject } from '@/emails/notice';
 import { subject as questionSubject } from '@/emails/question-asked';
 import { subject as signInSubject } from '@/emails/sign-in';
 import { UnsafeHeader } from '@/lib/mail/headers';
-import { digest, invitation, letter, plainWords, question, signIn } from './samples';
+import { digest, invitation, letter, notice, plainWords, question, signIn } from './samples';
 
 describe('the subject of a digest says what is new', () => {
-  const given = digest(plainWords);
+  const given = { ...digest(plainWords), news: [] };
   const [sample] = given.builds;
   if (sample === undefined) throw new Error('no build');
   const [first] = sample.entries;
@@ -31,6 +32,23 @@ describe('the subject of a digest says what is new', () => {
     },
     { builds: [], says: 'There is something new on one of your orders' },
   ])('$says', ({ builds, says }) => expect(digestSubject({ ...given, builds })).toBe(says));
+
+  const answered = { words: 'Ines answered your question', url: 'https://diary.example.com/questions/77' };
+
+  test.each([
+    { builds: [], news: [answered], says: 'Ines answered your question' },
+    { builds: [], news: [answered, answered, answered], says: 'Ines answered your question, and two more things' },
+    {
+      builds: [mine],
+      news: [answered],
+      says: 'Ines answered your question, and two new pages in the diary of your Nightjar baritone',
+    },
+    {
+      builds: [mine],
+      news: [answered, answered],
+      says: 'Two new pages in the diary of your Nightjar baritone, and two more things',
+    },
+  ])('$says', ({ builds, news, says }) => expect(digestSubject({ ...given, held: [], builds, news })).toBe(says));
 
   test('and a digest without news is not made', () => {
     expect(() => digestSubject({ ...given, builds: [], held: [] })).toThrow(RangeError);
@@ -73,5 +91,6 @@ describe('a name with a second line makes no subject', () => {
     expect(() => questionSubject({ ...question(plainWords), topic: evil })).toThrow(UnsafeHeader);
     expect(() => letterSubject(letter(words))).toThrow(UnsafeHeader);
     expect(() => letterSubject({ ...letter(words), reader: 'shop' })).toThrow(UnsafeHeader);
+    expect(() => noticeSubject(notice(words))).toThrow(UnsafeHeader);
   });
 });

@@ -17,6 +17,8 @@ export const testEnv = {
   S3_SECRET_ACCESS_KEY: 'a/secret+for=tests',
   RESEND_API_KEY: 're_local_example',
   RESEND_BASE_URL: 'http://127.0.0.1:9',
+  RESEND_WEBHOOK_SECRET: 'whsec_b25seS1mb3ItdGVzdHMtb25seS1mb3ItdGVzdHMtMzI=',
+  MAIL_REPLY_DOMAIN: 'answers.shop.example',
 };
 
 type TestEnv = typeof testEnv;

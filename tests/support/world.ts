@@ -5,6 +5,7 @@ import * as tables from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { isClientRole, type Role } from '@/lib/access';
 import { newToken } from '@/lib/auth/secrets';
+import { showWoodRoom } from '@/lib/readings/wood-room';
 import { checkNote } from '@/lib/rich-text/check';
 import type { NewEntry } from '@/lib/validation/entries';
 import type { Viewer } from '@/lib/viewer';
@@ -145,6 +146,8 @@ export function entryFor(build: TestBuild, over: Partial<NewEntry> = {}): NewEnt
     audience: 'buyer',
     note: noteOf('The neck blank is glued.'),
     photos: [],
+    readings: [],
+    proves: [],
     ...over,
   };
 }
@@ -206,6 +209,14 @@ export async function makePhoto(build: TestBuild, uploader: Viewer, wish: PhotoW
     }),
   );
   return id;
+}
+
+/** A reading of an entry that is simply there, out of a wood room. */
+export async function makeReading(build: TestBuild, entryId: string): Promise<void> {
+  const value = { kind: 'wood_room', temperatureC: 21, relativeHumidityPercent: 45, moisturePercent: null } as const;
+  await write((tx) =>
+    tx.insert(tables.readings).values({ buildId: build.id, entryId, position: 0, value, shown: showWoodRoom(value) }),
+  );
 }
 
 type QuestionWish = { topicId?: (typeof topicRows)[number]['id']; penHolder?: Viewer; entryId?: string };

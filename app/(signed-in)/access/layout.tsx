@@ -7,6 +7,10 @@ import { pageViewer } from '@/lib/auth/page';
 const links = [
   { href: '/access', label: 'People' },
   { href: '/access/builds', label: 'Builds' },
+  { href: '/access/checks', label: 'Inspection lists' },
+  { href: '/access/calendar', label: 'Calendar' },
+  { href: '/access/stages', label: 'Stages' },
+  { href: '/access/topics', label: 'Topics' },
   { href: '/access/mail', label: 'Mail' },
   { href: '/access/record', label: 'Record' },
 ];

@@ -1,9 +1,11 @@
 import type { Metadata } from 'next';
 import { BuildList } from '@/components/builds/build-list';
 import { FinishStyles } from '@/components/builds/finish-style';
+import { UndecidedList } from '@/components/checks/undecided-checks';
 import { LinkButton } from '@/components/ui/button';
 import { EmptyState } from '@/components/ui/empty-state';
 import { listBuilds } from '@/db/queries/builds';
+import { listUndecidedChecks } from '@/db/queries/checks';
 import { isClientRole } from '@/lib/access';
 import { pageViewer } from '@/lib/auth/page';
 import { pageNonce, requestMs } from '@/lib/request';
@@ -13,13 +15,17 @@ export const metadata: Metadata = { title: 'Builds' };
 export default async function BuildsPage({ searchParams }: PageProps<'/builds'>) {
   const viewer = await pageViewer();
   const { before } = await searchParams;
-  const builds = await listBuilds(viewer, typeof before === 'string' ? before : undefined);
+  const [builds, undecided] = await Promise.all([
+    listBuilds(viewer, typeof before === 'string' ? before : undefined),
+    listUndecidedChecks(viewer),
+  ]);
   const isClient = isClientRole(viewer.role);
   const last = builds.at(-1);
   return (
     <div className="mx-auto grid max-w-[82rem] gap-6 px-4.5 py-8 md:px-10 md:py-10">
       <FinishStyles finishHexes={builds.map(({ finishHex }) => finishHex)} nonce={await pageNonce()} />
       <h1 className="text-3xl">{isClient ? 'Your builds' : 'Your builds on the floor'}</h1>
+      <UndecidedList runs={undecided} zone={viewer.timeZone} nowMs={requestMs()} />
       {builds.length === 0 ? (
         <NoBuilds isClient={isClient} isAdmin={viewer.role === 'admin'} />
       ) : (

@@ -1,17 +1,26 @@
 import type { Metadata } from 'next';
-import { leaveOthers, saveMail, saveZone } from './actions';
-import { MailSettingsForm, ZoneForm } from '@/components/mail/settings-form';
+import { keepAway, leaveOthers, saveKinds, saveMail, saveWords } from './actions';
+import { ChoicesForm } from '@/components/mail/choices-form';
+import { MailSettingsForm } from '@/components/mail/settings-form';
 import { MailSentence } from '@/components/mail/settings-sentence';
+import { WordingForm } from '@/components/mail/wording-form';
+import { AwayForm } from '@/components/people/away-form';
 import { ConfirmForm } from '@/components/people/confirm-form';
 import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { workWords } from '@/components/people/person-words';
 import { SessionList } from '@/components/people/session-list';
 import { SignOut } from '@/components/people/sign-out';
-import { findMailSettings } from '@/db/queries/mail-settings';
+import { Notice } from '@/components/ui/notice';
+import { LinkButton } from '@/components/ui/button';
+import { findAway } from '@/db/queries/away';
+import { listChoices } from '@/db/queries/mail-choices';
+import { findMailSettings, findWording } from '@/db/queries/mail-settings';
 import { listOwnSessions, type SessionViewer } from '@/db/queries/sessions';
 import { isStaffRole } from '@/lib/access';
 import { pageViewer } from '@/lib/auth/page';
+import { awayDays } from '@/lib/questions/away-days';
 import { requestMs } from '@/lib/request';
+import { soundZone } from '@/lib/schedule/digest-times';
 import { listZones } from '@/lib/zones';
 
 export const metadata: Metadata = { title: 'Your settings' };
@@ -20,7 +29,8 @@ export default async function MePage() {
   const viewer = await pageViewer();
   return (
     <PageFrame title={<bdi>{viewer.name}</bdi>} intro={<Facts viewer={viewer} />} tools={<Browsers viewer={viewer} />}>
-      {isStaffRole(viewer.role) ? <Clock viewer={viewer} /> : <Mail viewer={viewer} />}
+      <Mail viewer={viewer} />
+      {isStaffRole(viewer.role) && <OutOfOffice viewer={viewer} />}
     </PageFrame>
   );
 }
@@ -35,19 +45,52 @@ function Facts({ viewer }: { viewer: SessionViewer }) {
 }
 
 async function Mail({ viewer }: { viewer: SessionViewer }) {
-  const { nextDigestAt, ...plan } = await findMailSettings(viewer);
+  const [{ nextDigestAt, ...plan }, choices, { lostZone, ...wording }] = await Promise.all([
+    findMailSettings(viewer),
+    listChoices(viewer),
+    findWording(viewer),
+  ]);
+  const side = isStaffRole(viewer.role) ? 'shop' : 'client';
   return (
-    <PageSection title="Mail to you">
-      <MailSentence plan={plan} nextAt={nextDigestAt} zone={viewer.timeZone} nowMs={requestMs()} />
-      <MailSettingsForm save={saveMail} plan={plan} zone={viewer.timeZone} zones={listZones(viewer.timeZone)} />
-    </PageSection>
+    <>
+      <PageSection title="Mail to you">
+        {lostZone && (
+          <Notice tone="late" title="Choose where you are again">
+            Our clocks no longer know the time zone {lostZone}. Until you choose one, every hour here is UTC.
+          </Notice>
+        )}
+        <MailSentence plan={plan} side={side} nextAt={nextDigestAt} zone={viewer.timeZone} nowMs={requestMs()} />
+        <MailSettingsForm
+          save={saveMail}
+          plan={plan}
+          side={side}
+          zone={viewer.timeZone}
+          zones={listZones(viewer.timeZone)}
+        />
+        <LinkButton href="/me/digest-preview" variant="quiet" className="justify-self-start">
+          See what your next digest would say
+        </LinkButton>
+      </PageSection>
+      <PageSection title="What comes how">
+        <ChoicesForm save={saveKinds} choices={choices} />
+      </PageSection>
+      <PageSection title="Dates and measures">
+        <WordingForm save={saveWords} {...wording} />
+      </PageSection>
+    </>
   );
 }
 
-function Clock({ viewer }: { viewer: SessionViewer }) {
+async function OutOfOffice({ viewer }: { viewer: SessionViewer }) {
+  const zone = soundZone(viewer.timeZone);
+  const days = awayDays(await findAway(viewer), zone, requestMs());
   return (
-    <PageSection title="Your clock">
-      <ZoneForm save={saveZone} zone={viewer.timeZone} zones={listZones(viewer.timeZone)} />
+    <PageSection title="Out of office">
+      <p className="text-soft">
+        On these days questions pass you over, and those you hold go to somebody else. Empty both days when you are
+        here.
+      </p>
+      <AwayForm key={`${days.from} ${days.until}`} save={keepAway} {...days} />
     </PageSection>
   );
 }

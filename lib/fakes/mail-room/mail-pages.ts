@@ -72,8 +72,8 @@ function parts({ id, html, text }: Mail): string {
   return `${html ? frame : ''}\n${text ? plain : ''}`;
 }
 
-/** One mail: envelope, HTML part in a sandbox, text part, headers, attachments. */
-export function mailPage(mail: Mail): Answer {
+/** One mail: envelope, HTML part in a sandbox, text part, headers, attachments, and what its reader can do with it. */
+export function mailPage(mail: Mail, forms: string): Answer {
   const inboxes = receivers(mail).map(
     (address) => `<a href="/inbox?to=${encodeURIComponent(address)}">${foreign(address)}</a>`,
   );
@@ -87,6 +87,7 @@ export function mailPage(mail: Mail): Answer {
 ${envelope(mail)}
 ${parts(mail)}
 ${attachmentSection(mail)}
+${forms}
 ${headerSection(mail)}
 </main>`,
   );

@@ -2,7 +2,7 @@ import { escapeMarkup } from '../markup';
 import type { Answer } from './answer';
 
 const PAGE_POLICY =
-  "default-src 'none'; style-src 'self'; frame-src 'self'; base-uri 'none'; form-action 'none'; frame-ancestors 'none'";
+  "default-src 'none'; style-src 'self'; frame-src 'self'; base-uri 'none'; form-action 'self'; frame-ancestors 'none'";
 
 const DATE = new Intl.DateTimeFormat('en-GB', { dateStyle: 'long', timeStyle: 'short', timeZone: 'UTC' });
 

@@ -21,7 +21,8 @@ function sha256(text: string): Buffer {
   return createHash('sha256').update(text).digest();
 }
 
-function checkKey(request: IncomingMessage, apiKey: string): void {
+/** @throws Refusal unless the request carries the API key */
+export function checkKey(request: IncomingMessage, apiKey: string): void {
   const given = /^Bearer +(\S+)$/i.exec(request.headers.authorization ?? '')?.[1];
   if (given === undefined) throw new Refusal('missing_api_key', 'Send the API key as a bearer token.');
   if (!timingSafeEqual(sha256(given), sha256(apiKey))) throw new Refusal('invalid_api_key', 'The API key is wrong.');

@@ -7,13 +7,18 @@ import { jsonAnswer, refusalAnswer, sendAnswer, type Answer } from './answer';
 import { openMailbox, type Mailbox } from './mailbox';
 import { answerReading } from './reading';
 import { Refusal } from './refusal';
-import { answerSending, type SendingDesk } from './sending';
+import { answerReader, type ReaderDesk } from './reader-desk';
+import { createReceivedMails } from './received';
+import { answerSending, checkKey, type SendingDesk } from './sending';
+import type { WebhookTarget } from './webhooks';
 
 export interface MailRoomOptions {
   /** 0 takes a free port. */
   port: number;
   dataDir: string;
   apiKey: string;
+  /** Who is told of answers and of what became of mails; nobody when missing. */
+  webhook?: WebhookTarget;
   /** The clock, in milliseconds since 1970. */
   now?: () => number;
 }
@@ -21,15 +26,26 @@ export interface MailRoomOptions {
 interface Room {
   mailbox: Mailbox;
   desk: SendingDesk;
+  reader: ReaderDesk;
 }
 
-async function answerRequest({ mailbox, desk }: Room, request: IncomingMessage, url: URL): Promise<Answer | undefined> {
+async function answerRequest(room: Room, request: IncomingMessage, url: URL): Promise<Answer | undefined> {
+  const { mailbox, desk, reader } = room;
   if (url.pathname === '/emails' || url.pathname === '/emails/batch') return answerSending(desk, request, url.pathname);
   if (request.method === 'DELETE' && url.pathname === '/mails') {
     await mailbox.empty();
     return jsonAnswer(200, { emptied: true });
   }
-  if (request.method === 'GET' || request.method === 'HEAD') return answerReading(mailbox, url);
+  if (/^\/mail\/[0-9a-f-]{36}\/(?:reply|events)$/.test(url.pathname) && request.method === 'POST')
+    return answerReader(reader, request, url.pathname);
+  if (request.method === 'GET' || request.method === 'HEAD') {
+    if (url.pathname.startsWith('/emails/receiving/')) {
+      checkKey(request, desk.apiKey);
+      return reader.received.describe(url.pathname, `http://${request.headers.host ?? ''}`);
+    }
+    if (url.pathname.startsWith('/received/')) return reader.received.file(url.pathname);
+    return answerReading(mailbox, url, reader.webhook !== undefined);
+  }
   throw new Refusal('not_found', 'The mail room has no such address.');
 }
 
@@ -58,7 +74,12 @@ async function serve(room: Room, request: IncomingMessage, response: ServerRespo
 export async function startMailRoom(options: MailRoomOptions): Promise<RunningFake> {
   const mailbox = await openMailbox(options.dataDir);
   const acceptance = createAcceptance(mailbox, options.now ?? Date.now);
-  const room: Room = { mailbox, desk: { apiKey: options.apiKey, acceptance, faults: createFaultSwitch() } };
+  const now = options.now ?? Date.now;
+  const room: Room = {
+    mailbox,
+    desk: { apiKey: options.apiKey, acceptance, faults: createFaultSwitch() },
+    reader: { mailbox, received: createReceivedMails(), webhook: options.webhook, now },
+  };
   return listenOnLoopback(options.port, (request, response) => {
     serve(room, request, response).catch(() => response.destroy());
   });

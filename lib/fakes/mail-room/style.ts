@@ -46,6 +46,12 @@ th { font-weight: 500; white-space: nowrap; }
 dl { display: grid; grid-template-columns: minmax(6rem, max-content) 1fr; gap: 0.35rem 1.25rem; margin: 1rem 0; }
 dt { color: var(--soft); }
 dd { margin: 0; }
+form { display: grid; gap: 0.75rem; max-width: 40rem; }
+form label { display: grid; gap: 0.25rem; }
+form label:has([type='checkbox']) { grid-template-columns: auto 1fr; align-items: baseline; }
+input, textarea, button { font: inherit; padding: 0.5rem 0.75rem; border: 1px solid var(--soft); border-radius: 5px; }
+textarea, input:not([type='checkbox']) { background: var(--sheet); color: var(--ink); width: 100%; }
+button { justify-self: start; min-height: 2.75rem; background: var(--link); color: var(--sheet); font-weight: 600; cursor: pointer; }
 
 iframe { width: 100%; height: 70vh; resize: vertical; border: 1px solid var(--line); border-radius: 5px; background: #fff; }
 pre {

@@ -3,7 +3,8 @@ import { beforeEach, describe, expect, test } from 'vitest';
 import { GET, POST } from '@/app/api/unsubscribe/[token]/route';
 import { db } from '@/db/client';
 import { editEntry, postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
-import { claimDueReader, saveMailSettings, unsubscribe, writeDigest } from '@/db/queries/mail-settings';
+import { claimDueReaders, writeDigests, type DueReader } from '@/db/queries/digests';
+import { saveMailSettings, unsubscribe } from '@/db/queries/mail-settings';
 import { closePerson, holdBuild, removeCompanion } from '@/db/queries/people';
 import { storeObject } from '@/lib/storage';
 import { mailSettings, outbox } from '@/db/schema';
@@ -115,7 +116,7 @@ describe('a digest', () => {
     const due = await claimUntil(diary.owner);
     clock.nowMs += 10;
     await post(diary, 'The neck is set.');
-    expect(await writeDigest(due, [first.id], 'mine', clock.nowMs)).toBe(true);
+    expect(await writeDigests('mine', [digestOf(due, first.id)], clock.nowMs)).toBe(1);
     await runJobs();
     const texts = (await mailsTo(diary.owner)).map(({ text }) => text);
     expect(texts.filter((text) => text.includes('The top is joined.'))).toHaveLength(1);
@@ -128,7 +129,7 @@ describe('a digest', () => {
     clock.nowMs = NEXT_8;
     const due = await claimUntil(diary.owner);
     await runJobs(NEXT_8 + 61_000);
-    expect(await writeDigest(due, [id], 'mine', clock.nowMs)).toBe(false);
+    expect(await writeDigests('mine', [digestOf(due, id)], clock.nowMs)).toBe(0);
     await runJobs();
     expect(await mailsTo(diary.owner)).toHaveLength(1);
   });
@@ -142,7 +143,7 @@ describe('a digest', () => {
     await post(diary, 'The neck is set.');
     clock.nowMs = NEXT_8 + DAY_MS;
     const due = await claimUntil(diary.owner);
-    expect(await writeDigest(old, [id], 'mine', clock.nowMs)).toBe(false);
+    expect(await writeDigests('mine', [digestOf(old, id)], clock.nowMs)).toBe(0);
     expect((await settingsOf(diary.owner))?.toldSeq).toBe(due.toldSeq);
     await runJobs(clock.nowMs + 61_000);
     expect((await mailsTo(diary.owner)).map(({ text }) => text.includes('The top is joined.'))).toEqual([true, false]);
@@ -157,7 +158,7 @@ describe('a digest', () => {
     await database.client.execute(
       `CREATE TRIGGER no_mail BEFORE INSERT ON outbox BEGIN SELECT RAISE(ABORT, 'no mail today'); END`,
     );
-    await expect(writeDigest(due, [id], 'mine', clock.nowMs)).rejects.toThrow();
+    await expect(writeDigests('mine', [digestOf(due, id)], clock.nowMs)).rejects.toThrow();
     await database.client.execute('DROP TRIGGER no_mail');
     expect(await settingsOf(diary.owner)).toEqual(before);
     await runJobs(NEXT_8 + 61_000);
@@ -165,10 +166,12 @@ describe('a digest', () => {
   });
 });
 
+const digestOf = (due: DueReader, entryId: string) => ({ due, entryIds: [entryId], newsIds: [] });
+
 /** Takes due readers, as a job does, until it is this one's turn. */
 async function claimUntil(person: Person) {
   for (;;) {
-    const due = await claimDueReader('mine', clock.nowMs, 60_000);
+    const [due] = await claimDueReaders('mine', clock.nowMs, 60_000, 1);
     if (!due) throw new Error('not due');
     if (due.viewer.id === person.id) return due;
   }
@@ -317,7 +320,7 @@ describe('leaving with one click', () => {
     clock.nowMs = NEXT_8;
     const due = await claimUntil(diary.owner);
     await unsubscribe(diary.owner.id);
-    await writeDigest(due, [id], 'mine', clock.nowMs);
+    await writeDigests('mine', [digestOf(due, id)], clock.nowMs);
     await runJobs();
     expect(await mailsTo(diary.owner)).toEqual([]);
     expect(await settingsOf(diary.owner)).toMatchObject({ cadence: 'none', nextDigestAt: null });

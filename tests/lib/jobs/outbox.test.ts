@@ -1,7 +1,8 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
-import { claimMail, freezeMail, listMailProblems, queueMail, retryMail } from '@/db/queries/outbox';
+import { listMailProblems } from '@/db/queries/mail-watch';
+import { beginTries, claimMails, queueMail, retryMail } from '@/db/queries/outbox';
 import { askForLink } from '@/db/queries/sign-in';
 import { askQuestion, writeLetter } from '@/db/queries/questions';
 import { outbox, shop } from '@/db/schema';
@@ -12,6 +13,7 @@ import { findMailReader } from '@/db/queries/mail-content';
 import { composeMail } from '@/lib/jobs/compose-mail';
 import { sendDueMail } from '@/lib/jobs/outbox';
 import { MAIL_ATTEMPTS } from '@/lib/mail/retry-delay';
+import { CORRECTABLE_MS } from '@/lib/questions/thread-rules';
 import { DAY_MS, makeBuild, makePerson, noteOf, NOW_MS, type Person } from '../../support/world';
 import { clock, openStandIns } from './stand-ins';
 
@@ -203,12 +205,12 @@ describe('an admin who tries a failed mail again', () => {
 describe('a sender that dies', () => {
   test('after claiming, before sending: the next one sends when the lease is over, not before', async () => {
     const person = await invite();
-    expect(await claimMail('dead', clock.nowMs, 60_000)).toMatchObject({ userId: person.id });
+    expect(await claimMails('dead', clock.nowMs, 60_000, 1)).toMatchObject([{ userId: person.id }]);
     expect(await send()).toBe(0);
     clock.nowMs += 60_001;
     await send();
     expect(await mailsTo(person)).toHaveLength(1);
-    expect(await rowOf(person)).toMatchObject({ state: 'sent', attempts: 2 });
+    expect(await rowOf(person)).toMatchObject({ state: 'sent', attempts: 1 });
   });
 
   test('between sending and writing that down: the next one sends the same bytes, and the box has one mail', async () => {
@@ -226,13 +228,14 @@ describe('a sender that dies', () => {
 
   test('and comes back after its lease cannot freeze or settle what another has taken', async () => {
     const person = await invite();
-    const claimed = await claimMail('slow', clock.nowMs, 60_000);
+    const [claimed] = await claimMails('slow', clock.nowMs, 60_000, 1);
     const reader = await findMailReader(person.id);
     const frozen = claimed && reader && (await composeMail(claimed, reader, clock.nowMs));
     if (!claimed || !frozen) throw new Error('nothing to send');
     clock.nowMs += 60_001;
     await send();
-    expect(await freezeMail(claimed.id, 'slow', { ...frozen, subject: 'Another one' })).toBe(false);
+    const late = { mail: claimed, frozen: { ...frozen, subject: 'Another one' } };
+    expect(await beginTries('slow', [late], clock.nowMs)).toEqual(new Set());
     expect((await rowOf(person)).frozen?.subject).not.toBe('Another one');
   });
 });
@@ -317,21 +320,29 @@ describe('mail about a question', () => {
     return { owner, builder, build, id };
   }
 
+  /** When nothing that was written before can be corrected any more. */
+  async function sendAll() {
+    clock.nowMs += CORRECTABLE_MS;
+    await send();
+  }
+
   test('goes to who holds the pen, and the answer to who asked, each once', async () => {
     const { owner, builder, id } = await openQuestion();
     await send();
+    expect(await mailsTo(builder)).toEqual([]);
+    await sendAll();
     expect((await mailsTo(builder)).map(({ text }) => text.includes('Which wire is it'))).toEqual([true]);
     const answer = { note: noteOf('The narrow, tall one.'), idempotencyKey: newId() };
     await Promise.all([1, 2, 3].map((n) => writeLetter(builder, id, answer, clock.nowMs + n)));
     clock.nowMs += 10;
-    await send();
+    await sendAll();
     expect((await mailsTo(owner)).map(({ text }) => text.includes('The narrow, tall one.'))).toEqual([true]);
   });
 
   test('on a build held from view names no instrument and quotes nothing', async () => {
     const { owner, builder, build, id } = await openQuestion(Date.now() + 90 * DAY_MS);
     await writeLetter(builder, id, { note: noteOf('The narrow, tall one.'), idempotencyKey: newId() }, clock.nowMs);
-    await send();
+    await sendAll();
     const [toBuilder, toOwner] = [await mailsTo(builder), await mailsTo(owner)];
     expect([toBuilder.length, toOwner.length]).toEqual([1, 1]);
     const everything = JSON.stringify([toBuilder, toOwner]);

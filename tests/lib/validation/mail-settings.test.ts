@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { mailForm, zoneForm } from '@/lib/validation/mail-settings';
+import { choicesForm, mailForm } from '@/lib/validation/mail-settings';
 
 const good = { zone: 'Europe/Lisbon', cadence: 'weekly', hourLocal: '8', weekday: '5' };
 
@@ -40,7 +40,35 @@ describe('the mail form', () => {
   });
 });
 
-test('the zone form takes a place and refuses an offset', () => {
-  expect(zoneForm.safeParse({ zone: 'Pacific/Auckland' }).success).toBe(true);
-  expect(zoneForm.safeParse({ zone: 'Etc/GMT+5' }).success).toBe(false);
+describe('quiet hours', () => {
+  test.each([
+    { from: '22', to: '7', gives: { quietFromHour: 22, quietToHour: 7 } },
+    { from: '', to: '', gives: { quietFromHour: null, quietToHour: null } },
+  ])('from $from to $to are taken', ({ from, to, gives }) => {
+    expect(mailForm.parse({ ...good, quietFromHour: from, quietToHour: to })).toMatchObject(gives);
+  });
+
+  test.each([
+    ['22', ''],
+    ['', '7'],
+    ['7', '7'],
+    ['24', '7'],
+    ['x', '7'],
+  ])('from %j to %j are refused with a sentence', (quietFromHour, quietToHour) => {
+    const { error } = mailForm.safeParse({ ...good, quietFromHour, quietToHour });
+    expect(error?.issues[0]?.message).toMatch(/^Choose .*\.$/);
+  });
+});
+
+describe('the choices', () => {
+  test('are kinds with one of three ways, as many as were sent', () => {
+    expect(choicesForm.parse({ letter: 'digest', question: 'never' })).toEqual([
+      { kind: 'question', choice: 'never' },
+      { kind: 'letter', choice: 'digest' },
+    ]);
+  });
+
+  test.each([{ letter: 'sometimes' }, { telegram: 'never' }])('%j is refused', (form) => {
+    expect(choicesForm.safeParse(form).success).toBe(false);
+  });
 });

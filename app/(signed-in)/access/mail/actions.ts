@@ -2,7 +2,8 @@
 
 import { revalidatePath } from 'next/cache';
 import { z } from 'zod';
-import { retryMail } from '@/db/queries/outbox';
+import { markReachable } from '@/db/queries/mail-watch';
+import { retryMail, sendAgain } from '@/db/queries/outbox';
 import { action } from '@/lib/action';
 import { wakeMail } from '@/lib/jobs/run';
 import { idField } from '@/lib/validation/people';
@@ -10,5 +11,17 @@ import { idField } from '@/lib/validation/people';
 export const retry = action(z.object({ mailId: idField }), async (viewer, { mailId }) => {
   await retryMail(viewer, mailId, Date.now());
   wakeMail();
+  revalidatePath('/access/mail');
+});
+
+export const sendOnceMore = action(z.object({ mailId: idField }), async (viewer, { mailId }) => {
+  await sendAgain(viewer, mailId, Date.now());
+  wakeMail();
+  revalidatePath('/access/mail');
+  return 'It goes out once more.';
+});
+
+export const reachAgain = action(z.object({ userId: idField }), async (viewer, { userId }) => {
+  await markReachable(viewer, userId);
   revalidatePath('/access/mail');
 });

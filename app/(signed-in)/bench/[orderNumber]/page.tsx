@@ -4,6 +4,7 @@ import { BenchHeader } from '@/components/bench/bench-header';
 import { PostForm } from '@/components/bench/post-form';
 import { FinishStyle } from '@/components/builds/finish-style';
 import { listStages, requireBuild } from '@/db/queries/builds';
+import { findBench } from '@/db/queries/readings';
 import { can } from '@/lib/access';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { pageNonce } from '@/lib/request';
@@ -16,7 +17,7 @@ export default async function PostPage({ params }: PageProps<'/bench/[orderNumbe
   const viewer = await pageViewer();
   const build = await orNotFound(requireBuild(viewer, (await params).orderNumber));
   if (!can(viewer.role, build.standing, 'entry.post')) notFound();
-  const stages = await listStages(viewer, build.id);
+  const [stages, bench] = await Promise.all([listStages(viewer, build.id), findBench(viewer, build.orderNumber)]);
   return (
     <>
       <FinishStyle finishHex={build.finishHex} nonce={await pageNonce()} />
@@ -24,9 +25,12 @@ export default async function PostPage({ params }: PageProps<'/bench/[orderNumbe
       <PostForm
         viewerId={viewer.id}
         orderNumber={build.orderNumber}
-        stages={stages.map(({ id, name, startedAt, finishedAt }) => ({
+        bench={bench}
+        stages={stages.map(({ id, key, name, work, startedAt, finishedAt }) => ({
           id,
+          key,
           name,
+          work,
           state: finishedAt !== null ? 'done' : startedAt !== null ? 'now' : 'ahead',
         }))}
         isHeldFirst={build.releaseNeeded && !can(viewer.role, build.standing, 'entry.release')}

@@ -11,7 +11,15 @@ export default async function BuildLayout({ children, params }: LayoutProps<'/bu
   const path = `/builds/${build.orderNumber}`;
   const links = [
     { href: path, label: 'Diary' },
+    ...(can(viewer.role, build.standing, 'spec.read') ? [{ href: `${path}/spec`, label: 'Spec' }] : []),
     ...(can(viewer.role, build.standing, 'question.read') ? [{ href: `${path}/questions`, label: 'Questions' }] : []),
+    ...(can(viewer.role, build.standing, 'sign_off.read') ? [{ href: `${path}/sign-offs`, label: 'Sign-offs' }] : []),
+    ...(can(viewer.role, build.standing, 'spec.read') ? [{ href: `${path}/as-built`, label: 'As built' }] : []),
+    ...(can(viewer.role, build.standing, 'check.run') ? [{ href: `${path}/checks`, label: 'Checks' }] : []),
+    ...(can(viewer.role, build.standing, 'build.finish')
+      ? [{ href: `${path}/final-check`, label: 'Final check' }]
+      : []),
+    { href: `${path}/window`, label: 'When' },
     { href: `${path}/people`, label: 'People' },
     ...(can(viewer.role, build.standing, 'entry.post') ? [{ href: `/bench/${build.orderNumber}`, label: 'Post' }] : []),
   ] satisfies { href: string; label: ReactNode }[];

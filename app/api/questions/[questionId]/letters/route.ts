@@ -7,7 +7,7 @@ import { newLetter } from '@/lib/validation/questions';
 export const GET = readRoute(({ viewer, params }) => requireQuestionMark(viewer, params.questionId ?? ''));
 
 export const POST = writeRoute(newLetter, 'letter', async ({ viewer, input, params }) => {
-  await writeLetter(viewer, params.questionId ?? '', input, Date.now());
+  const { id } = await writeLetter(viewer, params.questionId ?? '', input, Date.now());
   wakeMail();
-  return {};
+  return { id };
 });

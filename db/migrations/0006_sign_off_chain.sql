@@ -1,0 +1,1 @@
+ALTER TABLE `sign_offs` ADD `replaces_id` text;

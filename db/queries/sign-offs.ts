@@ -1,0 +1,194 @@
+import { and, asc, count, eq, gt, inArray, or, sql } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/sqlite-core';
+import { requireCan } from './standing';
+import { db } from '../client';
+import { buildIsVisible, signOffIsVisible } from '../scope';
+import { buildPeople, builds, buildStages, shop, signOffs, users } from '../schema';
+import { isClientRole, isStaffRole } from '@/lib/access';
+import { OutOfReach } from '@/lib/errors';
+import { dayOf } from '@/lib/schedule/calendar';
+import type { Viewer } from '@/lib/viewer';
+
+const PAGE = 60;
+const MAX_OF_BUILD = 300;
+const asker = alias(users, 'asker');
+const answerer = alias(users, 'answerer');
+
+const blocks = sql<
+  string | null
+>`(select ${buildStages.name} from ${buildStages} where ${buildStages.buildId} = ${signOffs.buildId} and ${buildStages.key} = ${signOffs.blocksStageKey})`;
+const owner = sql<
+  string | null
+>`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${signOffs.buildId} and ${buildPeople.standing} = 'owner')`;
+
+/** To its owner the owner is "you": null. */
+const ownerFor = (viewer: Viewer) => (isStaffRole(viewer.role) ? owner : sql<null>`null`);
+
+const rowColumns = (viewer: Viewer) => ({
+  id: signOffs.id,
+  orderNumber: builds.orderNumber,
+  instrument: builds.instrument,
+  kind: signOffs.kind,
+  title: signOffs.title,
+  itemKey: signOffs.itemKey,
+  dueOn: signOffs.dueOn,
+  state: signOffs.state,
+  blocks,
+  askedAt: signOffs.askedAt,
+  askedBy: asker.name,
+  answeredAt: signOffs.answeredAt,
+  signedName: signOffs.signedName,
+  replacesId: signOffs.replacesId,
+  ownerName: ownerFor(viewer),
+});
+
+const rowsFor = (viewer: Viewer) =>
+  db()
+    .select(rowColumns(viewer))
+    .from(signOffs)
+    .innerJoin(builds, eq(builds.id, signOffs.buildId))
+    .innerJoin(asker, eq(asker.id, signOffs.askedById))
+    .$dynamic();
+
+/** The shop's own day, yyyy-mm-dd: what a day to sign by is compared with. */
+export async function shopDay(nowMs: number): Promise<string> {
+  const [row] = await db().select({ zone: shop.timeZone }).from(shop);
+  return dayOf(nowMs, row?.zone ?? 'UTC');
+}
+
+const openFirst = sql`case ${signOffs.state} when 'asked' then 0 when 'change_asked' then 1 else 2 end`;
+
+/** The sign-offs of one build: what waits first, by its day; then the rest. @throws OutOfReach or Denied */
+export async function listBuildSignOffs(viewer: Viewer, orderNumber: string) {
+  const build = await requireCan(viewer, 'sign_off.read', orderNumber);
+  return rowsFor(viewer)
+    .where(and(eq(signOffs.buildId, build.id), buildIsVisible(viewer), signOffIsVisible(viewer)))
+    .orderBy(openFirst, asc(signOffs.dueOn), asc(signOffs.askedAt))
+    .limit(MAX_OF_BUILD);
+}
+
+export type SignOffRow = Awaited<ReturnType<typeof listBuildSignOffs>>[number];
+
+type Place = { dueOn: string; id: string };
+
+/** @returns null for anything that is not a place this product wrote */
+export function parseSignOffPlace(text: unknown): Place | null {
+  const match = /^(\d{4}-\d{2}-\d{2})\.([\w-]{1,40})$/.exec(typeof text === 'string' ? text : '');
+  return match ? { dueOn: match[1] ?? '', id: match[2] ?? '' } : null;
+}
+
+/** What waits on any of the viewer's builds, by the day to sign by, with the place of the next page or null. */
+export async function listSignOffQueue(viewer: Viewer, place: Place | null) {
+  const later = place
+    ? or(gt(signOffs.dueOn, place.dueOn), and(eq(signOffs.dueOn, place.dueOn), gt(signOffs.id, place.id)))
+    : undefined;
+  const rows = await rowsFor(viewer)
+    .where(
+      and(inArray(signOffs.state, ['asked', 'change_asked']), buildIsVisible(viewer), signOffIsVisible(viewer), later),
+    )
+    .orderBy(asc(signOffs.dueOn), asc(signOffs.id))
+    .limit(PAGE + 1);
+  const page = rows.slice(0, PAGE);
+  const last = page.at(-1);
+  return { signOffs: page, next: rows.length > PAGE && last ? `${last.dueOn}.${last.id}` : null };
+}
+
+/** How many sign-offs wait for this viewer: an owner for their name, a rep for what a client wants changed. */
+export async function countWaitingSignOffs(viewer: Viewer): Promise<number> {
+  if (viewer.role === 'builder') return 0;
+  const [row] = await db()
+    .select({ n: count() })
+    .from(signOffs)
+    .innerJoin(builds, eq(builds.id, signOffs.buildId))
+    .where(
+      and(
+        eq(signOffs.state, isClientRole(viewer.role) ? 'asked' : 'change_asked'),
+        buildIsVisible(viewer),
+        signOffIsVisible(viewer),
+      ),
+    );
+  return row?.n ?? 0;
+}
+
+/**
+ * Who waits for whom: the open sign-offs of these builds, or of all the viewer reaches, by the day to sign by. A
+ * companion gets none.
+ */
+export function listWaitingSignOffs(viewer: Viewer, buildIds?: string[]) {
+  return db()
+    .select({
+      id: signOffs.id,
+      buildId: signOffs.buildId,
+      orderNumber: builds.orderNumber,
+      kind: signOffs.kind,
+      title: signOffs.title,
+      dueOn: signOffs.dueOn,
+      state: signOffs.state,
+      blocksStageKey: signOffs.blocksStageKey,
+      blocks,
+      ownerName: ownerFor(viewer),
+    })
+    .from(signOffs)
+    .innerJoin(builds, eq(builds.id, signOffs.buildId))
+    .where(
+      and(
+        inArray(signOffs.state, ['asked', 'change_asked']),
+        buildIds ? inArray(signOffs.buildId, buildIds) : undefined,
+        buildIsVisible(viewer),
+        signOffIsVisible(viewer),
+      ),
+    )
+    .orderBy(asc(signOffs.dueOn), asc(signOffs.id))
+    .limit(500);
+}
+
+export type WaitingSignOff = Awaited<ReturnType<typeof listWaitingSignOffs>>[number];
+
+/**
+ * From when to when a build waited for its owner's word, oldest first; `toMs` is null while it still waits. Asking for
+ * a change is an answer: from then on the shop is awaited. No viewer: what is computed from it is shown by other rules.
+ */
+export async function signOffWaits(buildId: string) {
+  const rows = await db()
+    .select({
+      fromMs: signOffs.askedAt,
+      toMs: signOffs.answeredAt,
+      blocksStageKey: signOffs.blocksStageKey,
+      state: signOffs.state,
+    })
+    .from(signOffs)
+    .where(eq(signOffs.buildId, buildId))
+    .orderBy(asc(signOffs.askedAt));
+  return rows.map(({ state, toMs, ...wait }) => ({ ...wait, toMs: state === 'asked' ? null : toMs }));
+}
+
+export type SignOffWait = Awaited<ReturnType<typeof signOffWaits>>[number];
+
+/** One sign-off as its page heads it, with all others of its build to tell which took whose place. @throws OutOfReach */
+export async function requireSignOff(viewer: Viewer, signOffId: string) {
+  const [row] = await db()
+    .select({
+      ...rowColumns(viewer),
+      buildId: signOffs.buildId,
+      finishHex: builds.finishHex,
+      message: signOffs.message,
+      contentHash: signOffs.contentHash,
+      specVersionId: signOffs.specVersionId,
+      documentId: signOffs.documentId,
+      changeRequestId: signOffs.changeRequestId,
+      concession: signOffs.concession,
+      answer: signOffs.answer,
+      answeredBy: answerer.name,
+      blocksStageKey: signOffs.blocksStageKey,
+    })
+    .from(signOffs)
+    .innerJoin(builds, eq(builds.id, signOffs.buildId))
+    .innerJoin(asker, eq(asker.id, signOffs.askedById))
+    .leftJoin(answerer, eq(answerer.id, signOffs.answeredById))
+    .where(and(eq(signOffs.id, signOffId), buildIsVisible(viewer), signOffIsVisible(viewer)));
+  if (!row) throw new OutOfReach();
+  const { standing } = await requireCan(viewer, 'sign_off.read', row.orderNumber);
+  return { ...row, standing, ofBuild: await listBuildSignOffs(viewer, row.orderNumber) };
+}
+
+export type SignOffPage = Awaited<ReturnType<typeof requireSignOff>>;
