@@ -3,6 +3,7 @@ import { recordEvent } from './audit';
 import { touchDiary } from './builds';
 import { storeReadings } from './readings';
 import { isUnbound } from './photos';
+import { askForRelease } from './release-mail';
 import { startStage } from './stages';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -48,6 +49,7 @@ export function postEntry(viewer: Viewer, entry: NewEntry, nowMs: number): Promi
     await attachPhotos(tx, viewer, build.id, posted.id, entry.photos);
     await storeReadings(tx, { viewer, buildId: build.id, entryId: posted.id }, entry, nowMs);
     if (entry.startStage) await startStage(tx, { buildId: build.id, stageId: entry.stageId, byId: viewer.id }, nowMs);
+    if (state === 'held') await askForRelease(tx, { id: posted.id, buildId: build.id, revision: 1 }, nowMs);
     if (state === 'published' && entry.audience === 'buyer') await tellReaders(tx, build.id, posted.id, nowMs);
     await touchDiary(tx, build.id);
     return { ...posted, repeated: false };
@@ -185,6 +187,7 @@ export function editEntry(
         'Somebody saved this entry while you were writing. Their words are kept, and yours are still here: copy them, reload, and put them in again.',
       );
     }
+    if (waits) await askForRelease(tx, { id: entry.id, buildId: entry.buildId, revision: saved.revision }, nowMs);
     await touchDiary(tx, entry.buildId);
     return saved;
   });

@@ -5,7 +5,7 @@ import { requireBuild } from '@/db/queries/builds';
 import { diaryPage, diaryState } from '@/db/queries/diary';
 import { countHeldEntries, editEntry, postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
 import { changePerson } from '@/db/queries/people';
-import { buildStages, diaryEvents, entries, photos } from '@/db/schema';
+import { buildStages, diaryEvents, entries, newsItems, photos } from '@/db/schema';
 import { BadInput, OutOfReach } from '@/lib/errors';
 import { openTestDatabase } from '../support/database';
 import { entryFor, makeBuild, makeEntry, makePerson, makePhoto, noteOf, NOW_MS, openShop } from '../support/world';
@@ -102,6 +102,17 @@ describe('where a rep releases', () => {
     await releaseEntry(bench.rep, id, NOW_MS + 1000);
     expect(await readBy(bench.owner, bench)).toMatchObject([{ id, datedAt: NOW_MS + 1000 }]);
     expect(await countHeldEntries(bench.rep)).toBe(0);
+  });
+
+  test('the rep hears of every version that waits for them, once, and nobody else does', async () => {
+    const bench = await openBench(true);
+    const entry = entryFor(bench.build);
+    const { id } = await postEntry(bench.builder, entry, NOW_MS);
+    await postEntry(bench.builder, entry, NOW_MS);
+    await editEntry(bench.builder, id, { revision: 1, note: noteOf('Other words.') }, NOW_MS);
+    const news = await db().select().from(newsItems).where(eq(newsItems.kind, 'held_entry'));
+    const ofThis = news.filter(({ about }) => about.entryIds?.includes(id));
+    expect(ofThis.map(({ userId }) => userId)).toEqual([bench.rep.id, bench.rep.id]);
   });
 
   test('releasing twice at once is releasing once', async () => {
