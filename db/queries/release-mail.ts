@@ -8,7 +8,7 @@ type HeldEntry = { id: string; buildId: string; revision: number };
 export async function askForRelease(tx: Tx, { id, buildId, revision }: HeldEntry, nowMs: number): Promise<void> {
   const staff = await staffOn(tx, buildId, nowMs);
   for (const { id: userId } of staff.filter(({ role }) => role === 'rep')) {
-    const mail = { kind: 'held_entry', userId, about: { entryIds: [id] } } as const;
+    const mail = { kind: 'held_entry' as const, userId, about: { entryIds: [id] } };
     await queueMail(tx, { ...mail, dedupeKey: `held_entry/${id}/${revision}/${userId}` }, nowMs);
   }
 }
