@@ -3,7 +3,6 @@ import { expect, test, type BrowserContext, type Page } from '@playwright/test';
 import { openApp, type App } from '../bench/app';
 import { staffToken } from '../bench/fill';
 import { fillFloor, ON_FLOOR } from '../bench/fill-floor';
-import { longestFrameMs } from '../bench/longest-frame';
 import { complaintsOf } from './people';
 
 /** Five hundred builds in a world of their own, behind an app of their own. */
@@ -36,7 +35,7 @@ for (const [device, viewport] of [
   ['a desk', { width: 1360, height: 900 }],
   ['a phone', { width: 390, height: 844 }],
 ] as const) {
-  test(`on ${device} all five hundred builds are there, fit the page, pass axe, and scroll without a long frame`, async ({
+  test(`on ${device} all five hundred builds are there, fit the page and pass axe in both themes`, async ({
     browser,
   }) => {
     test.setTimeout(180_000);
@@ -49,7 +48,6 @@ for (const [device, viewport] of [
       0,
     );
     expect(await graveFindings(page)).toEqual([]);
-    expect(await longestFrameMs(page)).toBeLessThan(100);
     await page.emulateMedia({ colorScheme: 'dark' });
     expect(await graveFindings(page)).toEqual([]);
     expect(complaints).toEqual([]);
