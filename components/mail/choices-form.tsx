@@ -22,7 +22,7 @@ export function ChoicesForm({ save, choices }: ChoicesFormProps) {
   const [state, send, isSending] = useActionState(save, fresh);
   const refused = refusalIn(state);
   return (
-    <form action={send} className="grid max-w-xl gap-6">
+    <form action={send} className="grid max-w-xl grid-cols-[minmax(0,1fr)] gap-6">
       <p className="text-soft">Sign-in links, invitations and what you are asked to sign always come at once.</p>
       <div className="border-t border-line">
         {choices.map(({ kind, choice }) => (
@@ -42,9 +42,9 @@ export function ChoicesForm({ save, choices }: ChoicesFormProps) {
 function ChoiceRow({ kind, chosen }: { kind: MailKind; chosen: string }) {
   const { words } = mailRules[kind];
   return (
-    <fieldset className="border-b border-line py-2.5">
+    <fieldset className="min-w-0 border-b border-line py-2.5">
       <legend className="float-left w-full font-semibold">{words.charAt(0).toUpperCase() + words.slice(1)}</legend>
-      <div className="flex flex-wrap gap-x-6">
+      <div className="clear-both flex flex-wrap gap-x-6">
         {ways.map(({ value, label }) => (
           <label key={value} className="flex min-h-11 items-center gap-2">
             <input
