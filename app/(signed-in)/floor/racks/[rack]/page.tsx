@@ -35,7 +35,7 @@ export default async function RackPage({ params }: PageProps<'/floor/racks/[rack
             {count}, {dayWords(nowMs, viewer.timeZone, nowMs)}
           </p>
         </div>
-        <div className="flex gap-3 print:hidden">
+        <div className="flex flex-wrap gap-3 print:hidden">
           <LinkButton variant="quiet" className="min-h-11" href={`/floor?rack=${encodeURIComponent(rack)}`}>
             Move them on the floor
           </LinkButton>
