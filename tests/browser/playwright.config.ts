@@ -13,6 +13,7 @@ export default defineConfig({
     baseURL: world.appUrl,
     launchOptions: { executablePath: process.env.CHROMIUM_PATH ?? '/usr/bin/chromium', args: ['--no-sandbox'] },
     viewport: { width: 1360, height: 900 },
+    actionTimeout: 30_000,
     trace: 'retain-on-failure',
   },
   webServer: {
