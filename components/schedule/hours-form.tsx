@@ -34,7 +34,7 @@ export function HoursForm({ save, hours }: { save: FormAction; hours: readonly H
         });
         return (
           <div key={name} className="grid gap-1">
-            <div className="grid max-w-md grid-cols-[6.5rem_1fr_1fr] items-center gap-3">
+            <div className="grid max-w-md grid-cols-[6.5rem_minmax(0,1fr)_minmax(0,1fr)] items-center gap-3">
               <span>{name}</span>
               <input {...field('opens', day?.opensAtMin)} />
               <input {...field('closes', day?.closesAtMin)} />
