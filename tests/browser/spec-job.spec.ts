@@ -175,7 +175,7 @@ test('a spec is written, sent back, signed, measured, conceded and handed over a
     await expect(designer.getByText('1 of 1 uploaded')).toBeVisible({ timeout: 60_000 });
     await designer.getByLabel('Photo 1: what does it show?').fill('The rule along the board');
     await designer.getByText('Readings', { exact: true }).click();
-    await designer.getByLabel('Scale length', { exact: true }).fill('25.502');
+    await designer.getByRole('textbox', { name: 'Scale length', exact: true }).fill('25.502');
     await post(designer);
     await designer.waitForURL(`**/builds/${ORDER}**`);
     await expect(designer.getByText('25.502').first()).toBeVisible();
@@ -185,7 +185,7 @@ test('a spec is written, sent back, signed, measured, conceded and handed over a
     await openBench(designer, /^Hardware/, false);
     await designer.getByText('Readings', { exact: true }).click();
     await designer
-      .getByLabel(/^Action at the 12th fret, bass side/)
+      .getByRole('textbox', { name: /^Action at the 12th fret, bass/ })
       .first()
       .fill('9');
     await expect(designer.getByText(/out of tolerance/i).first()).toBeVisible();
@@ -194,7 +194,7 @@ test('a spec is written, sent back, signed, measured, conceded and handed over a
     await openBench(designer, /^Final check/, true);
     await designer.getByRole('textbox', { name: 'Note' }).fill('In its bag.');
     await designer.getByText('Shows that', { exact: true }).click();
-    await designer.getByLabel('Case', { exact: true }).check();
+    await designer.getByRole('checkbox', { name: 'Case', exact: true }).check();
     await post(designer);
     await designer.waitForURL(`**/builds/${ORDER}**`);
   });
