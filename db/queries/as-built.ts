@@ -1,10 +1,11 @@
 import { and, asc, eq, inArray, isNotNull, sql } from 'drizzle-orm';
+import { ownerNameOf } from './owners';
 import { mailJpegKey } from './photos';
 import { readProofSheet } from './proofs';
 import { requireCan } from './standing';
 import { db } from '../client';
 import { buildIsVisible, entryIsVisible, photoIsVisible } from '../scope';
-import { buildPeople, builds, buildStages, entries, materials, photos, readings, shop, users } from '../schema';
+import { builds, buildStages, entries, materials, photos, readings, shop, users } from '../schema';
 import type { AsBuiltFacts, AsBuiltPhoto, SetUpTaken } from '@/lib/as-built/sheet';
 import type { ProofLine } from '@/lib/specs/proof';
 import type { Viewer } from '@/lib/viewer';
@@ -30,9 +31,6 @@ export async function readAsBuilt(viewer: Viewer, orderNumber: string): Promise<
 }
 
 async function readFacts(buildId: string) {
-  const owner = sql<
-    string | null
-  >`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${builds.id} and ${buildPeople.standing} = 'owner' limit 1)`;
   const [row] = await db()
     .select({
       shopName: shop.name,
@@ -40,7 +38,7 @@ async function readFacts(buildId: string) {
       instrument: builds.instrument,
       finishName: builds.finishName,
       finishHex: builds.finishHex,
-      ownerName: owner,
+      ownerName: ownerNameOf(builds.id),
       readyAt: builds.readyAt,
       shippedAt: builds.shippedAt,
       shippedBy: builds.shippedBy,

@@ -1,5 +1,6 @@
 import { and, asc, desc, eq, gt, inArray, isNotNull, isNull, lt, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
+import { ownerNameOf } from './owners';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { correlated } from '../correlated';
@@ -22,9 +23,6 @@ const stagesDone = sql<number>`(select count(*) from ${buildStages} where ${buil
  * `newCount` counts entries since the viewer's last visit. The owner's name goes to staff only.
  */
 export function listBuilds(viewer: Viewer, before?: string) {
-  const owner = sql<
-    string | null
-  >`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${builds.id} and ${buildPeople.standing} = 'owner')`;
   const newCount = sql<number>`(select count(*) from (select 1 from ${entries} where ${entries.buildId} = ${builds.id} and ${entryIsVisible(viewer)} and ${entries.authorId} <> ${viewer.id} and ${entries.datedAt} > coalesce((select ${diaryVisits.visitedAt} from ${diaryVisits} where ${diaryVisits.buildId} = ${builds.id} and ${diaryVisits.userId} = ${viewer.id}), ${ALL_OLD}) limit 100))`;
   return db()
     .select({
@@ -35,7 +33,7 @@ export function listBuilds(viewer: Viewer, before?: string) {
       rack: isStaffRole(viewer.role) ? builds.rack : sql<null>`null`,
       heldUntilAt: builds.heldUntilAt,
       deliveredAt: builds.deliveredAt,
-      ownerName: isStaffRole(viewer.role) ? owner : sql<null>`null`,
+      ownerName: isStaffRole(viewer.role) ? ownerNameOf(builds.id) : sql<null>`null`,
       stageName: stageNow.name,
       stageKey: stageNow.key,
       stageSince: stageNow.startedAt,

@@ -1,7 +1,18 @@
 import { asc } from 'drizzle-orm';
 import { db, type Db, type Tx } from '../client';
 import { closures, shop, workingHours } from '../schema';
-import type { WorkingCalendar } from '@/lib/schedule/calendar';
+import { dayOf, type WorkingCalendar } from '@/lib/schedule/calendar';
+
+/** The zone of the shop's clocks; UTC until it has said where it is. */
+export async function shopZone(reader: Db | Tx = db()): Promise<string> {
+  const [row] = await reader.select({ zone: shop.timeZone }).from(shop);
+  return row?.zone ?? 'UTC';
+}
+
+/** The shop's own day, yyyy-mm-dd: what a day to sign by is compared with. */
+export async function shopDay(nowMs: number, reader: Db | Tx = db()): Promise<string> {
+  return dayOf(nowMs, await shopZone(reader));
+}
 
 let kept: { text: string; calendar: WorkingCalendar } | null = null;
 
@@ -10,7 +21,6 @@ let kept: { text: string; calendar: WorkingCalendar } | null = null;
  * something changes, because counting in it is quick only the second time.
  */
 export async function unscopedCalendar(reader: Db | Tx = db()): Promise<WorkingCalendar> {
-  const [owner] = await reader.select({ zone: shop.timeZone }).from(shop);
   const hours = await reader
     .select({
       weekday: workingHours.weekday,
@@ -28,7 +38,7 @@ export async function unscopedCalendar(reader: Db | Tx = db()): Promise<WorkingC
     })
     .from(closures)
     .orderBy(asc(closures.startsOn), asc(closures.id));
-  const calendar = { zone: owner?.zone ?? 'UTC', hours: hours.length > 0 ? hours : officeHours, closures: closed };
+  const calendar = { zone: await shopZone(reader), hours: hours.length > 0 ? hours : officeHours, closures: closed };
   const text = JSON.stringify(calendar);
   if (kept?.text !== text) kept = { text, calendar };
   return kept.calendar;

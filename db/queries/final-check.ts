@@ -3,11 +3,12 @@ import { recordEvent } from './audit';
 import { touchDiary } from './builds';
 import { unpassedLists } from './check-gate';
 import { queueMail } from './outbox';
+import { listOwnerIds } from './owners';
 import { readProofSheet } from './proofs';
 import { askForSignOff } from './sign-off-asking';
 import { requireCan } from './standing';
 import { db, write, type Db, type Tx } from '../client';
-import { buildPeople, builds, buildStages, signOffs } from '../schema';
+import { builds, buildStages, signOffs } from '../schema';
 import { BadInput, Denied } from '@/lib/errors';
 import { concededWords, openLines } from '@/lib/specs/proof';
 import { contentHashOf } from '@/lib/specs/content-hash';
@@ -107,11 +108,7 @@ export function passFinalCheck(viewer: Viewer, orderNumber: string, nowMs: numbe
 }
 
 async function tellOwners(tx: Tx, kind: 'ready' | 'shipped', buildId: string, nowMs: number): Promise<void> {
-  const owners = await tx
-    .select({ userId: buildPeople.userId })
-    .from(buildPeople)
-    .where(and(eq(buildPeople.buildId, buildId), eq(buildPeople.standing, 'owner')));
-  for (const { userId } of owners)
+  for (const userId of await listOwnerIds(tx, buildId))
     await queueMail(
       tx,
       { kind, userId, about: { buildId }, dedupeKey: `${kind}/${buildId}/${userId}/${nowMs}` },

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm';
 import { unscopedForecastBasis, unscopedProgress, type Basis } from './forecast-basis';
+import { ownerNameOf } from './owners';
 import { listDepartments } from './people';
 import { listWaitingSignOffs } from './sign-offs';
 import { requireCan } from './standing';
@@ -8,7 +9,7 @@ import { db } from '../client';
 import { correlated } from '../correlated';
 import { prepared } from '../prepared';
 import { buildIsKnownByNumber, buildIsVisible, isOpen } from '../scope';
-import { assignments, buildPeople, builds, entries, readyWindows, shop, users } from '../schema';
+import { assignments, builds, entries, readyWindows, shop, users } from '../schema';
 import type { Role } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
 import { makeRow } from '@/lib/floor/make-row';
@@ -99,9 +100,7 @@ export async function floorScreen(viewer: Viewer, wish: FloorWish, nowMs: number
   return screen;
 }
 
-const ownerName = sql<
-  string | null
->`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${builds.id} and ${buildPeople.standing} = 'owner')`;
+const ownerName = ownerNameOf(builds.id);
 const repName = sql<
   string | null
 >`(select ${users.name} from ${assignments} join ${users} on ${users.id} = ${assignments.userId} where ${assignments.buildId} = ${builds.id} and ${assignments.endedAt} is null and ${users.role} = 'rep' order by ${assignments.startedAt} limit 1)`;

@@ -3,6 +3,7 @@ import { recordEvent } from './audit';
 import { touchDiariesOf } from './builds';
 import { lastSeq } from './mail-settings';
 import { queueMail } from './outbox';
+import { listOwnerIds } from './owners';
 import { routeAgain } from './pen';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -124,11 +125,8 @@ async function makeOwner(tx: Tx, userId: string, role: Role, orderNumber: string
     throw new BadInput({ orderNumber: 'Only a buyer or an artist can own a build. Leave the order number empty.' });
   const [build] = await tx.select({ id: builds.id }).from(builds).where(eq(builds.orderNumber, orderNumber));
   if (!build) throw new BadInput({ orderNumber: 'There is no order with this number.' });
-  const [owner] = await tx
-    .select({ id: buildPeople.userId })
-    .from(buildPeople)
-    .where(and(eq(buildPeople.buildId, build.id), eq(buildPeople.standing, 'owner')));
-  if (owner) throw new BadInput({ orderNumber: 'This order has an owner already.' });
+  if ((await listOwnerIds(tx, build.id)).length > 0)
+    throw new BadInput({ orderNumber: 'This order has an owner already.' });
   await tx.insert(buildPeople).values({ buildId: build.id, userId, standing: 'owner' });
 }
 

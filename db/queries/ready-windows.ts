@@ -2,10 +2,11 @@ import { and, asc, desc, eq, inArray, isNotNull, isNull, sql } from 'drizzle-orm
 import { touchDiary } from './builds';
 import { unscopedForecastBasis, unscopedProgress, type Basis } from './forecast-basis';
 import { queueMail } from './outbox';
+import { listOwnerIds } from './owners';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { buildIsVisible } from '../scope';
-import { buildPeople, builds, readyWindows, shop } from '../schema';
+import { builds, readyWindows, shop } from '../schema';
 import { forecast, type BuildToForecast, type GivenWindow } from '@/lib/floor/forecast';
 import { movedWhy, type KnownWindow } from '@/lib/floor/moved-window';
 import type { Viewer } from '@/lib/viewer';
@@ -141,11 +142,7 @@ async function dropOldCurves(tx: Tx, ids: string[], today: string): Promise<void
 
 async function tellOwner(tx: Tx, buildId: string, givenOn: string, nowMs: number): Promise<void> {
   await touchDiary(tx, buildId);
-  const owners = await tx
-    .select({ id: buildPeople.userId })
-    .from(buildPeople)
-    .where(and(eq(buildPeople.buildId, buildId), eq(buildPeople.standing, 'owner')));
-  for (const { id: userId } of owners) {
+  for (const userId of await listOwnerIds(tx, buildId)) {
     const mail = { kind: 'window_moved', userId, about: { buildId, givenOn } } as const;
     await queueMail(tx, { ...mail, dedupeKey: `window_moved/${buildId}/${givenOn}/${userId}` }, nowMs);
   }

@@ -1,12 +1,13 @@
 import { and, desc, eq, inArray, ne, or, sql, type SQL } from 'drizzle-orm';
 import { recordEvent } from './audit';
 import { touchDiary } from './builds';
+import { shopDay } from './calendar';
 import { queueMail } from './outbox';
+import { listOwnerIds } from './owners';
 import { requireCan } from './standing';
 import type { Tx } from '../client';
-import { buildPeople, buildStages, shop, signOffs } from '../schema';
+import { buildStages, signOffs } from '../schema';
 import { BadInput, Denied } from '@/lib/errors';
-import { dayOf } from '@/lib/schedule/calendar';
 import { dueDayProblem } from '@/lib/sign-offs/due-day';
 import { requireOneSubject, type SignOffSubject } from '@/lib/sign-offs/subject';
 import type { Viewer } from '@/lib/viewer';
@@ -71,8 +72,7 @@ export async function askForSignOff(
 }
 
 async function requireDueDay(tx: Tx, dueOn: string, nowMs: number): Promise<void> {
-  const [row] = await tx.select({ zone: shop.timeZone }).from(shop);
-  const problem = dueDayProblem(dueOn, dayOf(nowMs, row?.zone ?? 'UTC'));
+  const problem = dueDayProblem(dueOn, await shopDay(nowMs, tx));
   if (problem) throw new BadInput({ dueOn: problem });
 }
 
@@ -91,13 +91,10 @@ async function requireStageAhead(tx: Tx, buildId: string, stageKey: string | nul
 }
 
 async function requireOwners(tx: Tx, buildId: string): Promise<string[]> {
-  const owners = await tx
-    .select({ id: buildPeople.userId })
-    .from(buildPeople)
-    .where(and(eq(buildPeople.buildId, buildId), eq(buildPeople.standing, 'owner')));
+  const owners = await listOwnerIds(tx, buildId);
   if (owners.length === 0)
     throw new Denied('conflict', 'Nobody could sign this: the build has no owner yet. Put its owner on it first.');
-  return owners.map(({ id }) => id);
+  return owners;
 }
 
 const isDocument = inArray(signOffs.kind, ['drawing', 'sample']);

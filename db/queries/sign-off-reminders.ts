@@ -1,7 +1,9 @@
 import { and, asc, eq, isNull, lte } from 'drizzle-orm';
+import { shopZone } from './calendar';
 import { queueMail } from './outbox';
+import { listOwnerIds } from './owners';
 import { db, write, type Tx } from '../client';
-import { buildPeople, shop, signOffs } from '../schema';
+import { signOffs } from '../schema';
 import { dayOf } from '@/lib/schedule/calendar';
 import { addDays } from '@/lib/schedule/days';
 import { isReminderDue, REMINDER_DAYS } from '@/lib/sign-offs/reminder';
@@ -21,8 +23,7 @@ export async function queueSignOffReminders(nowMs: number): Promise<number> {
 }
 
 async function listDue(nowMs: number) {
-  const [row] = await db().select({ zone: shop.timeZone }).from(shop);
-  const zone = row?.zone ?? 'UTC';
+  const zone = await shopZone();
   const today = dayOf(nowMs - MORNING_MS, zone);
   const near = lte(signOffs.dueOn, addDays(today, REMINDER_DAYS));
   const open = await db()
@@ -37,11 +38,7 @@ async function remind(tx: Tx, signOffId: string, buildId: string, nowMs: number)
   const stillOpen = and(eq(signOffs.id, signOffId), eq(signOffs.state, 'asked'), isNull(signOffs.remindedAt));
   const [marked] = await tx.update(signOffs).set({ remindedAt: nowMs }).where(stillOpen).returning({ id: signOffs.id });
   if (!marked) return;
-  const owners = await tx
-    .select({ id: buildPeople.userId })
-    .from(buildPeople)
-    .where(and(eq(buildPeople.buildId, buildId), eq(buildPeople.standing, 'owner')));
-  for (const { id: userId } of owners) {
+  for (const userId of await listOwnerIds(tx, buildId)) {
     const mail = { kind: 'sign_off_reminder', userId, about: { signOffId } } as const;
     await queueMail(tx, { ...mail, dedupeKey: `sign_off_reminder/${signOffId}/${userId}` }, nowMs);
   }

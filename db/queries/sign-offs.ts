@@ -1,12 +1,12 @@
 import { and, asc, count, eq, gt, inArray, or, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
+import { ownerNameOf } from './owners';
 import { requireCan } from './standing';
 import { db } from '../client';
 import { buildIsVisible, signOffIsVisible } from '../scope';
-import { buildPeople, builds, buildStages, shop, signOffs, users } from '../schema';
+import { builds, buildStages, signOffs, users } from '../schema';
 import { isClientRole, isStaffRole } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
-import { dayOf } from '@/lib/schedule/calendar';
 import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 60;
@@ -17,12 +17,9 @@ const answerer = alias(users, 'answerer');
 const blocks = sql<
   string | null
 >`(select ${buildStages.name} from ${buildStages} where ${buildStages.buildId} = ${signOffs.buildId} and ${buildStages.key} = ${signOffs.blocksStageKey})`;
-const owner = sql<
-  string | null
->`(select ${users.name} from ${buildPeople} join ${users} on ${users.id} = ${buildPeople.userId} where ${buildPeople.buildId} = ${signOffs.buildId} and ${buildPeople.standing} = 'owner')`;
 
 /** To its owner the owner is "you": null. */
-const ownerFor = (viewer: Viewer) => (isStaffRole(viewer.role) ? owner : sql<null>`null`);
+const ownerFor = (viewer: Viewer) => (isStaffRole(viewer.role) ? ownerNameOf(signOffs.buildId) : sql<null>`null`);
 
 const rowColumns = (viewer: Viewer) => ({
   id: signOffs.id,
@@ -49,12 +46,6 @@ const rowsFor = (viewer: Viewer) =>
     .innerJoin(builds, eq(builds.id, signOffs.buildId))
     .innerJoin(asker, eq(asker.id, signOffs.askedById))
     .$dynamic();
-
-/** The shop's own day, yyyy-mm-dd: what a day to sign by is compared with. */
-export async function shopDay(nowMs: number): Promise<string> {
-  const [row] = await db().select({ zone: shop.timeZone }).from(shop);
-  return dayOf(nowMs, row?.zone ?? 'UTC');
-}
 
 const openFirst = sql`case ${signOffs.state} when 'asked' then 0 when 'change_asked' then 1 else 2 end`;
 

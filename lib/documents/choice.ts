@@ -2,6 +2,8 @@ import { MAX_PDF_BYTES } from './limits';
 import { PDF_REFUSALS } from './refusals';
 import { choiceRefusal } from '@/lib/photos/upload-check';
 
+const NEITHER = 'This is neither a PDF nor a photo we can show. Choose a PDF, JPEG, PNG or WebP.';
+
 /** Whether the first bytes of a file are those of a PDF; its name and the type a browser gives it are not asked. */
 export const isPdf = (head: Uint8Array) => String.fromCharCode(...head.subarray(0, 5)) === '%PDF-';
 
@@ -9,8 +11,5 @@ export const isPdf = (head: Uint8Array) => String.fromCharCode(...head.subarray(
 export function fileRefusal(head: Uint8Array, sizeBytes: number): string | null {
   if (sizeBytes === 0) return PDF_REFUSALS.empty;
   if (isPdf(head)) return sizeBytes > MAX_PDF_BYTES ? PDF_REFUSALS.too_large : null;
-  const refusal = choiceRefusal(head, sizeBytes);
-  return refusal?.startsWith('This is not a photo')
-    ? 'This is neither a PDF nor a photo we can show. Choose a PDF, JPEG, PNG or WebP.'
-    : refusal;
+  return choiceRefusal(head, sizeBytes, NEITHER);
 }

@@ -1,4 +1,4 @@
-import { isStaffRole, type Role } from '@/lib/access';
+import type { Role } from '@/lib/access';
 import type { MailKind } from '@/lib/mail/kinds';
 
 export const mailChoiceNames = ['at_once', 'digest', 'never'] as const;
@@ -52,6 +52,3 @@ export function mayChoose(role: Role, kind: MailKind): boolean {
 export function choiceFor(role: Role, kind: MailKind, chosen: MailChoice | undefined): MailChoice {
   return mayChoose(role, kind) ? (chosen ?? mailRules[kind].usual) : 'at_once';
 }
-
-/** Staff read the diary itself at the bench: their digest tells only of what waits on them. */
-export const getsDiaryDigest = (role: Role) => !isStaffRole(role);

@@ -4,6 +4,7 @@ import { MAX_PHOTO_BYTES, MAX_PHOTOS_PER_ENTRY, type PhotoType } from './limits'
 export const HEAD_BYTES = 32;
 
 const MEGABYTES = MAX_PHOTO_BYTES / 1024 / 1024;
+const NOT_A_PHOTO = 'This is not a photo we can keep. Choose a JPEG, PNG or WebP photo.';
 const heicBrands = ['heic', 'heix', 'heim', 'heis', 'hevc', 'hevx', 'mif1', 'msf1'];
 
 /** What the first bytes say a file is; its name and the type a phone gives it are not asked. */
@@ -14,11 +15,11 @@ export function photoTypeOf(head: Uint8Array): PhotoType | null {
   return null;
 }
 
-/** Why a chosen file is not even sent, as a sentence; null when it may go up. */
-export function choiceRefusal(head: Uint8Array, sizeBytes: number): string | null {
+/** Why a chosen file is not even sent, as a sentence; null when it may go up. `notAPhoto` is said of any other kind of file. */
+export function choiceRefusal(head: Uint8Array, sizeBytes: number, notAPhoto = NOT_A_PHOTO): string | null {
   if (sizeBytes === 0) return 'This file is empty. Choose the photo again.';
   if (isHeic(head)) return 'This phone saves HEIC; set the camera to Most compatible or choose a JPEG.';
-  if (!photoTypeOf(head)) return 'This is not a photo we can keep. Choose a JPEG, PNG or WebP photo.';
+  if (!photoTypeOf(head)) return notAPhoto;
   if (sizeBytes > MAX_PHOTO_BYTES) return `This photo is over ${MEGABYTES} MB. Save a smaller copy and choose that.`;
   return null;
 }

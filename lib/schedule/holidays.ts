@@ -1,5 +1,4 @@
 import { dateOfDay, dayNumber, weekdayOfDay } from './days';
-import type { Closure } from './calendar-check';
 
 export type Holiday = {
   /** YYYY-MM-DD */
@@ -77,9 +76,4 @@ export async function listHolidayRegions(country: string): Promise<{ code: strin
 function byName(names: Record<string, string>): { code: string; name: string }[] {
   const rows = Object.entries(names).map(([code, name]) => ({ code, name }));
   return rows.sort((one, other) => one.name.localeCompare(other.name, 'en'));
-}
-
-/** A holiday as a day on which the shop is closed. */
-export function closureOf({ on, name }: Holiday): Closure {
-  return { startsOn: on, endsOn: on, name, closesAtMin: null };
 }

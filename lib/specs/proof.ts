@@ -90,12 +90,6 @@ export function proofLines(document: SpecDocument, ground: ProofGround): ProofLi
 export const openLines = (lines: ProofLine[]) =>
   lines.filter(({ state }) => state === 'open' || state === 'out_of_tolerance');
 
-export function countProven(lines: ProofLine[]): Record<ProofState, number> {
-  const counts = { proven: 0, out_of_tolerance: 0, conceded: 0, open: 0 };
-  for (const { state } of lines) counts[state] += 1;
-  return counts;
-}
-
 function byItem<T extends { itemKey: string }>(rows: T[]): Map<string, T[]> {
   const found = new Map<string, T[]>();
   for (const row of rows) {

@@ -8,13 +8,12 @@ import { PassPanel } from '@/components/checks/pass-panel';
 import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { listStages } from '@/db/queries/builds';
 import { readFinalCheck } from '@/db/queries/final-check';
-import { findShop } from '@/db/queries/mail-content';
+import { shopDay } from '@/db/queries/calendar';
 import { listLinkableEntries } from '@/db/queries/proofs';
 import { can, type Action } from '@/lib/access';
 import { openBuild, orNotFound } from '@/lib/auth/page';
 import { shortDay } from '@/lib/date-words';
 import { requestMs } from '@/lib/request';
-import { dayOf } from '@/lib/schedule/calendar';
 import { dueRange } from '@/lib/sign-offs/due-day';
 import { openLines, type ProofLine } from '@/lib/specs/proof';
 
@@ -28,12 +27,12 @@ export default async function FinalCheckPage({ params }: PageProps<'/builds/[ord
   const { orderNumber } = await params;
   const { viewer, build } = await openBuild(orderNumber);
   const check = await orNotFound(readFinalCheck(viewer, orderNumber));
-  const [stages, entries, shop] = await Promise.all([
+  const nowMs = requestMs();
+  const [stages, entries, today] = await Promise.all([
     listStages(viewer, build.id),
     listLinkableEntries(viewer, orderNumber),
-    findShop(),
+    shopDay(nowMs),
   ]);
-  const nowMs = requestMs();
   const may = (action: Action) => can(viewer.role, build.standing, action);
   const { lines, version } = check.sheet;
   const open = openLines(lines);
@@ -70,12 +69,7 @@ export default async function FinalCheckPage({ params }: PageProps<'/builds/[ord
       )}
       {open.length > 0 && may('sign_off.ask') && (
         <PageSection title="Ask the owner for a concession">
-          <ConcessionForm
-            ask={concede}
-            orderNumber={orderNumber}
-            items={open.map(asOption)}
-            range={dueRange(dayOf(nowMs, shop.timeZone))}
-          />
+          <ConcessionForm ask={concede} orderNumber={orderNumber} items={open.map(asOption)} range={dueRange(today)} />
         </PageSection>
       )}
       {lines.length > 0 && (
