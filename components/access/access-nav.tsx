@@ -12,7 +12,7 @@ export function AccessNav({ label = 'Access', links }: { label?: string; links: 
   );
   return (
     <nav aria-label={label} className="border-b border-line bg-sheet print:hidden">
-      <ul role="list" className="mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
+      <ul role="list" className="mx-auto flex relative max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {links.map(({ href, label }) => (
           <li key={href} className="md:first:-ml-3">
             <Link

@@ -17,7 +17,7 @@ const words: Record<MailTab, string> = {
 export function MailTabs({ current }: { current: MailTab }) {
   return (
     <nav aria-label="Lists of mail" className="border-b border-line">
-      <ul role="list" className="flex gap-1 overflow-x-auto">
+      <ul role="list" className="relative flex gap-1 overflow-x-auto">
         {mailTabs.map((tab) => (
           <li key={tab}>
             <Link

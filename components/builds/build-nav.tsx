@@ -23,7 +23,7 @@ export function BuildNav({ links, instrument, isAlone }: BuildNavProps) {
       data-build-nav={isAlone ? 'alone' : 'below'}
       className="border-b border-line bg-sheet print:hidden"
     >
-      <ul role="list" className="mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
+      <ul role="list" className="mx-auto flex relative max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {isAlone && (
           <li className="md:hidden">
             <Link href="/builds" className="flex min-h-11 items-center px-3 whitespace-nowrap text-soft">

@@ -8,7 +8,7 @@ const cell = 'border-b border-line px-2 py-2.5 text-left align-top first:pl-0';
 export function RackList({ rows, routes, others }: RackListProps) {
   return (
     <>
-      <div role="region" aria-label="Builds on the rack" tabIndex={0} className="overflow-x-auto">
+      <div role="region" aria-label="Builds on the rack" tabIndex={0} className="relative overflow-x-auto">
         <table className="w-full border-collapse">
           <thead>
             <tr className="border-b-2 border-ink text-sm text-soft">

@@ -18,7 +18,7 @@ export function Table({
   className?: string;
 }) {
   return (
-    <div role="region" aria-label={caption} tabIndex={0} className={clsx('overflow-x-auto', className)}>
+    <div role="region" aria-label={caption} tabIndex={0} className={clsx('relative overflow-x-auto', className)}>
       <table className="w-full border-collapse text-left">
         <caption className={isCaptionHidden ? 'sr-only' : 'heading pb-3 text-left text-xl'}>{caption}</caption>
         <thead>

@@ -1,5 +1,5 @@
-import AxeBuilder from '@axe-core/playwright';
 import { expect, test, type Page } from '@playwright/test';
+import { graveFindings } from './axe';
 import { browserOf, complaintsOf, people } from './people';
 
 const ORDER = 'Q-2417';
@@ -29,15 +29,6 @@ const phone = { width: 390, height: 844 };
 const widthLeftOver = (page: Page) =>
   page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
 
-/** What axe finds serious or worse, in words; `rules` limits it to some. */
-async function graveFindings(page: Page, rules?: string[]): Promise<string[]> {
-  const axe = new AxeBuilder({ page });
-  const { violations } = await (rules ? axe.withRules(rules) : axe).analyze();
-  return violations
-    .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-    .map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`);
-}
-
 /** One visit, looked at on a desk and a phone, in light and dark. */
 async function lookAt(page: Page, path: string) {
   await page.setViewportSize(desk);
@@ -50,7 +41,7 @@ async function lookAt(page: Page, path: string) {
     expect(await graveFindings(page), `axe on ${path} at ${viewport.width} px`).toEqual([]);
   }
   await page.emulateMedia({ colorScheme: 'dark' });
-  expect(await graveFindings(page, ['color-contrast']), `contrast on ${path}, dark`).toEqual([]);
+  expect(await graveFindings(page, { rules: ['color-contrast'] }), `contrast on ${path}, dark`).toEqual([]);
 }
 
 for (const [who, paths] of pages) {

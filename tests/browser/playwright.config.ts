@@ -16,6 +16,11 @@ export default defineConfig({
     actionTimeout: 30_000,
     trace: 'retain-on-failure',
   },
+  // Knocking on every door changes the world that the others read: it comes last, and needs no pictures of its pages.
+  projects: [
+    { name: 'jobs', testIgnore: 'access.spec.ts' },
+    { name: 'doors', testMatch: 'access.spec.ts', use: { trace: 'off' } },
+  ],
   webServer: {
     command: 'node tests/browser/serve.mjs',
     cwd: '../..',

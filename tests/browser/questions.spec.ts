@@ -1,7 +1,7 @@
-import AxeBuilder from '@axe-core/playwright';
 import { createClient } from '@libsql/client';
-import { expect, test, type BrowserContext, type Page } from '@playwright/test';
+import { expect, test, type BrowserContext } from '@playwright/test';
 import { writePhoto } from '../support/photo-fixtures';
+import { graveFindings } from './axe';
 import { browserOf, complaintsOf, mailsTo, mailTo, people } from './people';
 import { world } from './world';
 
@@ -70,14 +70,6 @@ async function everythingRead(context: BrowserContext, questionId: string): Prom
     texts.push(await answer.text());
   }
   return texts.join('\n');
-}
-
-/** What axe finds serious or worse on the page as it stands. */
-async function graveFindings(page: Page): Promise<string[]> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  return violations
-    .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-    .map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`);
 }
 
 test('a question finds its answerer; the pen, the margin, the clock and the mail do their part', async ({
