@@ -1,13 +1,22 @@
 'use client';
 
-import { useEffect } from 'react';
+import { useEffect, useRef } from 'react';
 import type { DraftKeeper } from './draft-keeper';
 import type { Draft } from './draft-state';
 
-/** Writes the draft down after each change, and at once when the page is put away. */
+/**
+ * Writes the draft down after each change, and at once when the page is put away or the posting goes a step on: a refused
+ * entry must not be found as one under way.
+ */
 export function useKeepDraft(keeper: DraftKeeper, draft: Draft, opened: Draft): void {
+  const lastStep = useRef(opened.posting.step);
   useEffect(() => {
-    if (draft !== opened && draft.posting.step !== 'posted') keeper.keepSoon(draft);
+    const { step } = draft.posting;
+    const movedOn = step !== lastStep.current;
+    lastStep.current = step;
+    if (draft === opened || step === 'posted') return;
+    if (movedOn) void keeper.keepNow(draft);
+    else keeper.keepSoon(draft);
   }, [keeper, draft, opened]);
   useEffect(() => {
     const flush = () => keeper.flush();

@@ -35,7 +35,7 @@ export function AskForm(props: AskFormProps) {
 function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: AskFormProps & { isBrowser: boolean }) {
   const router = useRouter();
   const form = useDraftForm({ name: `question/${viewerId}/${orderNumber}`, orderNumber, isBrowser });
-  const { draft, change, photos, refused, isSending } = form;
+  const { draft, change, photos, refused, isSending, isLocked } = form;
   const topic = topics.find(({ id }) => id === draft.topicId);
 
   async function submit(event: FormEvent) {
@@ -57,7 +57,7 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
         options={topics.map(({ id, name }) => ({ value: id, label: name }))}
         value={topic ? topic.id : ''}
         onChange={(event) => change({ topicId: event.target.value })}
-        disabled={isSending}
+        disabled={isLocked}
         error={refused?.fields.topicId}
         hint={topic ? answererWords(topic) : 'It decides who answers you.'}
         className="max-w-md"
@@ -67,7 +67,7 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
         value={draft.subject}
         onChange={(event) => change({ subject: event.target.value })}
         maxLength={120}
-        disabled={isSending}
+        disabled={isLocked}
         error={refused?.fields.subject}
       />
       <LazyNoteEditor
@@ -75,13 +75,13 @@ function Form({ orderNumber, viewerId, topics, entryId, quoted, isBrowser }: Ask
         initial={draft.note ?? undefined}
         label="What would you like to know?"
         onChange={(note) => change({ note })}
-        disabled={isSending}
+        disabled={isLocked}
         invalid={refused?.fields.note}
       />
-      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isSending} />
+      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isLocked} />
       <RefusedNotice refused={refused} shown={shownFields} />
       <div className="flex flex-wrap items-center gap-x-5 gap-y-3">
-        <Button type="submit" disabled={isSending} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
+        <Button type="submit" disabled={isLocked} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
           {isSending ? 'Sending' : 'Send question'}
         </Button>
         <Link

@@ -20,7 +20,7 @@ function Form({ questionId, viewerId, isBrowser }: MarginFormProps & { isBrowser
   const router = useRouter();
   const id = useId();
   const form = useDraftForm({ name: `margin/${viewerId}/${questionId}`, orderNumber: '', isBrowser });
-  const { draft, change, refused, isSending } = form;
+  const { draft, change, refused, isSending, isLocked } = form;
 
   async function submit(event: FormEvent) {
     event.preventDefault();
@@ -38,11 +38,11 @@ function Form({ questionId, viewerId, isBrowser }: MarginFormProps & { isBrowser
         className="w-full [&_textarea]:italic"
         value={draft.note ? noteText(draft.note) : ''}
         onChange={(event) => change({ note: plainNote(event.target.value) })}
-        disabled={isSending}
+        disabled={isLocked}
         error={refused?.fields.note}
       />
       {!refused?.fields.note && <RefusedNotice refused={refused} shown={['note']} />}
-      <Button type="submit" variant="quiet" disabled={isSending} className="min-h-11">
+      <Button type="submit" variant="quiet" disabled={isLocked} className="min-h-11">
         {isSending ? 'Keeping' : 'Keep for the shop'}
       </Button>
     </form>

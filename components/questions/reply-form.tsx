@@ -36,7 +36,7 @@ function Form({ questionId, orderNumber, viewerId, isBrowser, label, button, mai
   const [isSent, setIsSent] = useState(false);
   const [insertions, setInsertions] = useState(0);
   const form = useDraftForm({ name: `letter/${viewerId}/${questionId}`, orderNumber, isBrowser });
-  const { draft, change, photos, refused, isSending } = form;
+  const { draft, change, photos, refused, isSending, isLocked } = form;
 
   async function submit(event: FormEvent) {
     event.preventDefault();
@@ -58,21 +58,21 @@ function Form({ questionId, orderNumber, viewerId, isBrowser, label, button, mai
 
   return (
     <form onSubmit={submit} className="grid gap-4">
-      {phrases.length > 0 && <PhraseField phrases={phrases} isLocked={isSending} onInsert={insert} />}
+      {phrases.length > 0 && <PhraseField phrases={phrases} isLocked={isLocked} onInsert={insert} />}
       <LazyNoteEditor
         key={`${draft.idempotencyKey} ${insertions}`}
         initial={draft.note ?? undefined}
         label={label}
         onChange={(note) => change({ note })}
-        disabled={isSending}
+        disabled={isLocked}
         invalid={refused?.fields.note}
       />
-      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isSending} />
+      <LetterPhotos photos={photos} error={refused?.fields.photos} isLocked={isLocked} />
       {!refused?.fields.note && !refused?.fields.photos && (
         <RefusedNotice refused={refused} shown={['note', 'photos']} />
       )}
       <div className="flex flex-wrap items-center justify-between gap-x-6 gap-y-3">
-        <Button type="submit" disabled={isSending} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
+        <Button type="submit" disabled={isLocked} className="min-h-12 w-full sm:min-h-10 sm:w-auto">
           {isSending ? 'Sending' : button}
         </Button>
         <p className="text-sm text-soft">{mailWords}</p>

@@ -66,5 +66,6 @@ export function useDraftForm({ name, orderNumber, isBrowser }: DraftOf) {
   }
 
   const change = (part: Partial<Draft>) => setDraft((current) => ({ ...current, ...part }));
-  return { draft, change, photos, photosToSend, send, refused, isSending };
+  // Until the page is alive nothing typed would be kept: the fields wait for that moment.
+  return { draft, change, photos, photosToSend, send, refused, isSending, isLocked: isSending || !isBrowser };
 }

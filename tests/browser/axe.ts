@@ -1,11 +1,10 @@
 import AxeBuilder from '@axe-core/playwright';
 import type { Page } from '@playwright/test';
 
-/** What axe finds serious or worse on the page as it stands, in words; `rules` limits it to some, `exclude` leaves a part out. */
-export async function graveFindings(page: Page, { rules, exclude }: { rules?: string[]; exclude?: string } = {}) {
+/** What axe finds serious or worse on the page as it stands, in words; `exclude` leaves a part out. */
+export async function graveFindings(page: Page, { exclude }: { exclude?: string } = {}) {
   // No page of ours holds a frame of another site; without one, axe's own mode for that opens a window a visit for nothing.
   const axe = new AxeBuilder({ page }).setLegacyMode();
-  if (rules) axe.withRules(rules);
   if (exclude) axe.exclude(exclude);
   const { violations } = await axe.analyze();
   return violations

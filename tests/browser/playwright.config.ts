@@ -1,11 +1,12 @@
 import { defineConfig } from '@playwright/test';
 import { world } from './world';
+import { WORLDS, worldOf } from './worlds.mjs';
 
-/** One real app with the demo world behind it, served by serve.mjs; the tests share it and each uses builds of its own. */
+/** The real app with demo worlds behind it, served by serve.mjs; the tests of a worker share one, each with builds of its own. */
 export default defineConfig({
   testDir: '.',
   outputDir: '../../.data/reports/browser',
-  workers: 1,
+  workers: WORLDS,
   timeout: 90_000,
   expect: { timeout: 15_000 },
   reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? [['list'], ['json']] : 'list',
@@ -16,15 +17,10 @@ export default defineConfig({
     actionTimeout: 30_000,
     trace: 'retain-on-failure',
   },
-  // Knocking on every door changes the world that the others read: it comes last, and needs no pictures of its pages.
-  projects: [
-    { name: 'jobs', testIgnore: 'access.spec.ts' },
-    { name: 'doors', testMatch: 'access.spec.ts', use: { trace: 'off' } },
-  ],
   webServer: {
     command: 'node tests/browser/serve.mjs',
     cwd: '../..',
-    url: `${world.appUrl}/api/health`,
+    url: `${worldOf(WORLDS - 1).appUrl}/api/health`,
     timeout: 240_000,
     // While writing a test: `node tests/browser/serve.mjs` in another terminal, and REUSE_WORLD=1, save the start.
     reuseExistingServer: process.env.REUSE_WORLD === '1',

@@ -1,29 +1,51 @@
-import { rmSync } from 'node:fs';
+import { cpSync, rmSync } from 'node:fs';
 import { demoEnvironment } from '../../db/demo/settings.mjs';
 import { build, finished, reachable, start, stopAll } from '../../db/demo/steps.mjs';
+import { WORLDS, worldOf } from './worlds.mjs';
 
-/** A new demo world on ports of its own, with sessions for its people, behind the built app. */
-const dataDir = '.data/browser';
+/** @typedef {import('./worlds.mjs').World} World */
 
-const env = {
+/** New demo worlds on ports of their own, with sessions for their people, each behind the built app. */
+const worlds = Array.from({ length: WORLDS }, (_, index) => worldOf(index));
+
+/** @param {World} world */
+const environmentOf = ({ appUrl, storeUrl, mailUrl, dataDir }) => ({
   ...demoEnvironment(),
-  APP_URL: 'http://127.0.0.1:3100',
+  APP_URL: appUrl,
   DATABASE_URL: `file:${dataDir}/flitchbook.db`,
-  S3_ENDPOINT: 'http://127.0.0.1:4668',
-  RESEND_BASE_URL: 'http://127.0.0.1:4669',
-  DEMO_MAIL_ROOM_URL: 'http://127.0.0.1:4669',
+  S3_ENDPOINT: storeUrl,
+  RESEND_BASE_URL: mailUrl,
+  DEMO_MAIL_ROOM_URL: mailUrl,
   FAKES_DIR: dataDir,
   DEMO_PICTURE_WIDTH_PX: '320',
   LOG_LEVEL: 'warn',
-};
+});
 
+/** @param {World} world */
+async function startFakes(world) {
+  start('npx', ['tsx', 'lib/fakes/start.ts'], environmentOf(world));
+  await reachable(`${world.mailUrl}/`, 60);
+}
+
+/** @param {World} world */
+async function startApp(world) {
+  const { port } = new URL(world.appUrl);
+  start('npx', ['next', 'start', '-H', '127.0.0.1', '-p', port], { ...environmentOf(world), NODE_ENV: 'production' });
+  await reachable(`${world.appUrl}/api/health`, 60);
+}
+
+/** Seeded once; the others are its copies. */
 async function main() {
-  rmSync(dataDir, { recursive: true, force: true });
-  start('npx', ['tsx', 'lib/fakes/start.ts'], env);
-  await reachable(`${env.RESEND_BASE_URL}/`, 60);
-  const seed = finished(start('npx', ['tsx', 'tests/browser/seed.ts'], env), 'Seeding');
+  const [first, ...others] = worlds;
+  if (!first) return;
+  for (const { dataDir } of worlds) rmSync(dataDir, { recursive: true, force: true });
+  await startFakes(first);
+  const seed = finished(start('npx', ['tsx', 'tests/browser/seed.ts'], environmentOf(first)), 'Seeding');
   await Promise.all([build(demoEnvironment()), seed]);
-  start('npx', ['next', 'start', '-H', '127.0.0.1', '-p', '3100'], { ...env, NODE_ENV: 'production' });
+  for (const { dataDir } of others) cpSync(first.dataDir, dataDir, { recursive: true });
+  await Promise.all(others.map(startFakes));
+  // The last one to answer is the one that the tests wait for.
+  for (const world of worlds) await startApp(world);
 }
 
 process.once('SIGINT', stopAll);

@@ -166,7 +166,8 @@ test('a spec is written, sent back, signed, measured, conceded and handed over a
 
   await test.step('the scale is measured at machining; the kept draft starts the stage that was blocked', async () => {
     await designer.goto(`/bench/${ORDER}`);
-    // What was refused is still in the phone, and goes by itself now that nothing stands in its way.
+    await expect(designer.getByRole('textbox', { name: 'Note' })).toContainText('On to the set-up.');
+    await post(designer);
     await designer.waitForURL(`**/builds/${ORDER}**`);
     await openBench(designer, /^Machining/, false);
     const photo = info.outputPath('scale.jpg');
