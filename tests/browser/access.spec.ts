@@ -224,7 +224,14 @@ function bodyOf(door: string): Record<string, unknown> {
     // A stage it is in already: the door opens and nothing moves.
     'POST /api/floor/moves': { moves: [{ orderNumber: ORDER, toStageKey: ids.nowKey }] },
     'POST /api/floor/moves/undo': { moves: [{ orderNumber: ORDER, moveId: 'no-move-of-ours' }] },
-    'action /access/calendar#saveWeek': { opens1: '07:30', closes1: '12:00', reopens1: '12:45', ends1: '16:30', opens5: '07:30', closes5: '14:00' },
+    'action /access/calendar#saveWeek': {
+      opens1: '07:30',
+      closes1: '12:00',
+      reopens1: '12:45',
+      ends1: '16:30',
+      opens5: '07:30',
+      closes5: '14:00',
+    },
     'action /access/calendar#saveZone': { zone: 'America/New_York' },
     'action /access/calendar#saveCountry': { country: 'US', region: '' },
     'action /access/calendar#close': { name: 'Stocktaking', startsOn: nextYear, endsOn: '', closesAt: '' },
