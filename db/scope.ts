@@ -125,7 +125,7 @@ function ofReadableLetter(viewer: Viewer): SQL {
   return exists(readable.where(ofLetter));
 }
 
-function ownsTheBuild(viewer: Viewer): SQL {
+function ownsTheBuild(viewer: Reader): SQL {
   const row = all(
     eq(buildPeople.buildId, builds.id),
     eq(buildPeople.userId, viewer.id),
@@ -135,7 +135,7 @@ function ownsTheBuild(viewer: Viewer): SQL {
 }
 
 /** The sign-offs of a visible build that this viewer reads: staff all, its owner all that the shop did not take back. */
-export function signOffIsVisible(viewer: Viewer): SQL {
+export function signOffIsVisible(viewer: Reader): SQL {
   if (isStaffRole(viewer.role)) return sql`1`;
   return all(sql`${signOffs.state} <> 'withdrawn'`, ownsTheBuild(viewer));
 }

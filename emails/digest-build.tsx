@@ -1,3 +1,4 @@
+import { Fragment } from 'react';
 import { Column, Heading, Img, Row, Section } from 'react-email';
 import { asSentence, counted } from './count-words';
 import { Action, TextLink } from './links';
@@ -9,6 +10,8 @@ export interface DigestEntry {
   dateWords: string;
   authorWords: string;
   textExcerpt: string;
+  /** What was measured, a line each. */
+  readings: string[];
   /** Content id of an attached picture; mail never points at one on a server. */
   photoCid?: string;
   photoAlt?: string;
@@ -46,8 +49,21 @@ function Photo({ cid, alt }: { cid: string; alt: string }) {
   return <Img src={`cid:${cid}`} alt={alt} width="392" loading="lazy" className="ink" style={style} />;
 }
 
+function Readings({ lines }: { lines: string[] }) {
+  return (
+    <SoftLine>
+      {lines.map((line, i) => (
+        <Fragment key={i}>
+          {i > 0 && <br />}
+          <Name>{line}</Name>
+        </Fragment>
+      ))}
+    </SoftLine>
+  );
+}
+
 function Entry({ entry }: { entry: DigestEntry }) {
-  const { dateWords, authorWords, textExcerpt, photoCid, photoAlt, url } = entry;
+  const { dateWords, authorWords, textExcerpt, readings, photoCid, photoAlt, url } = entry;
   const side = { font: `600 15px/22px ${sans}`, color: light.ink };
   return (
     <Row style={{ marginTop: '20px' }}>
@@ -61,7 +77,8 @@ function Entry({ entry }: { entry: DigestEntry }) {
         <SoftLine>
           <Name>{authorWords}</Name>
         </SoftLine>
-        <Written>{textExcerpt}</Written>
+        {textExcerpt !== '' && <Written>{textExcerpt}</Written>}
+        {readings.length > 0 && <Readings lines={readings} />}
         {photoCid !== undefined && <Photo cid={photoCid} alt={photoAlt ?? 'Photo from the bench'} />}
         <SoftLine>
           <TextLink href={url}>{`Open the page of ${dateWords}`}</TextLink>

@@ -7,10 +7,10 @@ const bench = { href: '/bench', label: 'Bench' };
 const floor = { href: '/floor', label: 'Floor' };
 const access = { href: '/access', label: 'Access' };
 
-/** The pages that a role comes here for, most used first. `toSign`: sign-offs that wait for this person. */
-export function navigationFor(role: Role, waiting: number, toSign = 0): Link[] {
-  const signOffs = { href: '/sign-offs', label: 'Sign-offs', count: toSign > 0 ? toSign : undefined };
-  const questions = { href: '/questions', label: 'Questions', count: waiting > 0 ? waiting : undefined };
+/** The pages that a role comes here for, most used first, with how much waits there for this person. */
+export function navigationFor(role: Role, waiting: { questions: number; signOffs: number }): Link[] {
+  const signOffs = { href: '/sign-offs', label: 'Sign-offs', count: waiting.signOffs || undefined };
+  const questions = { href: '/questions', label: 'Questions', count: waiting.questions || undefined };
   if (role === 'builder') return [bench, floor, builds, questions];
   if (role === 'rep') return [builds, floor, questions, signOffs, bench];
   if (role === 'admin') return [access, floor, builds];

@@ -1,5 +1,6 @@
 import { clsx } from 'clsx';
 import { photoHref } from '@/components/photos/photo-image';
+import { DrawingLink } from '@/components/specs/drawing-link';
 import { Cell, Row, RowHead, Table } from '@/components/ui/table';
 import type { AsBuiltRow, AsBuiltSheet } from '@/lib/as-built/sheet';
 
@@ -23,6 +24,11 @@ export function ProofTable({ group, orderNumber }: ProofTableProps) {
           </RowHead>
           <Cell note={row.allowed} className="min-w-28 font-semibold">
             <bdi>{row.signed}</bdi>
+            {row.drawing && (
+              <span className="block">
+                <DrawingLink drawing={row.drawing} />
+              </span>
+            )}
           </Cell>
           <Built row={row} />
           <Cell className="min-w-44">

@@ -6,7 +6,7 @@ type BenchHeaderProps = { orderNumber: string; rack?: string | null; instrument:
 /** Which instrument is on the bench, and the way back to its diary. A draft stays kept. */
 export function BenchHeader({ orderNumber, rack, instrument, children }: BenchHeaderProps) {
   return (
-    <header data-build-nav="alone" className="border-t border-night-line bg-night text-on-night">
+    <header data-sub-nav="alone" className="border-t border-night-line bg-night text-on-night">
       <div className="mx-auto max-w-2xl px-4.5 pt-1.5 pb-5">
         <div className="flex items-center justify-between gap-4">
           <p className="narrow font-semibold text-on-night-soft">

@@ -4,14 +4,6 @@ import { memo } from 'react';
 import { FloorNeck } from './floor-neck';
 import { placeWords, type FloorRoute, type FloorRow } from '@/lib/floor/row';
 
-/** The columns of the wide table; below that a row is a card of two columns. */
-export const columnsClass = 'xl:grid-cols-[9.5rem_9.5rem_minmax(12rem,1fr)_6.5rem_7rem_9rem_4.5rem] xl:gap-x-4 xl:px-3';
-
-/** Rows out of sight are there, and cost no layout. */
-const rowClass =
-  'grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-1.5 border-b border-line px-4 py-3 ' +
-  'xl:min-h-16 xl:py-2 [content-visibility:auto] [contain-intrinsic-size:auto_10.5rem] xl:[contain-intrinsic-size:auto_4rem]';
-
 const daysWords = (days: number) => (days === 1 ? '1 day' : `${days} days`);
 
 type FloorRowProps = {
@@ -24,7 +16,7 @@ type FloorRowProps = {
 
 export const FloorTableRow = memo(function FloorTableRow({ row, routes, index, onMove }: FloorRowProps) {
   return (
-    <div role="row" aria-rowindex={index} className={clsx(rowClass, columnsClass)}>
+    <div role="row" aria-rowindex={index}>
       <div role="rowheader" className="min-w-0">
         <Link href={`/builds/${row.orderNumber}`} prefetch={false} className="narrow font-semibold hover:underline">
           {row.orderNumber}
@@ -36,7 +28,7 @@ export const FloorTableRow = memo(function FloorTableRow({ row, routes, index, o
       </div>
       <div role="cell" className="min-w-0 max-xl:text-right">
         <bdi className="block truncate">{row.ownerName ?? 'no owner yet'}</bdi>
-        <span className="block truncate text-sm text-soft">{underName(row)}</span>
+        <bdi className="block truncate text-sm text-soft">{underName(row)}</bdi>
       </div>
       <div role="cell" className="max-xl:col-span-2">
         <FloorNeck row={row} routes={routes} />
@@ -64,9 +56,9 @@ export const FloorTableRow = memo(function FloorTableRow({ row, routes, index, o
   );
 });
 
-function underName({ isHeld, waitsOn, rack }: FloorRow): string {
-  const waits = waitsOn === 'buyer' ? 'waits on the buyer' : waitsOn === 'us' && 'waits on us';
-  return [isHeld && 'held', waits || rack].filter(Boolean).join(' · ');
+function underName({ isHeld, waits, rack }: FloorRow): string {
+  const on = [...new Set(waits.map((wait) => wait.on))].join(', ');
+  return [isHeld && 'held', on ? `waits on ${on}` : rack].filter(Boolean).join(' · ');
 }
 
 function StageCell({ row: { days, usual, isLate }, place }: { row: FloorRow; place: string }) {

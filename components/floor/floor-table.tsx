@@ -1,5 +1,5 @@
 import { clsx } from 'clsx';
-import { columnsClass, FloorTableRow } from './floor-row';
+import { FloorTableRow } from './floor-row';
 import { NeckNames } from '@/components/builds/neck-track-strip';
 import { EmptyState } from '@/components/ui/empty-state';
 import { commonRoute, type FloorRoute, type FloorRow } from '@/lib/floor/row';
@@ -11,6 +11,15 @@ type FloorTableProps = {
   total: number;
   onMove?: (row: FloorRow) => void;
 };
+
+/** The columns of the wide table; below that a row is a card of two columns. */
+const headClass = 'xl:grid-cols-[9.5rem_9.5rem_minmax(12rem,1fr)_6.5rem_7rem_9rem_4.5rem] xl:gap-x-4 xl:px-3';
+
+/** Said once for five hundred rows. Those out of sight are there, and cost no layout. */
+const rowsClass =
+  '*:grid *:grid-cols-[minmax(0,1fr)_auto] *:items-center *:gap-x-4 *:gap-y-1.5 *:border-b *:border-line *:px-4 *:py-3 ' +
+  '*:[content-visibility:auto] *:[contain-intrinsic-size:auto_10.5rem] xl:*:[contain-intrinsic-size:auto_4rem] ' +
+  'xl:*:min-h-16 xl:*:grid-cols-[9.5rem_9.5rem_minmax(12rem,1fr)_6.5rem_7rem_9rem_4.5rem] xl:*:px-3 xl:*:py-2';
 
 /** All builds with their necks under one set of stage names; on a narrow page each is a card. */
 export function FloorTable({ rows, routes, total, onMove }: FloorTableProps) {
@@ -25,7 +34,7 @@ export function FloorTable({ rows, routes, total, onMove }: FloorTableProps) {
       <div role="rowgroup">
         <TableHead names={commonRoute(rows, routes)?.stages.map(({ name }) => name) ?? []} />
       </div>
-      <div role="rowgroup">
+      <div role="rowgroup" className={rowsClass}>
         {rows.map((row, index) => (
           <FloorTableRow key={row.orderNumber} row={row} routes={routes} index={index + 2} onMove={onMove} />
         ))}
@@ -41,7 +50,7 @@ function TableHead({ names }: { names: string[] }) {
     <div
       role="row"
       aria-rowindex={1}
-      className={clsx('items-end border-b-2 border-ink pb-2 max-xl:sr-only xl:grid', columnsClass)}
+      className={clsx('items-end border-b-2 border-ink pb-2 max-xl:sr-only xl:grid', headClass)}
     >
       <span role="columnheader" className={heads}>
         Order

@@ -48,7 +48,11 @@ export function MoveDialog({ row, onRack, routes, onClose, onMoved }: MoveDialog
       description={[`Now: ${place}`, row.rack && `on ${row.rack}`].filter(Boolean).join(', ')}
     >
       <div className="grid gap-3">
-        {row.waits && <p className="border-l-4 border-brass pl-3">{row.waits}</p>}
+        {row.waits.map(({ words }, index) => (
+          <p key={index} className="border-l-4 border-brass pl-3">
+            {words}
+          </p>
+        ))}
         {next ? (
           <Button disabled={isSending} onClick={() => send({ moves: movesOf([row]) })}>
             Start {next.name}

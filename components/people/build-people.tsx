@@ -1,6 +1,7 @@
 import { PageSection } from './page-frame';
 import { PersonLine } from './person-line';
 import { workWords } from './person-words';
+import { unreachableWords } from './unreachable-words';
 import type { Role } from '@/lib/access';
 
 type Staff = { id: string; name: string; role: Role; department: string | null };
@@ -14,11 +15,6 @@ type Client = {
 };
 
 type BuildPeopleProps = { staff: Staff[]; clients: Client[]; viewerId: string };
-
-const unreachableWords = {
-  bounced: 'Mail comes back from this address, so none goes out. Ask for another one.',
-  complained: 'Our mail was called unwanted there, so none goes out. Ask how to reach them.',
-};
 
 /** The two sides of a build. Addresses stand only where the query gave them. */
 export function BuildPeople({ staff, clients, viewerId }: BuildPeopleProps) {

@@ -1,10 +1,14 @@
 import { saidAt, shownOf, type FieldsProps } from './fields';
 import { LiveReading } from './live-reading';
+import { FinishWindows } from './finish-windows';
 import { ReadingInput } from './reading-input';
+import { coverageWords } from '@/lib/readings/coat';
 
 /** One coat: what was put on, and how thick it lies. */
 export function CoatFields(props: FieldsProps) {
   const { typed, plan, read, onType } = props;
+  const coat = read.readings.find(({ value }) => value.kind === 'coat')?.value;
+  const coverage = coat?.kind === 'coat' ? coverageWords(coat) : null;
   const next = Math.max(0, ...plan.coatsBefore.map(({ coatNumber }) => coatNumber)) + 1;
   return (
     <div className="grid gap-4">
@@ -52,6 +56,10 @@ export function CoatFields(props: FieldsProps) {
         {...saidAt('dryFilm', props)}
       />
       <LiveReading reading={shownOf(read, 'coat')} />
+      <p aria-live="polite" className="text-sm text-soft empty:hidden">
+        {coverage}
+      </p>
+      <FinishWindows product={typed.product} lastCoatAtMs={plan.lastCoatAtMs} />
     </div>
   );
 }

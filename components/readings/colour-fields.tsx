@@ -4,6 +4,7 @@ import { ReadingInput } from './reading-input';
 import { Notice } from '@/components/ui/notice';
 import { Segmented } from '@/components/ui/segmented';
 import { Select } from '@/components/ui/select';
+import { PHOTO_COLOUR_SENTENCE } from '@/lib/craft/colour-difference';
 import type { ColourLine } from '@/lib/readings/colour';
 import { colourChosen } from '@/lib/readings/read-typed';
 
@@ -55,6 +56,7 @@ export function ColourFields({ colours, ...props }: FieldsProps & { colours: Col
           {doubt.sentence}
         </Notice>
       )}
+      <p className="text-sm text-soft">{PHOTO_COLOUR_SENTENCE}</p>
       <LiveReading reading={shownOf(read, 'colour')} />
     </div>
   );

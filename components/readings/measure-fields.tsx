@@ -1,8 +1,9 @@
 import { saidAt, type FieldsProps } from './fields';
 import { LiveReading } from './live-reading';
 import { ReadingInput } from './reading-input';
+import { figuresOf } from '@/lib/craft/typed-form';
 import { unitWord } from '@/lib/craft/units';
-import { figuresOf, type MeasureLine } from '@/lib/readings/measure-line';
+import type { MeasureLine } from '@/lib/readings/measure-line';
 
 /** The measures of the stage, one field each, beside their aim. */
 export function MeasureFields(props: FieldsProps) {

@@ -1,14 +1,15 @@
 'use client';
 
 import { useEffect, useEffectEvent, useId, type ReactNode } from 'react';
+import { BoothFields } from './booth-fields';
 import { CoatFields } from './coat-fields';
 import { ColourFields } from './colour-fields';
 import type { FieldsProps } from './fields';
 import { MeasureFields } from './measure-fields';
 import { PapersField } from './papers-field';
+import { SetUpAids } from './set-up-aids';
 import { WoodRoomFields } from './wood-room-fields';
 import type { KeptReadings } from '@/lib/drafts';
-import { TRUSS_ROD_SENTENCE } from '@/lib/craft/set-up';
 import { hasReadings, planReadings, type BenchBuild, type BenchStage } from '@/lib/readings/plan';
 import { readTyped, standOf, type ReadingStand } from '@/lib/readings/read-typed';
 import { isBlankTyped, type TypedReadings } from '@/lib/readings/typed';
@@ -44,6 +45,11 @@ export function ReadingsPanel({ stage, bench, readings, isMissingSaid, isLocked,
           <WoodRoomFields {...props} />
         </Part>
       )}
+      {plan.hasBooth && (
+        <Part title="Air of the booth">
+          <BoothFields {...props} />
+        </Part>
+      )}
       {plan.hasCoat && (
         <Part title="Coat">
           <CoatFields {...props} />
@@ -61,7 +67,7 @@ export function ReadingsPanel({ stage, bench, readings, isMissingSaid, isLocked,
       )}
       {plan.lines.length > 0 && (
         <Part title={plan.work === 'setup' ? 'Set-up sheet' : 'Measures of the spec'}>
-          {plan.work === 'setup' && <p className="text-sm text-soft">{TRUSS_ROD_SENTENCE}</p>}
+          {plan.work === 'setup' && <SetUpAids {...props} />}
           <MeasureFields {...props} />
         </Part>
       )}

@@ -1,42 +1,19 @@
+import { HumidityField, TemperatureField } from './air-fields';
 import { saidAt, shownOf, type FieldsProps } from './fields';
 import { LiveReading } from './live-reading';
 import { ReadingInput } from './reading-input';
-import { Segmented } from '@/components/ui/segmented';
-
-const units = [
-  { value: 'C', label: '°C' },
-  { value: 'F', label: '°F' },
-];
+import { aimedMoisture, holdingWords } from '@/lib/readings/wood-room';
 
 /** The air of the wood room and, where it was taken, the moisture of the wood. */
 export function WoodRoomFields(props: FieldsProps) {
-  const { typed, read, onType } = props;
+  const { typed, plan, read, onType } = props;
+  const air = read.readings.find(({ value }) => value.kind === 'wood_room')?.value;
+  const holding = air?.kind === 'wood_room' ? holdingWords(air, aimedMoisture(plan.lines)) : null;
   return (
     <div className="grid gap-4">
-      <div className="grid grid-cols-[minmax(0,1fr)_9rem] items-start gap-3">
-        <ReadingInput
-          label="Temperature"
-          value={typed.temperature}
-          onType={(temperature) => onType({ temperature })}
-          {...saidAt('temperature', props)}
-        />
-        <Segmented
-          legend="Unit"
-          name="temperature-unit"
-          size="bench"
-          options={units}
-          value={typed.temperatureUnit}
-          onChange={({ target }) => onType({ temperatureUnit: target.value === 'F' ? 'F' : 'C' })}
-        />
-      </div>
+      <TemperatureField {...props} />
       <div className="grid grid-cols-2 items-start gap-3">
-        <ReadingInput
-          label="Humidity"
-          unit="%"
-          value={typed.humidity}
-          onType={(humidity) => onType({ humidity })}
-          {...saidAt('humidity', props)}
-        />
+        <HumidityField {...props} />
         <ReadingInput
           label="Moisture of the wood"
           unit="%"
@@ -46,6 +23,9 @@ export function WoodRoomFields(props: FieldsProps) {
         />
       </div>
       <LiveReading reading={shownOf(read, 'wood_room')} />
+      <p aria-live="polite" className="text-sm text-soft empty:hidden">
+        {holding}
+      </p>
     </div>
   );
 }

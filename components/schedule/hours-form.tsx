@@ -7,48 +7,73 @@ import { FieldError, fieldAria, controlClass, controlSizes } from '@/components/
 import type { FormAction } from '@/lib/action';
 import { fresh } from '@/lib/form-state';
 import { weekdays } from '@/lib/mail/plan-words';
-
-type Hours = { weekday: number; opensAtMin: number; closesAtMin: number };
+import { stretches, type Hours } from '@/lib/schedule/week-form';
 
 const two = (value: number) => String(value).padStart(2, '0');
 const clock = (minutes: number | undefined) =>
   minutes === undefined ? '' : `${two(Math.floor(minutes / 60))}:${two(minutes % 60)}`;
 
-/** When work begins and ends on each day of the week; a day without times is a day off. */
+const spoken = [
+  { opens: 'work begins', closes: 'work ends, or the break begins' },
+  { opens: 'the break ends', closes: 'work ends after the break' },
+];
+
+const rowClass =
+  'grid max-w-3xl grid-cols-[minmax(0,1fr)_minmax(0,1fr)] items-center gap-x-3 gap-y-1.5 lg:grid-cols-[6.5rem_repeat(4,minmax(0,1fr))]';
+
+/** When work begins and ends on each day of the week, twice where there is a break; a day without times is a day off. */
 export function HoursForm({ save, hours }: { save: FormAction; hours: readonly Hours[] }) {
   const [state, send, isSending] = useActionState(save, fresh);
   const refused = refusalIn(state);
+  const days = weekdays.map((name, index) => ({ name, day: index + 1 }));
   return (
-    <form action={send} className="grid gap-3">
-      {weekdays.map((name, index) => {
-        const day = hours.find(({ weekday }) => weekday === index + 1);
-        const field = (part: 'opens' | 'closes', minutes: number | undefined) => ({
-          ...fieldAria(`${part}${index + 1}`, {
-            error: part === 'opens' ? refused?.fields[`opens${index + 1}`] : undefined,
-          }),
-          name: `${part}${index + 1}`,
-          type: 'time',
-          defaultValue: refused?.values[`${part}${index + 1}`] ?? clock(minutes),
-          'aria-label': `${name}, work ${part === 'opens' ? 'begins' : 'ends'}`,
-          className: `${controlClass} ${controlSizes.normal}`,
-        });
-        return (
-          <div key={name} className="grid gap-1">
-            <div className="grid max-w-md grid-cols-[6.5rem_minmax(0,1fr)_minmax(0,1fr)] items-center gap-3">
-              <span>{name}</span>
-              <input {...field('opens', day?.opensAtMin)} />
-              <input {...field('closes', day?.closesAtMin)} />
-            </div>
-            <FieldError id={`opens${index + 1}`} error={refused?.fields[`opens${index + 1}`]} />
-          </div>
-        );
-      })}
-      <FormOutcome state={state} shown={weekdays.map((_, index) => `opens${index + 1}`)} />
+    <form action={send} className="grid gap-4 lg:gap-3">
+      <p className="text-soft">Fill in the second pair of times where there is a break, such as at noon.</p>
+      {days.map(({ name, day }) => (
+        <Day
+          key={name}
+          name={name}
+          day={day}
+          hours={hours.filter(({ weekday }) => weekday === day)}
+          refused={refused}
+        />
+      ))}
+      <FormOutcome state={state} shown={days.flatMap(({ day }) => stretches.map(({ opens }) => `${opens}${day}`))} />
       <div>
         <Button type="submit" disabled={isSending}>
           Save the week
         </Button>
       </div>
     </form>
+  );
+}
+
+type DayProps = { name: string; day: number; hours: readonly Hours[]; refused: ReturnType<typeof refusalIn> };
+
+function Day({ name, day, hours, refused }: DayProps) {
+  const input = (field: string, minutes: number | undefined, label: string) => ({
+    ...fieldAria(`${field}${day}`, { error: refused?.fields[`${field}${day}`] }),
+    name: `${field}${day}`,
+    type: 'time',
+    defaultValue: refused?.values[`${field}${day}`] ?? clock(minutes),
+    'aria-label': `${name}, ${label}`,
+    className: `${controlClass} ${controlSizes.normal}`,
+  });
+  return (
+    <fieldset className="grid gap-1">
+      <legend className="sr-only">{name}</legend>
+      <div className={rowClass}>
+        <span aria-hidden="true" className="max-lg:col-span-2">
+          {name}
+        </span>
+        {stretches.flatMap(({ opens, closes }, index) => [
+          <input key={opens} {...input(opens, hours[index]?.opensAtMin, spoken[index]?.opens ?? '')} />,
+          <input key={closes} {...input(closes, hours[index]?.closesAtMin, spoken[index]?.closes ?? '')} />,
+        ])}
+      </div>
+      {stretches.map(({ opens }) => (
+        <FieldError key={opens} id={`${opens}${day}`} error={refused?.fields[`${opens}${day}`]} />
+      ))}
+    </fieldset>
   );
 }

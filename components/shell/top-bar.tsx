@@ -40,7 +40,7 @@ export function TopBar({ shopName, links, personName, homeHref = '/' }: TopBarPr
         </Link>
         <nav
           aria-label="Main"
-          className="max-md:[body:has([data-build-nav=alone])_&]:hidden -mx-4.5 w-[calc(100%+2.25rem)] overflow-x-auto border-t border-night-line px-2 md:mx-0 md:ml-auto md:w-auto md:border-t-0 md:px-0"
+          className="max-md:[body:has([data-sub-nav=alone])_&]:hidden -mx-4.5 w-[calc(100%+2.25rem)] overflow-x-auto border-t border-night-line px-2 md:mx-0 md:ml-auto md:w-auto md:border-t-0 md:px-0"
         >
           <NavLinks links={links} />
         </nav>

@@ -1,13 +1,20 @@
 import { Cell, Row, RowHead, Table } from '@/components/ui/table';
-import type { SpecDocument } from '@/lib/specs/document';
+import { DrawingLink } from '@/components/specs/drawing-link';
+import type { SpecDocument, SpecItem } from '@/lib/specs/document';
+import { drawingOf, drawingWords, type Drawing } from '@/lib/specs/drawings';
 import { byGroup, groupName } from '@/lib/specs/groups';
 import { allowedWords, type MaterialNames } from '@/lib/specs/item-words';
-import { signedWords } from '@/lib/specs/signed-words';
+import { signedFigures } from '@/lib/specs/signed-words';
 
-type SpecSubjectProps = { document: SpecDocument; number: number; materials: MaterialNames };
+type SpecSubjectProps = {
+  document: SpecDocument;
+  number: number;
+  materials: MaterialNames;
+  drawings: readonly Drawing[];
+};
 
 /** Every item of a spec version, as it was written when the version was sent. */
-export function SpecSubject({ document, number, materials }: SpecSubjectProps) {
+export function SpecSubject({ document, number, materials, drawings }: SpecSubjectProps) {
   return (
     <div className="grid gap-8">
       <p className="text-soft">
@@ -28,7 +35,8 @@ export function SpecSubject({ document, number, materials }: SpecSubjectProps) {
             <Row key={item.key}>
               <RowHead className="font-normal">{item.label}</RowHead>
               <Cell className="break-words" note={allowedWords(item)}>
-                <span className="font-semibold">{signedWords(item, materials)}</span>
+                <span className="font-semibold">{signedFigures(item, materials)}</span>
+                <DrawingOf item={item} drawings={drawings} />
               </Cell>
             </Row>
           ))}
@@ -36,4 +44,11 @@ export function SpecSubject({ document, number, materials }: SpecSubjectProps) {
       ))}
     </div>
   );
+}
+
+function DrawingOf({ item, drawings }: { item: SpecItem; drawings: readonly Drawing[] }) {
+  const drawing = drawingOf(item, drawings);
+  const words = drawingWords(item, drawings);
+  if (words === null) return null;
+  return <span className="block text-soft">{drawing ? <DrawingLink drawing={drawing} /> : words}</span>;
 }

@@ -2,18 +2,29 @@ import type { ReactNode } from 'react';
 import { DocumentSubject } from './document-subject';
 import { SpecSubject } from './spec-subject';
 import type { SubjectOfSignOff } from '@/db/queries/sign-off-subjects';
+import type { Drawing } from '@/lib/specs/drawings';
 import type { MaterialNames } from '@/lib/specs/item-words';
 
-type SubjectProps = { subject: SubjectOfSignOff; title: string; materials: MaterialNames; itemLabel: string | null };
+type SubjectProps = {
+  subject: SubjectOfSignOff;
+  title: string;
+  materials: MaterialNames;
+  drawings: readonly Drawing[];
+  itemLabel: string | null;
+};
 
 /** Exactly what is signed, whatever it is. */
 export function Subject({
   subject: { version, document, change, concession },
   title,
   materials,
+  drawings,
   itemLabel,
 }: SubjectProps) {
-  if (version) return <SpecSubject document={version.document} number={version.number} materials={materials} />;
+  if (version)
+    return (
+      <SpecSubject document={version.document} number={version.number} materials={materials} drawings={drawings} />
+    );
   if (document) return <DocumentSubject document={document} title={title} />;
   if (change)
     return (

@@ -45,9 +45,9 @@ export function SpecChanges({ changes, from, to }: { changes: SpecChange[]; from
   );
 }
 
-/** Of what is new or gone, its value says enough; its name stands beside it. */
+/** Of what is new or gone, what it is says enough; its name stands beside it. */
 function fieldsShown({ kind, fields }: SpecChange): FieldChange[] {
-  return kind === 'changed' ? fields : fields.filter(({ name }) => name === 'value' || name === 'tolerance');
+  return kind === 'changed' ? fields : fields.filter(({ name }) => ['value', 'tolerance', 'drawing'].includes(name));
 }
 
 function Field({ field: { name, before, after } }: { field: FieldChange }) {

@@ -1,7 +1,9 @@
+import { drawingOf, type Drawing } from '@/lib/specs/drawings';
 import type { ProofLine } from '@/lib/specs/proof';
 import { itemWords, allowedWords, measureIn, type MaterialNames } from '@/lib/specs/item-words';
 import { canChange, type CanChange } from '@/lib/specs/can-change';
 import { inEachUnit, type InEachUnit } from '@/lib/specs/shown-unit';
+import type { ShownUnit } from '@/lib/craft/measure';
 import { shortDay } from '@/lib/date-words';
 import type { SpecGroup, SpecItem } from '@/lib/specs/document';
 
@@ -12,6 +14,8 @@ export type SpecLine = {
   label: string;
   signed: InEachUnit;
   allowed: string | null;
+  /** The drawing or sample it is to look like; null where there is none, or none this reader may open. */
+  drawing: Drawing | null;
   state: ProofLine['state'];
   measured: InEachUnit | null;
   within: string | null;
@@ -27,9 +31,14 @@ export type SpecLine = {
 type Around = Parameters<typeof canChange>[1] & {
   orderNumber: string;
   materials: MaterialNames;
+  drawings: readonly Drawing[];
   papersKeys: ReadonlySet<string>;
   isDelivered: boolean;
 };
+
+/** What was measured carries its unit, so that it can be said in another; a count has none. */
+const measuredIn = (measured: string, item: SpecItem, show: ShownUnit) =>
+  item.kind === 'measure' ? measureIn({ text: measured, unit: item.aim.unit }, show) : measured;
 
 /** An item that nobody has to prove yet: its version is not signed. */
 export const unproven = (item: SpecItem) => ({
@@ -54,9 +63,9 @@ export function specLine(line: Judged, around: Around): SpecLine {
     label: item.label,
     signed: inEachUnit((show) => itemWords(item, show, materials)),
     allowed: allowedWords(item),
+    drawing: drawingOf(item, around.drawings),
     state: line.state,
-    // What was measured carries its unit, so that it can be said in another.
-    measured: measured === null ? null : inEachUnit((show) => measureIn({ text: measured, unit: 'in' }, show)),
+    measured: measured === null ? null : inEachUnit((show) => measuredIn(measured, item, show)),
     within: line.withinWords,
     proofs: line.proofs.map(({ entryId, datedAt, stageName }) => ({
       href: `/builds/${around.orderNumber}#entry-${entryId}`,

@@ -1,6 +1,7 @@
 import { clsx } from 'clsx';
 import Link from 'next/link';
 import type { ReactNode } from 'react';
+import { DrawingLink } from './drawing-link';
 import type { SpecLine } from './spec-line';
 import { UnitWords } from './unit-words';
 
@@ -22,6 +23,11 @@ export function SpecRow({ line, signedTitle, orderNumber, askHref }: SpecRowProp
         <span className="font-semibold">
           <UnitWords words={line.signed} />
         </span>
+        {line.drawing && (
+          <span className="block">
+            <DrawingLink drawing={line.drawing} />
+          </span>
+        )}
       </Cell>
       <Cell title="As built" note={line.within} isLate={line.state === 'out_of_tolerance'}>
         <Built line={line} />

@@ -1,12 +1,19 @@
 import { StringBalance } from './string-balance';
+import { StringTrial } from './string-trial';
 import { stringBalance } from '@/lib/craft/string-balance';
 import { stringPlanOf, tensionBandOf } from '@/lib/specs/board';
 import type { SpecDocument } from '@/lib/specs/document';
 
-/** How the set of a spec pulls, or what is missing to tell. */
+/** How the set of a spec pulls, and how it would with another gauge on one string; or what is missing to tell. */
 export function SpecStrings({ document }: { document: SpecDocument }) {
   const plan = stringPlanOf(document);
-  const balance = plan.ok ? stringBalance(plan.value, tensionBandOf(document)) : plan;
+  if (!plan.ok) return <p className="text-soft">{plan.message}</p>;
+  const balance = stringBalance(plan.value, tensionBandOf(document));
   if (!balance.ok) return <p className="text-soft">{balance.message}</p>;
-  return <StringBalance balance={balance.balance} />;
+  return (
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
+      <StringBalance balance={balance.balance} />
+      <StringTrial plan={plan.value} strings={balance.balance.strings} />
+    </div>
+  );
 }

@@ -32,7 +32,7 @@ export async function planEntries(
     for (let index = 0; index < count; index++) {
       const text = notes[(index + (build.isFeatured ? 0 : orderIndex)) % notes.length] ?? '';
       const photos = await library.ofStage(stage.key, lookOf(build), index, photoCount(build, index));
-      const datedAt = dateOf(stage, index, count, nowMs);
+      const datedAt = Math.min(dateOf(stage, index, count, nowMs), build.silentSinceAt ?? nowMs);
       entries.push({
         stagePosition,
         author: authorOf(stage, cast, orderIndex),

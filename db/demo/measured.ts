@@ -43,7 +43,7 @@ function workReadings({ stageKey, note, orderIndex }: DemoPage, here: BenchItem[
   if (stageKey === 'body-joint' && note === 1) return [papers('P120', 'P150', 'P180', 'P220', 'P320')];
   if (stageKey === 'sand-buff' && note === 0) return [papers('P800', 'P1000', 'P1200', 'P1500')];
   if (stageKey !== 'colour-clear') return [];
-  if (note === 0) return [coat(1, 'Tinted lacquer', 62, 18), ...here.flatMap(colourOf)];
+  if (note === 0) return [booth(orderIndex), coat(1, 'Tinted lacquer', 62, 18), ...here.flatMap(colourOf)];
   if (note === 1) return [coat(2, 'Clear lacquer', 118, 24), coat(3, 'Clear lacquer', 125, 24)];
   return [coat(4, 'Clear lacquer', 127, 24), coat(5, 'Clear lacquer', 130, 24)];
 }
@@ -54,6 +54,11 @@ function airOf(found: [number, number, number] | undefined, orderIndex: number):
   const relativeHumidityPercent = humidity + (orderIndex % 3) - 1;
   return [{ itemKey: null, value: { kind: 'wood_room', temperatureC, relativeHumidityPercent, moisturePercent } }];
 }
+
+const booth = (orderIndex: number): NewReading => ({
+  itemKey: null,
+  value: { kind: 'booth_air', temperatureC: 22, relativeHumidityPercent: 47 + (orderIndex % 4) },
+});
 
 const papers = (...grades: string[]): NewReading => ({ itemKey: null, value: { kind: 'abrasives', grades } });
 

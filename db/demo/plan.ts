@@ -1,6 +1,6 @@
 import { artists } from './cast';
 import { mulberry32 } from './pictures/random';
-import { demoRoutes, finishes, instruments } from './shop-floor';
+import { demoRoutes, finishes, instruments, outlookOf, type DemoStage } from './shop-floor';
 import { DAY_MS, travelWith, walkDelivered, walkStages, type Random, type TimedStage } from './timeline';
 
 export type PlannedBuild = {
@@ -14,6 +14,8 @@ export type PlannedBuild = {
   stages: TimedStage[];
   deliveredAt: number | null;
   heldUntilAt: number | null;
+  /** Since when its owner has seen nothing; null where pages go on as usual. */
+  silentSinceAt: number | null;
   /** Told at length, with pictures on every page. */
   isFeatured: boolean;
 };
@@ -27,6 +29,16 @@ export const WHOLE_DELIVERED = 3;
 const GLUED = 7;
 /** Builds on the floor that have been in their stage for far too long. */
 const STUCK = [12, 16, 35];
+/**
+ * Builds that have gone quiet, with their silence as a multiple of the longest that their stage allows: of the first the
+ * holder of the stage was told, of the second the rep as well.
+ */
+const QUIET = new Map([
+  [24, 1.4],
+  [29, 2.4],
+]);
+/** Work went on in a quiet build's stage for so long before its last page. */
+const BEFORE_SILENCE_DAYS = 3;
 
 function pick<T>(list: readonly T[], index: number): T {
   const found = list[index % list.length];
@@ -53,6 +65,12 @@ function onOneRack(build: PlannedBuild, other: PlannedBuild | undefined, index: 
   return deliveredAt === null || deliveredAt > nowMs - DAY_MS ? build : { ...build, rack, stages, deliveredAt };
 }
 
+/** For how many days the owner of the build at this place has seen nothing new; null where that is no matter. */
+function silenceOf(index: number, stage: DemoStage | undefined): number | null {
+  const periods = QUIET.get(index);
+  return periods === undefined || !stage ? null : Math.ceil(periods * outlookOf(stage).silenceDays);
+}
+
 function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBuild {
   const isArtist = index === 1 || index === 9;
   const instrument = pick(instruments, index);
@@ -61,7 +79,9 @@ function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBu
   const position = index === 0 ? 8 : index === 1 ? 10 : Math.floor(random() * stages.length);
   const usually = stages[position]?.usualDays ?? 4;
   const share = random();
-  const daysIn = STUCK.includes(index) ? Math.round(usually * 1.9) + 5 : Math.floor(share * usually);
+  const silentDays = silenceOf(index, stages[position]);
+  const usualDaysIn = STUCK.includes(index) ? Math.round(usually * 1.9) + 5 : Math.floor(share * usually);
+  const daysIn = silentDays === null ? usualDaysIn : silentDays + BEFORE_SILENCE_DAYS;
   return {
     orderNumber: `Q-${2417 + index}`,
     instrument,
@@ -72,6 +92,7 @@ function planFloorBuild(index: number, nowMs: number, random: Random): PlannedBu
     stages: walkStages(stages, position, daysIn, nowMs, random),
     deliveredAt: null,
     heldUntilAt: index === 1 ? nowMs + 45 * DAY_MS : null,
+    silentSinceAt: silentDays === null ? null : nowMs - silentDays * DAY_MS,
     isFeatured: index < 6 || index === 9 || position === stages.length - 1,
   };
 }
@@ -98,6 +119,7 @@ function planDelivered(index: number, nowMs: number, random: Random): PlannedBui
     stages: walkDelivered(stages, deliveredAt, random),
     deliveredAt,
     heldUntilAt: null,
+    silentSinceAt: null,
     isFeatured: index < WHOLE_DELIVERED,
   };
 }

@@ -14,8 +14,12 @@ import { demoRoutes, demoTopics, departmentNames, outlookOf } from './shop-floor
 import { enterWindows } from './windows';
 import { database, db, write, type Tx } from '../client';
 import { migrateDatabase } from '../migrate';
+import { queueQuietReminders } from '../queries/quiet';
 import { departments, diaryEvents, mailSettings, routes, routeStages, shop, topics } from '../schema';
 import { newId } from '../schema/columns';
+import { dayOf } from '@/lib/schedule/calendar';
+import { addDays } from '@/lib/schedule/days';
+import { wallTimeToMs } from '@/lib/schedule/digest-times';
 import { stopDecoders } from '@/lib/photos/process-photo';
 
 /** The latest delivered builds have their specs in the book; the older ones were built from paper. */
@@ -58,8 +62,14 @@ export async function seedDemoWorld(nowMs: number, tell: (line: string) => void)
     // Last: a seed that was cut off leaves no shop, so the next start begins again.
     await tx.insert(shop).values({ id: 1, name: 'Quillhaven Guitar Works', timeZone: ZONE, holidayCountry: 'US' });
   });
+  await queueQuietReminders(lastMorning(nowMs));
   await stopDecoders();
   tell(`${library.count} pictures drawn, ${onFloor.length} builds on the floor.`);
+}
+
+/** Nine o'clock of the shop's day before, when its reminders had gone out. */
+function lastMorning(nowMs: number): number {
+  return wallTimeToMs(`${addDays(dayOf(nowMs, ZONE), -1)}T09:00`, ZONE);
 }
 
 async function enterShop(tx: Tx): Promise<string[]> {

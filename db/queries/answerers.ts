@@ -95,3 +95,12 @@ export async function openRouter(reader: Db | Tx, buildId: string, nowMs: number
   const lead = ({ department }: RoutingTopic) => (department === null ? null : (leadOf.get(department) ?? null));
   return { onBuild, route: (topic) => routeQuestion({ topic, onBuild, lead: lead(topic), fallback }) };
 }
+
+/** The reps of a build who are at work; whoever is named for the rest where it has none. */
+export async function listReps(reader: Db | Tx, buildId: string, nowMs: number): Promise<string[]> {
+  const router = await openRouter(reader, buildId, nowMs);
+  const reps = router.onBuild.filter(({ role, isAway }) => role === 'rep' && !isAway);
+  if (reps.length > 0) return reps.map(({ id }) => id);
+  const { holder } = router.route({ answeredBy: 'rep', department: null, repsOnly: true });
+  return holder ? [holder.id] : [];
+}

@@ -1,4 +1,5 @@
 import { and, asc, eq, inArray, isNotNull, sql } from 'drizzle-orm';
+import { listDrawings } from './documents';
 import { ownerNameOf } from './owners';
 import { mailJpegKey } from './photos';
 import { readProofSheet } from './proofs';
@@ -21,13 +22,14 @@ export async function readAsBuilt(viewer: Viewer, orderNumber: string): Promise<
   const build = await requireCan(viewer, 'spec.read', orderNumber);
   const { version, lines } = await readProofSheet(db(), viewer, build.id);
   if (!version) return null;
-  const [facts, setUp, papers, shown] = await Promise.all([
+  const [facts, drawings, setUp, papers, shown] = await Promise.all([
     readFacts(build.id),
+    listDrawings(viewer, orderNumber),
     listSetUp(viewer, build.id),
     listPapers(lines),
     listPhotos(viewer, build.id),
   ]);
-  return { ...facts, version, lines, setUp, papers, photos: shown };
+  return { ...facts, version, lines, drawings, setUp, papers, photos: shown };
 }
 
 async function readFacts(buildId: string) {

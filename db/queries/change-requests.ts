@@ -1,5 +1,7 @@
 import { and, desc, eq, inArray, sql } from 'drizzle-orm';
+import { listReps } from './answerers';
 import { touchDiary } from './builds';
+import { queueMail } from './outbox';
 import { askForSignOff } from './sign-off-asking';
 import { freezeGround } from './spec-freeze';
 import { requireCan } from './standing';
@@ -38,6 +40,10 @@ export function requestChange(
       .values({ buildId: build.id, itemKey, wish, state: 'asked', askedById: viewer.id, createdAt: nowMs })
       .returning({ id: changeRequests.id });
     if (!asked) throw new Error('an insert without a row');
+    for (const userId of await listReps(tx, build.id, nowMs)) {
+      const mail = { kind: 'change_asked', userId, about: { changeId: asked.id } } as const;
+      await queueMail(tx, { ...mail, dedupeKey: `change_asked/${asked.id}/${userId}` }, nowMs);
+    }
     await touchDiary(tx, build.id);
     return asked.id;
   });
@@ -63,6 +69,7 @@ async function requireRequest(tx: Tx, viewer: Viewer, requestId: string) {
       itemKey: changeRequests.itemKey,
       wish: changeRequests.wish,
       state: changeRequests.state,
+      askedById: changeRequests.askedById,
     })
     .from(changeRequests)
     .innerJoin(builds, eq(builds.id, changeRequests.buildId))
@@ -116,6 +123,8 @@ export function declineChange(viewer: Viewer, { requestId, answer }: ChangeDecli
       .update(signOffs)
       .set({ state: 'withdrawn' })
       .where(and(eq(signOffs.changeRequestId, request.id), inArray(signOffs.state, ['asked', 'change_asked'])));
+    const mail = { kind: 'change_declined', userId: request.askedById, about: { changeId: request.id } } as const;
+    await queueMail(tx, { ...mail, dedupeKey: `change_declined/${request.id}` }, nowMs);
     await touchDiary(tx, request.buildId);
     return request.orderNumber;
   });

@@ -1,6 +1,6 @@
 import { and, eq, gt, inArray, isNotNull, isNull, lt, lte, max, or, sql } from 'drizzle-orm';
 import type { MailWish } from './mail-settings';
-import { markTold } from './news';
+import { markTold, nextNewsAt } from './news';
 import { insertMail } from './outbox';
 import { write, type Tx } from '../client';
 import { prepared } from '../prepared';
@@ -132,7 +132,7 @@ async function writeDigest(tx: Tx, owner: string, digest: WrittenDigest, nowMs: 
 
 function nextOf({ viewer, wish, dueAt }: DueReader, nowMs: number) {
   if (wish.cadence === 'at_once')
-    return sql`case when ${mailSettings.nextDigestAt} = ${dueAt} then null else ${mailSettings.nextDigestAt} end`;
+    return sql`case when ${mailSettings.nextDigestAt} = ${dueAt} then ${nextNewsAt(viewer.id, nowMs)} else ${mailSettings.nextDigestAt} end`;
   const regular = nextDigestAt({ ...wish, zone: soundZone(viewer.timeZone) }, nowMs);
   return sql`case when ${mailSettings.cadence} = 'none' then null else ${regular} end`;
 }

@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import { and, count, eq, isNull, lt, sql } from 'drizzle-orm';
+import { and, asc, count, eq, isNull, lt, sql } from 'drizzle-orm';
 import { GRANT_MS } from './photos';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
@@ -7,6 +7,7 @@ import { buildIsVisible, documentIsVisible } from '../scope';
 import { builds, documents, doomedObjects, photos, signOffs, specDrafts, specVersions } from '../schema';
 import { BadInput, Denied, OutOfReach } from '@/lib/errors';
 import { MAX_UNASKED_DOCUMENTS } from '@/lib/documents/limits';
+import type { SentUp } from '@/lib/specs/drawings';
 import type { NewDocument } from '@/lib/validation/sign-offs';
 import type { Viewer } from '@/lib/viewer';
 
@@ -149,6 +150,17 @@ export function sweepUnusedDocuments(nowMs: number): Promise<number> {
     await remove(tx, old, nowMs);
     return old.length;
   });
+}
+
+/** The checked drawings and samples of a build that this viewer may open, oldest first. @throws OutOfReach, Denied */
+export async function listDrawings(viewer: Viewer, orderNumber: string): Promise<SentUp[]> {
+  const build = await requireCan(viewer, 'spec.read', orderNumber);
+  return db()
+    .select({ id: documents.id, title: documents.title, photoId: documents.photoId, createdAt: documents.createdAt })
+    .from(documents)
+    .innerJoin(builds, eq(builds.id, documents.buildId))
+    .where(and(eq(documents.buildId, build.id), buildIsVisible(viewer), documentIsVisible(viewer)))
+    .orderBy(asc(documents.createdAt), asc(documents.id));
 }
 
 /** Where a checked PDF lies, if the viewer may see it now. @throws OutOfReach */

@@ -1,15 +1,15 @@
 import { createHash } from 'node:crypto';
 import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm';
+import { waitsByBuild } from './floor-waits';
 import { unscopedForecastBasis, unscopedProgress, type Basis } from './forecast-basis';
 import { ownerNameOf } from './owners';
-import { listDepartments } from './people';
-import { listWaitingSignOffs } from './sign-offs';
+import { listDepartments } from './departments';
 import { requireCan } from './standing';
 import { db } from '../client';
 import { correlated } from '../correlated';
 import { prepared } from '../prepared';
 import { buildIsKnownByNumber, buildIsVisible, isOpen } from '../scope';
-import { assignments, builds, entries, readyWindows, shop, users } from '../schema';
+import { assignments, builds, entries, questions, readyWindows, shop, users } from '../schema';
 import type { Role } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
 import { makeRow } from '@/lib/floor/make-row';
@@ -20,7 +20,6 @@ import { RecentTexts } from '@/lib/recent-texts';
 import { dayOf } from '@/lib/schedule/calendar';
 import { judge } from '@/lib/schedule/calibration';
 import { coverageOf } from '@/lib/schedule/scores';
-import { waitWords } from '@/lib/sign-offs/wait-words';
 import type { Viewer } from '@/lib/viewer';
 
 const readerOf = (role: Role) => ({ id: sql.placeholder('viewerId'), role });
@@ -42,6 +41,10 @@ function prepareState(role: Role) {
         own: correlated(
           sql<string>`(select count(*) || ' ' || coalesce(sum(${assignments}.rowid), 0) from ${assignments} where ${assignments.userId} = ${reader.id} and ${assignments.endedAt} is null)`,
         ),
+        // Not of the reader's builds only: more of them would make the mark dearer, and nothing can be read out of it.
+        asked: correlated(
+          sql<string>`(select group_concat(${questions.id} || ' ' || coalesce(${questions.penHolderId}, '') || ' ' || coalesce(${questions.dueAt} < ${sql.placeholder('nowMs')}, '')) from ${questions} where ${questions.state} = 'waiting')`,
+        ),
       })
       .from(shop)
       .prepare(),
@@ -57,9 +60,9 @@ const stateQueries = { builder: prepareState('builder'), rep: prepareState('rep'
 async function floorState(viewer: Viewer, nowMs: number): Promise<string> {
   const { role } = viewer;
   if (role !== 'builder' && role !== 'rep' && role !== 'admin') throw new Error('the floor is for staff');
-  const state = await stateQueries[role]().get({ viewerId: viewer.id });
+  const state = await stateQueries[role]().get({ viewerId: viewer.id, nowMs });
   const today = dayOf(nowMs, state?.zone ?? 'UTC');
-  const whole = JSON.stringify([viewer.id, role, viewer.department, today, state]);
+  const whole = JSON.stringify([viewer.id, role, viewer.department, viewer.timeZone, today, state]);
   return `"${createHash('sha1').update(whole).digest('base64url')}"`;
 }
 
@@ -151,18 +154,6 @@ async function latestWindows(ids: string[]) {
   return new Map(rows.map((row) => [row.buildId, row]));
 }
 
-type Waits = Pick<FloorRow, 'waits' | 'waitsOn'>;
-
-async function waitsByBuild(viewer: Viewer, today: string, nowMs: number): Promise<Map<string, Waits>> {
-  const waits = new Map<string, Waits>();
-  for (const waiting of await listWaitingSignOffs(viewer)) {
-    if (waits.has(waiting.buildId)) continue;
-    const waitsOn = waiting.state === 'asked' ? 'buyer' : 'us';
-    waits.set(waiting.buildId, { waits: waitWords(waiting, today, nowMs), waitsOn });
-  }
-  return waits;
-}
-
 function routesOf({ routes }: Basis): FloorRoute[] {
   const ids = [...new Set(routes.map(({ routeId }) => routeId))];
   return ids.map((id) => {
@@ -216,7 +207,7 @@ async function makeFloor(viewer: Viewer, nowMs: number): Promise<Floor> {
       isHeld: Boolean(isHeld),
       isOwn: Boolean(own),
       window: windows.get(id) ?? null,
-      ...(waits.get(id) ?? { waits: null, waitsOn: null }),
+      waits: waits.get(id) ?? [],
     };
     return [makeRow(source, { id, routeId, ...stages }, basis, routes, viewer)];
   });

@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, inArray, isNull } from 'drizzle-orm';
+import { and, desc, eq, gt, inArray, isNull, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { db } from '../client';
 import { buildIsVisible, entryIsVisible, isOpen, photoIsVisible, questionIsVisible } from '../scope';
@@ -10,12 +10,11 @@ import {
   mailSettings,
   photos,
   questions,
-  shop,
+  readings,
   signInLinks,
   topics,
   users,
 } from '../schema';
-import { sql } from 'drizzle-orm';
 import { MAX_ENTRIES_TOLD } from './digests';
 import type { Viewer } from '@/lib/viewer';
 
@@ -44,10 +43,8 @@ export async function findMailReader(userId: string) {
 
 export type MailReader = NonNullable<Awaited<ReturnType<typeof findMailReader>>>;
 
-export async function findShop() {
-  const [row] = await db().select({ name: shop.name, timeZone: shop.timeZone }).from(shop);
-  return row ?? { name: 'The shop', timeZone: 'UTC' };
-}
+/** The readings of an entry of the outer query, as JSON; in the one statement, because a digest run asks for thousands. */
+const readingsOfEntry = sql<string>`(select json_group_array(json_object('value', json(r.value), 'shown', json(r.shown))) filter (where json_valid(r.value) and json_valid(r.shown)) from (select ${readings.value}, ${readings.shown} from ${readings} where ${readings.entryId} = ${entries.id} order by ${readings.position}) r)`;
 
 /** Those of these entries that the reader may still read, newest first; of a held build nothing but its number. */
 export function listDigestEntries(reader: Viewer, entryIds: string[]) {
@@ -62,6 +59,7 @@ export function listDigestEntries(reader: Viewer, entryIds: string[]) {
       author: users.name,
       text: entries.bodyText,
       datedAt: entries.datedAt,
+      readings: readingsOfEntry,
     })
     .from(entries)
     .innerJoin(builds, eq(builds.id, entries.buildId))

@@ -2,7 +2,19 @@ import { and, eq, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { db } from '../client';
 import { buildIsVisible, entryIsVisible, isOpen, questionIsVisible, signOffIsVisible } from '../scope';
-import { builds, buildStages, entries, questions, readyWindows, signOffs, topics, users } from '../schema';
+import {
+  builds,
+  buildStages,
+  changeRequests,
+  entries,
+  questions,
+  readyWindows,
+  signOffs,
+  specVersions,
+  topics,
+  users,
+} from '../schema';
+import { isStaffRole } from '@/lib/access';
 import type { Viewer } from '@/lib/viewer';
 
 /** What a mail about one thing tells, as far as its reader may still read it; null when they no longer may. */
@@ -80,6 +92,35 @@ export async function findMailedSignOff(reader: Viewer, signOffId: string) {
     .leftJoin(answerer, eq(answerer.id, signOffs.answeredById))
     .where(and(eq(signOffs.id, signOffId), buildIsVisible(reader), signOffIsVisible(reader)));
   return signOff ?? null;
+}
+
+/** What the last version that knows the item of a change request calls it. */
+const changedItem = sql<
+  string | null
+>`(select json_extract(item.value, '$.label') from ${specVersions}, json_each(${specVersions.document}, '$.items') item where ${specVersions.buildId} = ${changeRequests.buildId} and json_extract(item.value, '$.key') = ${changeRequests.itemKey} order by ${specVersions.number} desc limit 1)`;
+
+/** A change request, to the staff on its build and to the owner who asked. */
+export async function findMailedChange(reader: Viewer, changeId: string) {
+  const [change] = await db()
+    .select({
+      ...ofBuild,
+      label: sql<string>`coalesce(${changedItem}, ${changeRequests.itemKey})`,
+      wish: changeRequests.wish,
+      state: changeRequests.state,
+      answer: changeRequests.answer,
+      askerName: users.name,
+    })
+    .from(changeRequests)
+    .innerJoin(builds, eq(builds.id, changeRequests.buildId))
+    .innerJoin(users, eq(users.id, changeRequests.askedById))
+    .where(
+      and(
+        eq(changeRequests.id, changeId),
+        buildIsVisible(reader),
+        isStaffRole(reader.role) ? undefined : eq(changeRequests.askedById, reader.id),
+      ),
+    );
+  return change ?? null;
 }
 
 /** The ready window as it was given on that day of the shop. */

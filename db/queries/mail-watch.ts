@@ -60,11 +60,6 @@ export async function listMails(viewer: Viewer, view: MailView, beforeId?: strin
 
 export type WatchedMail = Awaited<ReturnType<typeof listMails>>[number];
 
-/** Mail that waits for another try, failed or was parked, with why, and how much is in which state. */
-export async function listMailProblems(viewer: Viewer) {
-  return { counts: await countMails(viewer), troubled: await listMails(viewer, 'trouble') };
-}
-
 /** Replies that were not kept as letters, and why, newest first, 50 a page. */
 export async function listRefusedReplies(viewer: Viewer, beforeMs?: number) {
   await requireCan(viewer, 'mail.watch');

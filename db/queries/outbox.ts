@@ -1,6 +1,6 @@
 import { and, eq, gt, gte, inArray, lt, lte, ne, or, sql } from 'drizzle-orm';
 import { findChoice } from './mail-choices';
-import { addNews } from './news';
+import { addNews, hastenNews } from './news';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { outbox } from '../schema';
@@ -22,10 +22,10 @@ type NewMail = {
  * all; written in the transaction of what it tells of. The same dedupe key tells nothing twice.
  */
 export async function queueMail(tx: Tx, mail: NewMail, nowMs: number): Promise<void> {
-  const { kind, userId, about, dedupeKey } = mail;
+  const { kind, userId } = mail;
   const choice = await findChoice(tx, userId, kind);
   if (choice === 'at_once') await insertMail(tx, mail, nowMs);
-  if (choice === 'digest') await addNews(tx, { kind, userId, about, dedupeKey }, nowMs);
+  if (choice === 'digest') await addNews(tx, mail, nowMs);
 }
 
 /** Writes a mail whatever its reader chose: the digest itself, and what an admin sends again. */
@@ -36,10 +36,11 @@ export async function insertMail(tx: Tx, { notBeforeAt = 0, ...mail }: NewMail, 
     .onConflictDoNothing({ target: outbox.dedupeKey });
 }
 
-/** Lets a mail that waits for its time go now. */
+/** Lets a mail, or a piece of a digest's news, that waits for its time go now. */
 export async function hastenMail(tx: Tx, dedupeKey: string, nowMs: number): Promise<void> {
   const waiting = and(eq(outbox.dedupeKey, dedupeKey), eq(outbox.state, 'waiting'), gt(outbox.nextAttemptAt, nowMs));
   await tx.update(outbox).set({ nextAttemptAt: nowMs }).where(waiting);
+  await hastenNews(tx, dedupeKey, nowMs);
 }
 
 export type ClaimedMail = {

@@ -1,4 +1,5 @@
-import { and, asc, eq, isNull, sql } from 'drizzle-orm';
+import { and, asc, eq, sql } from 'drizzle-orm';
+import { endWork } from './assignments';
 import { recordEvent } from './audit';
 import { touchDiariesOf } from './builds';
 import { lastSeq } from './mail-settings';
@@ -8,20 +9,11 @@ import { routeAgain } from './pen';
 import { requireCan } from './standing';
 import { db, write, type Tx } from '../client';
 import { correlated } from '../correlated';
-import {
-  assignments,
-  buildPeople,
-  builds,
-  departments,
-  mailSettings,
-  sessions,
-  standingAssignments,
-  users,
-} from '../schema';
+import { assignments, buildPeople, builds, departments, mailSettings, sessions, users } from '../schema';
 import { newId } from '../schema/columns';
 import { isClientRole, isStaffRole, type Role } from '@/lib/access';
 import { BadInput, OutOfReach } from '@/lib/errors';
-import type { Assignment, ChangedPerson, Invitation, StepIn } from '@/lib/validation/people';
+import type { ChangedPerson, Invitation } from '@/lib/validation/people';
 import type { Viewer } from '@/lib/viewer';
 
 const PAGE = 50;
@@ -56,24 +48,6 @@ export async function listPeople(viewer: Viewer, search: string, afterId?: strin
 
 export type PersonRow = Awaited<ReturnType<typeof listPeople>>[number];
 
-export function listDepartments() {
-  return db()
-    .select({ key: departments.key, name: departments.name })
-    .from(departments)
-    .orderBy(asc(departments.position));
-}
-
-/** Who can be put on builds. */
-export async function listStaffPeople(viewer: Viewer) {
-  await requireCan(viewer, 'assignment.manage');
-  return db()
-    .select({ id: users.id, name: users.name, role: users.role, department: users.department })
-    .from(users)
-    .where(and(isNull(users.disabledAt), sql`${users.role} in ('builder', 'rep')`))
-    .orderBy(asc(users.role), asc(users.name))
-    .limit(200);
-}
-
 /** Invites one person, and mails them. With an order number a buyer or artist becomes the owner of that build. */
 export function invitePerson(viewer: Viewer, invitation: Invitation, nowMs: number): Promise<void> {
   return write(async (tx) => {
@@ -102,7 +76,8 @@ async function requireDepartment(tx: Tx, person: { role: Role; department: strin
 
 type NewPerson = { name: string; email: string; role: Role; department: string | null };
 
-async function addPerson(
+/** Writes a person down who was not known, and invites them by mail. @returns their id */
+export async function addPerson(
   tx: Tx,
   viewer: Viewer,
   { name, email, role, department }: NewPerson,
@@ -176,22 +151,6 @@ export function closePerson(viewer: Viewer, userId: string, nowMs: number): Prom
   });
 }
 
-/** Takes somebody off every build they were put on, and ends the rules that put them there. */
-async function endWork(tx: Tx, viewer: Viewer, userId: string, nowMs: number): Promise<void> {
-  const ended = await tx
-    .update(assignments)
-    .set({ endedAt: nowMs })
-    .where(and(eq(assignments.userId, userId), isNull(assignments.endedAt)))
-    .returning({ buildId: assignments.buildId });
-  for (const { buildId } of ended)
-    await recordEvent(tx, { actorId: viewer.id, action: 'assignment_ended', buildId, subjectId: userId }, nowMs);
-  await tx
-    .update(standingAssignments)
-    .set({ endedAt: nowMs })
-    .where(and(eq(standingAssignments.userId, userId), isNull(standingAssignments.endedAt)));
-  await routeAgain(tx, { holderId: userId }, nowMs);
-}
-
 /** Opens a closed account again, without its old assignments. */
 export function reopenPerson(viewer: Viewer, userId: string, nowMs: number): Promise<void> {
   return write(async (tx) => {
@@ -209,167 +168,5 @@ export function endSessionsOf(viewer: Viewer, userId: string, nowMs: number): Pr
     const person = await requirePerson(tx, userId);
     await tx.delete(sessions).where(eq(sessions.userId, person.id));
     await recordEvent(tx, { actorId: viewer.id, action: 'sessions_ended', subjectId: person.id }, nowMs);
-  });
-}
-
-/**
- * Puts staff on builds, several at once, or on none if one of the numbers is unknown; who is on one already stays, and
- * is cleared for its hold if that is asked for. @returns how many assignments are new or newly cleared
- */
-export function assignStaff(
-  viewer: Viewer,
-  { userId, orderNumbers, cleared }: Assignment,
-  nowMs: number,
-): Promise<number> {
-  return write(async (tx) => {
-    await requireCan(viewer, 'assignment.manage');
-    const person = await requirePerson(tx, userId);
-    if (person.role !== 'builder' && person.role !== 'rep') {
-      throw new BadInput({ userId: 'Only builders and reps are assigned. An admin steps in, with a reason.' });
-    }
-    let added = 0;
-    for (const orderNumber of orderNumbers) {
-      const [build] = await tx.select({ id: builds.id }).from(builds).where(eq(builds.orderNumber, orderNumber));
-      if (!build)
-        throw new BadInput({ orderNumbers: `There is no order ${orderNumber}. Nobody was assigned to anything.` });
-      added += await addAssignment(tx, viewer, { buildId: build.id, userId, cleared, reason: null }, nowMs);
-    }
-    return added;
-  });
-}
-
-type NewAssignment = { buildId: string; userId: string; cleared: boolean; reason: string | null };
-
-async function addAssignment(
-  tx: Tx,
-  viewer: Viewer,
-  { buildId, userId, cleared, reason }: NewAssignment,
-  nowMs: number,
-): Promise<number> {
-  const [added] = await tx
-    .insert(assignments)
-    .values({ buildId, userId, cleared, stepInReason: reason, assignedById: viewer.id, startedAt: nowMs })
-    .onConflictDoNothing()
-    .returning({ id: assignments.id });
-  if (!added) return cleared ? clearForHold(tx, viewer, { buildId, userId }, nowMs) : 0;
-  const action = reason === null ? 'assigned' : 'stepped_in';
-  await recordEvent(tx, { actorId: viewer.id, action, buildId, subjectId: userId, reason: reason ?? undefined }, nowMs);
-  await routeAgain(tx, { buildId }, nowMs);
-  return 1;
-}
-
-async function clearForHold(
-  tx: Tx,
-  viewer: Viewer,
-  { buildId, userId }: { buildId: string; userId: string },
-  nowMs: number,
-): Promise<number> {
-  const uncleared = and(
-    eq(assignments.buildId, buildId),
-    eq(assignments.userId, userId),
-    eq(assignments.cleared, false),
-    isNull(assignments.endedAt),
-  );
-  const cleared = await tx
-    .update(assignments)
-    .set({ cleared: true })
-    .where(uncleared)
-    .returning({ id: assignments.id });
-  if (cleared.length > 0)
-    await recordEvent(tx, { actorId: viewer.id, action: 'cleared', buildId, subjectId: userId }, nowMs);
-  return cleared.length;
-}
-
-/** Takes somebody off a build; their very next request is refused. */
-export function endAssignment(viewer: Viewer, assignmentId: string, nowMs: number): Promise<void> {
-  return write(async (tx) => {
-    await requireCan(viewer, 'assignment.manage');
-    const [ended] = await tx
-      .update(assignments)
-      .set({ endedAt: nowMs })
-      .where(and(eq(assignments.id, assignmentId), isNull(assignments.endedAt)))
-      .returning({ buildId: assignments.buildId, userId: assignments.userId });
-    if (!ended) throw new OutOfReach();
-    const { buildId, userId } = ended;
-    await recordEvent(tx, { actorId: viewer.id, action: 'assignment_ended', buildId, subjectId: userId }, nowMs);
-    await routeAgain(tx, { buildId, holderId: userId }, nowMs);
-  });
-}
-
-/** An admin puts themselves on a build, cleared for a hold, with a reason that the owner can read. */
-export function stepIn(viewer: Viewer, { orderNumber, reason }: StepIn, nowMs: number): Promise<void> {
-  return write(async (tx) => {
-    await requireCan(viewer, 'build.step_in');
-    const [build] = await tx.select({ id: builds.id }).from(builds).where(eq(builds.orderNumber, orderNumber));
-    if (!build) throw new BadInput({ orderNumber: 'There is no order with this number.' });
-    await addAssignment(tx, viewer, { buildId: build.id, userId: viewer.id, cleared: true, reason }, nowMs);
-  });
-}
-
-/** The owner lets somebody look on. A new address is invited; nobody looks on while the build is held from view. */
-export function addCompanion(
-  viewer: Viewer,
-  orderNumber: string,
-  person: { name: string; email: string },
-  nowMs: number,
-): Promise<void> {
-  return write(async (tx) => {
-    const build = await requireCan(viewer, 'companion.manage', orderNumber, tx);
-    const [row] = await tx.select({ heldUntilAt: builds.heldUntilAt }).from(builds).where(eq(builds.id, build.id));
-    if (row?.heldUntilAt && row.heldUntilAt > nowMs) {
-      throw new BadInput({ email: 'This build is held from view. Companions can be added when the hold ends.' });
-    }
-    const [known] = await tx
-      .select({ id: users.id, role: users.role })
-      .from(users)
-      .where(eq(users.email, person.email));
-    if (known && isStaffRole(known.role))
-      throw new BadInput({ email: 'Use a private address: this one belongs to the shop.' });
-    const userId = known?.id ?? (await addPerson(tx, viewer, { ...person, role: 'buyer', department: null }, nowMs));
-    const added = await tx
-      .insert(buildPeople)
-      .values({ buildId: build.id, userId, standing: 'companion' })
-      .onConflictDoNothing()
-      .returning({ userId: buildPeople.userId });
-    if (added.length === 0) throw new BadInput({ email: 'This person is on the build already.' });
-    await recordEvent(
-      tx,
-      { actorId: viewer.id, action: 'companion_added', buildId: build.id, subjectId: userId },
-      nowMs,
-    );
-  });
-}
-
-export function removeCompanion(viewer: Viewer, orderNumber: string, userId: string, nowMs: number): Promise<void> {
-  return write(async (tx) => {
-    const build = await requireCan(viewer, 'companion.manage', orderNumber, tx);
-    const companion = and(
-      eq(buildPeople.buildId, build.id),
-      eq(buildPeople.userId, userId),
-      eq(buildPeople.standing, 'companion'),
-    );
-    const removed = await tx.delete(buildPeople).where(companion).returning({ userId: buildPeople.userId });
-    if (removed.length === 0) throw new OutOfReach();
-    await recordEvent(
-      tx,
-      { actorId: viewer.id, action: 'companion_removed', buildId: build.id, subjectId: userId },
-      nowMs,
-    );
-  });
-}
-
-/**
- * Holds a build from view until an instant, or opens it (null). Companions stop seeing it at once, and so do the staff
- * who are not cleared. Who holds it is cleared, and put on it if only a rule had: a rule never covers a held build.
- */
-export function holdBuild(viewer: Viewer, orderNumber: string, untilAt: number | null, nowMs: number): Promise<void> {
-  return write(async (tx) => {
-    const build = await requireCan(viewer, 'build.hold', orderNumber, tx);
-    await tx.update(builds).set({ heldUntilAt: untilAt }).where(eq(builds.id, build.id));
-    if (untilAt !== null)
-      await addAssignment(tx, viewer, { buildId: build.id, userId: viewer.id, cleared: true, reason: null }, nowMs);
-    const action = untilAt === null ? 'opened' : 'held';
-    await recordEvent(tx, { actorId: viewer.id, action, buildId: build.id }, nowMs);
-    await routeAgain(tx, { buildId: build.id }, nowMs);
   });
 }

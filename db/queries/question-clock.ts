@@ -1,6 +1,6 @@
 import { and, asc, desc, eq, isNotNull, isNull, sql } from 'drizzle-orm';
 import { unscopedCalendar } from './calendar';
-import { openRouter } from './answerers';
+import { listReps } from './answerers';
 import { queueMail } from './outbox';
 import { write, type Tx } from '../client';
 import { letters, questions } from '../schema';
@@ -81,21 +81,12 @@ async function remind(tx: Tx, question: Running, reminder: Reminder, nowMs: numb
     .where(eq(questions.id, question.id));
   const about = { questionId: question.id, letterId: await lastLetterOf(tx, question.id) };
   const kind = reminder === 'overdue' ? 'question_overdue' : 'question_due';
-  const readers = reminder === 'overdue' ? await repsOn(tx, question.buildId, nowMs) : [question.penHolderId];
+  const readers = reminder === 'overdue' ? await listReps(tx, question.buildId, nowMs) : [question.penHolderId];
   for (const userId of readers) {
     if (userId === null) continue;
     const dedupeKey = `${kind}/${question.id}/${reminder}/${question.dueAt}/${userId}`;
     await queueMail(tx, { kind, userId, about, dedupeKey }, nowMs);
   }
-}
-
-/** The reps of a build who are at work; whoever is named for the rest where it has none. */
-async function repsOn(tx: Tx, buildId: string, nowMs: number): Promise<string[]> {
-  const router = await openRouter(tx, buildId, nowMs);
-  const reps = router.onBuild.filter(({ role, isAway }) => role === 'rep' && !isAway);
-  if (reps.length > 0) return reps.map(({ id }) => id);
-  const { holder } = router.route({ answeredBy: 'rep', department: null, repsOnly: true });
-  return holder ? [holder.id] : [];
 }
 
 /** What the mail about a waiting question quotes. */

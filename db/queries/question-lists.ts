@@ -153,6 +153,26 @@ export async function listBuildQuestions(viewer: Viewer, orderNumber: string, pl
   return pageOf(viewer, eq(questions.buildId, build.id), newest, place);
 }
 
+/** The questions that wait for the shop on the builds the viewer reaches and that they read, first what is due first. */
+export function listWaitingQuestions(viewer: Viewer) {
+  return db()
+    .select({
+      buildId: questions.buildId,
+      subject: questions.subject,
+      dueAt: questions.dueAt,
+      penHolderId: questions.penHolderId,
+      holderName: holder.name,
+      askerName: asker.name,
+    })
+    .from(questions)
+    .innerJoin(builds, eq(builds.id, questions.buildId))
+    .innerJoin(asker, eq(asker.id, questions.askedById))
+    .leftJoin(holder, eq(holder.id, questions.penHolderId))
+    .where(and(eq(questions.state, 'waiting'), buildIsVisible(viewer), questionIsVisible(viewer)))
+    .orderBy(sql`${questions.dueAt} is null`, asc(questions.dueAt), asc(questions.id))
+    .limit(500);
+}
+
 /** One question as its page heads it; null when it is unknown or out of reach. */
 export async function findQuestionRow(viewer: Viewer, questionId: string) {
   const [row] = await db()

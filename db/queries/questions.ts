@@ -1,4 +1,4 @@
-import { and, count, eq, isNull, or, sql } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import { openRouter } from './answerers';
 import { addLetter } from './letters';
 import { recordPass } from './pen';
@@ -134,22 +134,6 @@ async function requireAnswerer(tx: Tx, viewer: Viewer, question: ReachedQuestion
   if (question.penHolderId !== viewer.id) {
     throw new Denied('not_allowed', 'Somebody else holds the pen on this question. Ask your rep to pass it to you.');
   }
-}
-
-const waitsFor = (viewer: Viewer) =>
-  viewer.role === 'builder'
-    ? eq(questions.penHolderId, viewer.id)
-    : or(eq(questions.penHolderId, viewer.id), isNull(questions.penHolderId));
-
-/** How many questions wait for this viewer to answer. */
-export async function countWaiting(viewer: Viewer): Promise<number> {
-  if (!isStaffRole(viewer.role)) return 0;
-  const [row] = await db()
-    .select({ n: count() })
-    .from(questions)
-    .innerJoin(builds, eq(builds.id, questions.buildId))
-    .where(and(eq(questions.state, 'waiting'), waitsFor(viewer), buildIsVisible(viewer), questionIsVisible(viewer)));
-  return row?.n ?? 0;
 }
 
 /** One question with its letters, the latest 200 of them, oldest first. @throws OutOfReach */

@@ -8,8 +8,8 @@ import { movementOf, type Movement } from '@/lib/craft/materials';
 import { BadInput } from '@/lib/errors';
 import { boardsOf, type Board } from '@/lib/readings/board-movement';
 import { judgeReading } from '@/lib/readings/judge';
-import { benchItemOf, type BenchBuild, type BenchItem } from '@/lib/readings/plan';
-import type { CoatReading, NewReading } from '@/lib/readings/reading';
+import { benchItemOf, type BenchBuild } from '@/lib/readings/plan';
+import type { NewReading } from '@/lib/readings/reading';
 import type { SpecDocument } from '@/lib/specs/document';
 import type { Viewer } from '@/lib/viewer';
 
@@ -28,17 +28,6 @@ async function unscopedSpec(reader: Reader, buildId: string): Promise<SpecDocume
   return sent?.document ?? null;
 }
 
-/** The spec a build is made to, or null. @throws OutOfReach, or Denied for companions */
-export async function findSpecOf(viewer: Viewer, orderNumber: string): Promise<SpecDocument | null> {
-  const build = await requireCan(viewer, 'spec.read', orderNumber);
-  return unscopedSpec(db(), build.id);
-}
-
-/** Its items as the bench measures and shows them; none while no spec was sent. @throws as `findSpecOf` */
-export async function findSpecForBench(viewer: Viewer, orderNumber: string): Promise<BenchItem[]> {
-  return (await findSpecOf(viewer, orderNumber))?.items.map(benchItemOf) ?? [];
-}
-
 /** No viewer: the caller has asked. */
 export async function unscopedBench(reader: Reader, buildId: string): Promise<BenchBuild> {
   const [build] = await reader
@@ -47,12 +36,12 @@ export async function unscopedBench(reader: Reader, buildId: string): Promise<Be
     .where(eq(builds.id, buildId));
   if (!build) throw new Error('a reached build without a row');
   const document = await unscopedSpec(reader, buildId);
-  return { ...build, items: document?.items.map(benchItemOf) ?? [], coats: await coatsOf(reader, buildId) };
+  return { ...build, items: document?.items.map(benchItemOf) ?? [], ...(await coatsOf(reader, buildId)) };
 }
 
-async function coatsOf(reader: Reader, buildId: string): Promise<CoatReading[]> {
+async function coatsOf(reader: Reader, buildId: string): Promise<Pick<BenchBuild, 'coats' | 'lastCoatAtMs'>> {
   const rows = await reader
-    .select({ value: readings.value })
+    .select({ value: readings.value, takenAt: entries.datedAt })
     .from(readings)
     .innerJoin(entries, eq(entries.id, readings.entryId))
     .where(
@@ -63,7 +52,8 @@ async function coatsOf(reader: Reader, buildId: string): Promise<CoatReading[]> 
       ),
     )
     .orderBy(asc(entries.datedAt), asc(readings.position));
-  return rows.flatMap(({ value }) => (value.kind === 'coat' ? [value] : []));
+  const coats = rows.flatMap(({ value }) => (value.kind === 'coat' ? [value] : []));
+  return { coats, lastCoatAtMs: rows.at(-1)?.takenAt ?? null };
 }
 
 /** What the bench's form measures a build against. @throws OutOfReach, or Denied for who does not post */
@@ -145,7 +135,8 @@ export type MovingBoard = Board & { movement: Movement | null };
 
 /** The boards of the spec whose wood and width are named, and how that wood moves. @throws OutOfReach, or Denied for companions */
 export async function listBoards(viewer: Viewer, orderNumber: string): Promise<MovingBoard[]> {
-  const spec = await findSpecOf(viewer, orderNumber);
+  const build = await requireCan(viewer, 'spec.read', orderNumber);
+  const spec = await unscopedSpec(db(), build.id);
   const boards = spec ? boardsOf(spec) : [];
   if (boards.length === 0) return [];
   const rows = await db()

@@ -6,7 +6,8 @@ import { BadInput, OutOfReach } from '@/lib/errors';
 import { addDays } from '@/lib/schedule/days';
 import { dayOf } from '@/lib/schedule/calendar';
 import type { Holiday } from '@/lib/schedule/holidays';
-import type { Capacity, Hours, NewClosure, StageEstimate } from '@/lib/validation/calendar';
+import type { Hours } from '@/lib/schedule/week-form';
+import type { Capacity, NewClosure, StageEstimate } from '@/lib/validation/calendar';
 import type { Viewer } from '@/lib/viewer';
 
 /** Whatever dates rest on has changed: windows from before are reckoned anew. */

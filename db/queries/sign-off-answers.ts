@@ -1,4 +1,5 @@
 import { and, eq } from 'drizzle-orm';
+import { listReps, staffOn } from './answerers';
 import { recordEvent } from './audit';
 import { touchDiary } from './builds';
 import { queueMail } from './outbox';
@@ -118,12 +119,20 @@ async function answer(tx: Tx, viewer: SessionViewer, signOff: Asked, given: Answ
     .update(signOffs)
     .set({ ...given, answeredById: viewer.id, answeredAt: nowMs, sessionHash: hashToken(viewer.sessionId) })
     .where(eq(signOffs.id, id));
-  const mail = { kind: 'sign_off_answered', userId: signOff.askedById, about: { signOffId: id } } as const;
-  await queueMail(tx, { ...mail, dedupeKey: `sign_off_answered/${id}` }, nowMs);
+  for (const userId of await listAwaiting(tx, signOff, nowMs)) {
+    const mail = { kind: 'sign_off_answered', userId, about: { signOffId: id } } as const;
+    await queueMail(tx, { ...mail, dedupeKey: `sign_off_answered/${id}/${userId}` }, nowMs);
+  }
   const action = given.state === 'signed' ? 'sign_off_signed' : 'sign_off_change_asked';
   // What was in front of the owner goes into the chained record too.
   await recordEvent(tx, { actorId: viewer.id, action, buildId, subjectId: id, reason: signOff.contentHash }, nowMs);
   await touchDiary(tx, buildId);
+}
+
+/** Who hears the answer: whoever asked, or the reps of the build where they have left it or are away. */
+async function listAwaiting(tx: Tx, { buildId, askedById }: Asked, nowMs: number): Promise<string[]> {
+  const onBuild = await staffOn(tx, buildId, nowMs);
+  return onBuild.some(({ id, isAway }) => id === askedById && !isAway) ? [askedById] : listReps(tx, buildId, nowMs);
 }
 
 /** The shop takes back what is not signed yet. Taking it back twice is once. @throws OutOfReach or Denied */

@@ -1,11 +1,11 @@
-import { and, asc, count, eq, gt, inArray, or, sql } from 'drizzle-orm';
+import { and, asc, eq, gt, inArray, or, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { ownerNameOf } from './owners';
 import { requireCan } from './standing';
 import { db } from '../client';
 import { buildIsVisible, signOffIsVisible } from '../scope';
 import { builds, buildStages, signOffs, users } from '../schema';
-import { isClientRole, isStaffRole } from '@/lib/access';
+import { isStaffRole } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
 import type { Viewer } from '@/lib/viewer';
 
@@ -84,23 +84,6 @@ export async function listSignOffQueue(viewer: Viewer, place: Place | null) {
   return { signOffs: page, next: rows.length > PAGE && last ? `${last.dueOn}.${last.id}` : null };
 }
 
-/** How many sign-offs wait for this viewer: an owner for their name, a rep for what a client wants changed. */
-export async function countWaitingSignOffs(viewer: Viewer): Promise<number> {
-  if (viewer.role === 'builder') return 0;
-  const [row] = await db()
-    .select({ n: count() })
-    .from(signOffs)
-    .innerJoin(builds, eq(builds.id, signOffs.buildId))
-    .where(
-      and(
-        eq(signOffs.state, isClientRole(viewer.role) ? 'asked' : 'change_asked'),
-        buildIsVisible(viewer),
-        signOffIsVisible(viewer),
-      ),
-    );
-  return row?.n ?? 0;
-}
-
 /**
  * Who waits for whom: the open sign-offs of these builds, or of all the viewer reaches, by the day to sign by. A
  * companion gets none.
@@ -134,26 +117,6 @@ export function listWaitingSignOffs(viewer: Viewer, buildIds?: string[]) {
 }
 
 export type WaitingSignOff = Awaited<ReturnType<typeof listWaitingSignOffs>>[number];
-
-/**
- * From when to when a build waited for its owner's word, oldest first; `toMs` is null while it still waits. Asking for
- * a change is an answer: from then on the shop is awaited. No viewer: what is computed from it is shown by other rules.
- */
-export async function signOffWaits(buildId: string) {
-  const rows = await db()
-    .select({
-      fromMs: signOffs.askedAt,
-      toMs: signOffs.answeredAt,
-      blocksStageKey: signOffs.blocksStageKey,
-      state: signOffs.state,
-    })
-    .from(signOffs)
-    .where(eq(signOffs.buildId, buildId))
-    .orderBy(asc(signOffs.askedAt));
-  return rows.map(({ state, toMs, ...wait }) => ({ ...wait, toMs: state === 'asked' ? null : toMs }));
-}
-
-export type SignOffWait = Awaited<ReturnType<typeof signOffWaits>>[number];
 
 /** One sign-off as its page heads it, with all others of its build to tell which took whose place. @throws OutOfReach */
 export async function requireSignOff(viewer: Viewer, signOffId: string) {

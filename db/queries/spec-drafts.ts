@@ -1,8 +1,8 @@
-import { asc, eq } from 'drizzle-orm';
+import { and, asc, eq } from 'drizzle-orm';
 import { freezeGround } from './spec-freeze';
 import { requireCan } from './standing';
 import { db, write, type Db, type Tx } from '../client';
-import { builds, buildStages, materials, specDrafts, specTemplates, users } from '../schema';
+import { builds, buildStages, documents, materials, specDrafts, specTemplates, users } from '../schema';
 import { BadInput, Denied } from '@/lib/errors';
 import { checkDocument, type SpecSurroundings } from '@/lib/specs/check';
 import type { SpecDocument } from '@/lib/specs/document';
@@ -102,5 +102,13 @@ export async function requireSound(tx: Tx, buildId: string, next: SpecDocument, 
 async function surroundingsOf(tx: Tx, buildId: string): Promise<SpecSurroundings> {
   const stages = await tx.select({ key: buildStages.key }).from(buildStages).where(eq(buildStages.buildId, buildId));
   const woods = await tx.select({ key: materials.key }).from(materials);
-  return { stageKeys: new Set(stages.map(({ key }) => key)), materialKeys: new Set(woods.map(({ key }) => key)) };
+  const drawings = await tx
+    .select({ id: documents.id })
+    .from(documents)
+    .where(and(eq(documents.buildId, buildId), eq(documents.state, 'ready')));
+  return {
+    stageKeys: new Set(stages.map(({ key }) => key)),
+    materialKeys: new Set(woods.map(({ key }) => key)),
+    drawingIds: new Set(drawings.map(({ id }) => id)),
+  };
 }

@@ -58,6 +58,8 @@ export const outbox = sqliteTable(
     lastProblem: text('last_problem'),
     providerId: text('provider_id'),
     sentAt: instant('sent_at'),
+    /** Since then `frozen` has its headers only: what it said is composed anew where it is wanted again. */
+    bodyDroppedAt: instant('body_dropped_at'),
     /** What the provider told of it afterwards. */
     deliveredAt: instant('delivered_at'),
     bouncedAt: instant('bounced_at'),
@@ -69,6 +71,9 @@ export const outbox = sqliteTable(
     index('outbox_due').on(t.state, t.nextAttemptAt),
     index('outbox_user').on(t.userId, t.createdAt),
     index('outbox_provider').on(t.providerId),
+    index('outbox_bodies')
+      .on(t.createdAt)
+      .where(sql`${t.frozen} is not null and ${t.bodyDroppedAt} is null`),
     check('outbox_state_known', sql`${t.state} in ('waiting', 'sending', 'sent', 'failed', 'parked', 'dropped')`),
   ],
 );
@@ -100,12 +105,15 @@ export const newsItems = sqliteTable(
     kind: text('kind', { enum: mailKinds }).notNull(),
     about: text('about', { mode: 'json' }).$type<MailAbout>().notNull(),
     dedupeKey: text('dedupe_key').notNull(),
+    /** Not told before this moment: what it tells of may still be corrected. */
+    notBeforeAt: instant('not_before_at').notNull().default(0),
     toldAt: instant('told_at'),
     createdAt: createdAt(),
   },
   (t) => [
     uniqueIndex('news_items_dedupe_unique').on(t.dedupeKey),
     index('news_items_untold').on(t.userId, t.toldAt, t.createdAt),
+    index('news_items_created').on(t.createdAt),
   ],
 );
 

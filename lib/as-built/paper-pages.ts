@@ -44,7 +44,7 @@ export function cutToPages(groups: Group[], firstPt: number, hasPicture: (row: A
 function rowHeight(row: AsBuiltRow, hasPicture: boolean): number {
   const columns = [
     [row.label],
-    [row.signed, row.allowed],
+    [row.signed, row.allowed, row.drawing?.name ?? null],
     [row.measured, row.within, row.stateWords],
     [row.proof, 'photo'],
   ];

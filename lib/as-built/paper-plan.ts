@@ -105,7 +105,7 @@ function rowOf(row: AsBuiltRow, picture: PlannedPicture | null): PlannedRow {
   return {
     label: paperText(row.label),
     signed: paperText(row.signed),
-    allowed: row.allowed && paperText(row.allowed),
+    allowed: underSigned(row),
     measured: row.measured && paperText(row.measured),
     within: row.measured === null ? null : row.within && paperText(row.within),
     standing: paperText(row.stateWords),
@@ -113,6 +113,12 @@ function rowOf(row: AsBuiltRow, picture: PlannedPicture | null): PlannedRow {
     proof: row.proof === null ? 'not yet' : paperText(row.proof),
     picture,
   };
+}
+
+/** Below the signed value: what is allowed, and the drawing it was signed as. */
+function underSigned({ allowed, drawing }: AsBuiltRow): string | null {
+  const words = [allowed, drawing && `see “${drawing.name}”`].filter((word) => word !== null);
+  return words.length === 0 ? null : paperText(words.join('; '));
 }
 
 /** Cut by hand: left to flow, the renderer would lay out all that follow once more for every page. */

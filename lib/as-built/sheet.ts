@@ -1,10 +1,12 @@
 import { caution, cautionsForMaterials, type Caution } from '@/lib/craft/cautions';
 import { fingerboard, type Fingerboard } from '@/lib/craft/fingerboard';
 import { PAPERS_SENTENCE } from '@/lib/craft/materials';
+import { figuresOf } from '@/lib/craft/typed-form';
 import { dayWords } from '@/lib/date-words';
 import { leavingWords } from '@/lib/leaving-words';
 import { boardOf } from '@/lib/specs/board';
 import type { SpecItem } from '@/lib/specs/document';
+import { drawingOf, nameDrawings, type Drawing, type SentUp } from '@/lib/specs/drawings';
 import { byGroup, groupName } from '@/lib/specs/groups';
 import { allowedWords } from '@/lib/specs/item-words';
 import type { ProofEntry, ProofLine, ProofState } from '@/lib/specs/proof';
@@ -45,6 +47,8 @@ export type AsBuiltFacts = {
   deliveredAt: number | null;
   version: { number: number; signedAt: number; signedName: string };
   lines: ProofLine[];
+  /** Drawings and samples that the viewer may open. */
+  drawings: SentUp[];
   setUp: SetUpTaken[];
   /** Materials of the spec that are marked: their papers are asked about. */
   papers: string[];
@@ -57,6 +61,7 @@ export type AsBuiltRow = {
   label: string;
   signed: string;
   allowed: string | null;
+  drawing: Drawing | null;
   measured: string | null;
   within: string | null;
   state: ProofState;
@@ -102,6 +107,7 @@ const stateWords: Record<ProofState, string> = {
 export function asBuiltSheet(facts: AsBuiltFacts, zone: string, nowMs: number): AsBuiltSheet {
   const day = (ms: number) => dayWords(ms, zone, nowMs);
   const { version, lines, papers } = facts;
+  const drawings = nameDrawings(facts.drawings, zone);
   const items = lines.map(({ item }) => item);
   return {
     shopName: facts.shopName,
@@ -116,7 +122,7 @@ export function asBuiltSheet(facts: AsBuiltFacts, zone: string, nowMs: number): 
     groups: byGroup(items).map(({ group, items: ofGroup }) => ({
       key: group,
       name: groupName(group),
-      rows: lines.filter(({ item }) => ofGroup.includes(item)).map((line) => rowOf(line, day)),
+      rows: lines.filter(({ item }) => ofGroup.includes(item)).map((line) => rowOf(line, drawings, day)),
     })),
     setUp: facts.setUp.map(({ datedAt, authorName, ...taken }) => ({ ...taken, by: `${day(datedAt)}, ${authorName}` })),
     setUpCautions: [caution('string_change'), caution('truss_rod')],
@@ -139,15 +145,16 @@ function boardIn(items: SpecItem[]): Fingerboard | null {
   return drawn.ok ? drawn.board : null;
 }
 
-function rowOf(line: ProofLine, day: (ms: number) => string): AsBuiltRow {
+function rowOf(line: ProofLine, drawings: readonly Drawing[], day: (ms: number) => string): AsBuiltRow {
   const { item, signed, measured, withinWords, state, proofs, waitsForSignOff } = line;
   const [shown] = proofs;
   return {
     key: item.key,
     label: item.label,
-    signed,
+    signed: figuresIn(signed, item),
     allowed: allowedWords(item),
-    measured,
+    drawing: drawingOf(item, drawings),
+    measured: measured && figuresIn(measured, item),
     within: withinWords,
     state,
     stateWords: state === 'open' && waitsForSignOff !== null ? `waits for “${waitsForSignOff}”` : stateWords[state],
@@ -156,6 +163,10 @@ function rowOf(line: ProofLine, day: (ms: number) => string): AsBuiltRow {
     photoId: proofs.find(({ photoId }) => photoId !== null)?.photoId ?? null,
   };
 }
+
+/** A length of the sheet in both unit systems: nobody switches units on paper. */
+const figuresIn = (words: string, item: SpecItem) =>
+  item.kind === 'measure' ? figuresOf({ text: words, unit: item.aim.unit }) : words;
 
 const proofWords = ({ datedAt, stageName, authorName }: ProofEntry, day: (ms: number) => string) =>
   `${day(datedAt)}, ${stageName}, ${authorName}`;

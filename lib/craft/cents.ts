@@ -12,6 +12,9 @@ export function centsBetween(frequencyHz: number, referenceHz: number): number {
   return 1200 * Math.log2(frequencyHz / referenceHz);
 }
 
+/** Which way the saddle of a string goes whose fretted note is so many cents off, sharp above 0. */
+export const saddleWords = (cents: number) => `move the saddle ${cents > 0 ? 'away from' : 'towards'} the neck`;
+
 export type IntonationVerdict = { cents: number; isWithin: boolean; words: string };
 
 /**
@@ -26,6 +29,5 @@ export function intonationVerdict(frettedHz: number, harmonicHz: number, limitCe
   const size = figure(Math.abs(cents), 1);
   const found = size === '0' ? 'in tune' : `${size} cents ${cents > 0 ? 'sharp' : 'flat'}`;
   if (isWithin) return { cents, isWithin, words: `${found}, within ${figure(limitCents, 1)} cents` };
-  const turn = cents > 0 ? 'away from the neck' : 'towards the neck';
-  return { cents, isWithin, words: `${found}: move the saddle ${turn}` };
+  return { cents, isWithin, words: `${found}: ${saddleWords(cents)}` };
 }

@@ -5,7 +5,6 @@ import {
   modeOklch,
   modeRgb,
   useMode as registerMode,
-  wcagContrast,
   wcagLuminance,
   type Oklch,
 } from 'culori/fn';
@@ -30,9 +29,6 @@ export type FinishTones = {
   /** Text on `finishDeep`, at least 4.5:1. */
   onFinishDeep: string;
 };
-
-/** The house finish, worn by pages that belong to no build. */
-const HOUSE_FINISH = '#007a84';
 
 /** Text contrast of WCAG 2.2, 1.4.3 (AA). */
 const TEXT_CONTRAST = 4.5;
@@ -65,7 +61,8 @@ export function relativeLuminance(hex: string): number {
 
 /** Contrast ratio, 1 to 21, in either order. WCAG 2.2, definition "contrast ratio". @throws RangeError on a bad hex */
 export function contrastRatio(a: string, b: string): number {
-  return wcagContrast(normaliseHex(a), normaliseHex(b));
+  const [one, other] = [relativeLuminance(a), relativeLuminance(b)];
+  return (Math.max(one, other) + 0.05) / (Math.min(one, other) + 0.05);
 }
 
 /** An OKLCH colour as the nearest sRGB hex of the same lightness and hue. */
@@ -100,11 +97,6 @@ export function finishTones(finishHex: string, theme: Theme): FinishTones {
     onFinish: readableOn(finish),
     onFinishDeep: readableOn(finishDeep),
   };
-}
-
-/** The shop's own tones, for pages that belong to no build. */
-export function houseTones(theme: Theme): FinishTones {
-  return finishTones(HOUSE_FINISH, theme);
 }
 
 /** A grey has no hue; any will do, as it has no chroma either. */

@@ -43,6 +43,25 @@ export const finishWindows: readonly FinishWindow[] = [
   placeholder('neck blank', 'rest between roughing and final machining', 7, 30, 'days'),
 ];
 
+/** Which materials are put on in coats, and how a can that holds one is labelled; the first that fits counts. */
+const coated: readonly [sign: RegExp, material: string][] = [
+  [/water/i, 'water-borne clear'],
+  [/polyester/i, 'polyester (2K) base'],
+  [/polyurethane|\b2k\b|urethane/i, 'polyurethane (2K), clear'],
+  [/nitro|lacquer/i, 'nitrocellulose lacquer'],
+  [/\boil/i, 'oil finish'],
+];
+
+export const coatMaterials = coated.map(([, material]) => material);
+
+/** The material that a product is most likely, by what stands on its can; null where that names none. */
+export const materialOf = (product: string) => coated.find(([sign]) => sign.test(product))?.[1] ?? null;
+
+export const windowsOf = (material: string) => finishWindows.filter((window) => window.material === material);
+
+/** "1 to 2 hours" */
+export const spanWords = ({ least, most, unit }: FinishWindow) => `${figure(least, 0)} to ${figure(most, 0)} ${unit}`;
+
 /** Said wherever a placeholder is shown. */
 export const PLACEHOLDER_SENTENCE = "This is a placeholder. Put in the figures of the product's own data sheet.";
 

@@ -1,6 +1,7 @@
 import type { FretTable } from './fret-table';
 import type { FretSheet, SheetPage } from './fret-sheet';
 import type { Fingerboard } from './fingerboard';
+import { fretPosition, GAP_DIVISOR, ruleOf18ErrorCents, ruleOf18Position, slotErrorCents } from './frets';
 import { MM_PER_INCH } from './units';
 
 export type FretUnit = 'in' | 'mm';
@@ -51,6 +52,25 @@ export function drawingCaption({ table }: Fingerboard, unit: FretUnit): string {
     ? `${name} from each side's own nut: treble above, bass below`
     : `${name} from the nut`;
   return `Fingerboard, drawn to scale. Slot positions in ${where}.`;
+}
+
+/** A slot's place can be missed by so much with a saw in good order: common practice, no source. */
+const MISSED_MM = 0.1;
+
+/** What a slot that is a little off does to its note, at the first fret and the last. */
+export function slotErrorWords({ trebleScaleMm, rows }: FretTable): string {
+  const frets = rows.flatMap(({ fret }) => (typeof fret === 'number' && fret > 0 ? [fret] : []));
+  const cents = (fret: number) => slotErrorCents(trebleScaleMm, fret, MISSED_MM).toFixed(1);
+  const [first = 1, last = first] = [frets[0], frets.at(-1)];
+  const off = `${MISSED_MM} mm (${(MISSED_MM / MM_PER_INCH).toFixed(3)} in)`;
+  return `A slot cut ${off} too near the bridge sounds ${cents(first)} cents sharp at fret ${first} and ${cents(last)} at fret ${last}.`;
+}
+
+/** How a board cut by the old rule of 18 differs from these slots, for whoever lays one beside them. */
+export function ruleOf18Words({ trebleScaleMm }: FretTable): string {
+  const short = fretPosition(trebleScaleMm, 12) - ruleOf18Position(trebleScaleMm, 12);
+  const flat = Math.abs(ruleOf18ErrorCents(12)).toFixed(1);
+  return `An old board may be cut by the rule of 18, an eighteenth of what is left to the bridge where these take a part in ${GAP_DIVISOR.toFixed(3)}: its 12th fret lies ${short.toFixed(2)} mm (${(short / MM_PER_INCH).toFixed(3)} in) nearer the nut and sounds ${flat} cents flat.`;
 }
 
 /** What each printed page says, line by line: what it is, how to print it, how to join it to the next. */

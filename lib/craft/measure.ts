@@ -33,7 +33,8 @@ export function lengthWords(measure: Measure, show: ShownUnit): string {
   if (unit === shownUnit && (show === 'mm' || typed.isFraction === (show === 'fraction')))
     return withUnit(digits, unit);
   if (show !== 'fraction') return withUnit(decimalWords(inUnit(exact, unit, shownUnit), shownUnit), shownUnit);
-  return unit === '64ths' ? `${digits}/64 in` : fractionWords(inUnit(exact, unit, 'in'));
+  const inches = inUnit(exact, unit, 'in');
+  return unit === '64ths' ? sixtyFourthsWords(digits, inches) : fractionWords(inches);
 }
 
 /**
@@ -115,6 +116,12 @@ function fractionWords(inches: Fraction): string {
   return `about ${mixedNumber(nearest)} in`;
 }
 
+/** `4/64 in` as a rule is read; half a 64th is a 128th, and anything finer a decimal. */
+function sixtyFourthsWords(digits: string, inches: Fraction): string {
+  if (/^\d+$/.test(digits)) return `${digits}/64 in`;
+  return (2 * FINEST_FRACTION) % inches.denominator === 0 ? `${mixedNumber(inches)} in` : fractionWords(inches);
+}
+
 function mixedNumber({ numerator, denominator }: Fraction): string {
   const whole = Math.trunc(numerator / denominator);
   const rest = Math.abs(numerator % denominator);
@@ -126,9 +133,15 @@ function mixedNumber({ numerator, denominator }: Fraction): string {
 /** Small inches keep three decimals, as a rule is read in thousandths. */
 function decimalWords(exact: Fraction, unit: 'in' | 'mm'): string {
   const value = valueOf(exact);
-  const rounded = value.toFixed(ROUNDED_PLACES[unit]).replace(/\.?0+$/, '');
+  const rounded = roundedExactly(exact, ROUNDED_PLACES[unit]).replace(/\.?0+$/, '');
   if (unit === 'mm' || Math.abs(value) >= 1) return rounded;
   return rounded.length < value.toFixed(3).length ? value.toFixed(3) : rounded;
+}
+
+/** Halves go away from 0, by the fraction itself: 127/80 is 1.588, which its nearest double is not. */
+function roundedExactly({ numerator, denominator }: Fraction, places: number): string {
+  const units = Math.round((Math.abs(numerator) * 10 ** places) / denominator);
+  return ((Math.sign(numerator) * units) / 10 ** places).toFixed(places);
 }
 
 function plainDecimal(exact: Fraction): string {

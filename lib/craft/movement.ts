@@ -1,4 +1,3 @@
-import { ask, wrong, type Doubt } from './doubt';
 import type { Grain, Movement } from './materials';
 
 /** Between these moistures the constant coefficients hold; Wood Handbook, FPL-GTR-190 (2010), ch. 13, at Eq. (13-2). */
@@ -51,10 +50,7 @@ export function changeByShrinkage(step: Step, shrinkagePercent: number): number 
   return (step.dimension * (to - from)) / (3000 / shrinkagePercent - FIBRE_SATURATION_PERCENT + from);
 }
 
-/** The coefficient that belongs to a shrinkage, at 10 %, where the two forms agree: C = 1/(3000/S - 20). */
-export const coefficientFor = (shrinkagePercent: number) => 1 / (3000 / shrinkagePercent - 20);
-
-/** The shrinkage that belongs to a coefficient, by the same algebra. */
+/** The shrinkage that belongs to a coefficient, at 10 %, where the two forms agree: C = 1/(3000/S - 20). */
 export const shrinkageFor = (coefficientPerPercent: number) => 3000 / (1 / coefficientPerPercent + 20);
 
 export type ExpectedMovement = {
@@ -98,17 +94,4 @@ export function expectedMovement(wood: Movement | null, grain: Grain, step: Step
   if (coefficientPerPercent === null) return null;
   const change = changeByShrinkage(step, shrinkageFor(coefficientPerPercent));
   return { change, isApproximate: true, basis: 'by a shrinkage worked out from the coefficient' };
-}
-
-/** What is odd about a width and the two moistures it moves between. */
-export function doubtMovement({ dimension, fromPercent, toPercent }: Step): Doubt[] {
-  if (!(dimension > 0 && Number.isFinite(dimension))) return [wrong('Write the width as a number above 0.')];
-  const moistures = [fromPercent, toPercent];
-  if (!moistures.every((mc) => Number.isFinite(mc) && mc >= 0)) {
-    return [wrong('Write both moistures as percentages from 0 to 30.')];
-  }
-  if (moistures.some((mc) => mc > FIBRE_SATURATION_PERCENT)) {
-    return [ask('Above 30 % wood does not move; what is over it is left out.')];
-  }
-  return [];
 }

@@ -1,7 +1,7 @@
 import { gaugeWords } from './gauges';
 import { noteWords } from './notes';
 import { listedGauges, unitWeight } from './string-weights';
-import { setTension, stringTensionLb, type SetTension, type StringPlan, type StringTension } from './strings';
+import { newtons, setTension, stringTensionLb, type SetTension, type StringPlan, type StringTension } from './strings';
 
 /** The tension a player chose for every string, in lb. */
 export type TensionBand = { lowLb: number; highLb: number };
@@ -55,10 +55,14 @@ export function changeString(
   return { ok: true, before, after, differenceLb: after.tensionLb - before.tensionLb, totalLb: next.totalLb };
 }
 
-/** `A .064 takes B1 from 16.4 to 17.5 lb, and the set to 113.7 lb.` */
-export function changeWords({ before, after, totalLb }: ChangedString): string {
-  const [from, to] = [before.tensionLb.toFixed(1), after.tensionLb.toFixed(1)];
-  return `A ${gaugeWords(after.gauge.gaugeThou)} takes ${noteWords(after.note)} from ${from} to ${to} lb, and the set to ${totalLb.toFixed(1)} lb.`;
+/** `A .064 takes B1 from 16.4 to 17.5 lb (78 N), 1.1 lb more, and the set to 113.7 lb (506 N).` */
+export function changeWords({ before, after, differenceLb, totalLb }: ChangedString): string {
+  const { gauge, note, tensionLb, tensionN } = after;
+  const size = Math.abs(differenceLb).toFixed(1);
+  const change = size === '0.0' ? 'no more and no less' : `${size} lb ${differenceLb < 0 ? 'less' : 'more'}`;
+  const pull = `from ${before.tensionLb.toFixed(1)} to ${tensionLb.toFixed(1)} lb (${Math.round(tensionN)} N)`;
+  const set = `the set to ${totalLb.toFixed(1)} lb (${Math.round(newtons(totalLb))} N)`;
+  return `A ${gaugeWords(gauge.gaugeThou)} takes ${noteWords(note)} ${pull}, ${change}, and ${set}.`;
 }
 
 /** One paragraph on a balance, for below the bars and for a reader who does not see them. */

@@ -121,5 +121,5 @@ function countTrouble(strings: number, notes: number): string {
 function outsideTable({ gaugeThou, construction }: Gauge): string {
   const listed = listedGauges(construction);
   const [lightest, heaviest] = [gaugeWords(listed[0] ?? 0), gaugeWords(listed.at(-1) ?? 0)];
-  return `No weight is known for a ${construction} ${gaugeWords(gaugeThou)}: ours run from ${lightest} to ${heaviest}. Choose one of those.`;
+  return `The tension of this set cannot be told: no weight is known for a ${construction} ${gaugeWords(gaugeThou)}. Those that were published run from ${lightest} to ${heaviest}; for others ask the strings’ maker.`;
 }

@@ -9,7 +9,7 @@ import type { StageNow } from '../schedule/walk';
 /** What a row is made of beside its stages. */
 export type RowSource = Pick<
   FloorRow,
-  'orderNumber' | 'instrument' | 'finishHex' | 'ownerName' | 'repName' | 'rack'
+  'orderNumber' | 'instrument' | 'finishHex' | 'ownerName' | 'repName' | 'rack' | 'waits'
 > & {
   isHeld: boolean;
   isOwn: boolean;
@@ -18,8 +18,6 @@ export type RowSource = Pick<
   /** When something was last published to the owner. */
   lastNewsAt: number | null;
   window: { kind: string; earliestOn: string | null; latestOn: string | null } | null;
-  waits: string | null;
-  waitsOn: FloorRow['waitsOn'];
 };
 
 /** Who looks: a builder's own are those at their department, a rep's or admin's all they were put on. */
@@ -64,7 +62,7 @@ export function makeRow(
     today,
   });
   const isFinished = at === undefined;
-  const { orderNumber, instrument, finishHex, ownerName, repName, rack, isHeld, waits, waitsOn } = source;
+  const { orderNumber, instrument, finishHex, ownerName, repName, rack, isHeld, waits } = source;
   return {
     orderNumber,
     instrument,
@@ -74,7 +72,6 @@ export function makeRow(
     rack,
     isHeld,
     waits,
-    waitsOn,
     isStopped: waitingOnOf(build) !== null,
     routeId: build.routeId,
     ...(hasOtherStages(

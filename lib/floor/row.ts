@@ -1,6 +1,9 @@
 /** A stage, or a department, by its key and name. */
 export type NamedStage = { key: string; name: string };
 
+/** Whom something waits on, as "the buyer", "us", "you" or a name, and the same as a sentence. */
+export type FloorWait = { on: string; words: string };
+
 /** One build as the floor shows it: short, because five hundred travel at once. Days in a stage are working days. */
 export type FloorRow = {
   orderNumber: string;
@@ -28,9 +31,8 @@ export type FloorRow = {
   ready: string;
   /** The end of its window, to sort by. */
   readyBy: string | null;
-  /** Whose word a sign-off waits for, and the same as a sentence. */
-  waitsOn: 'buyer' | 'us' | null;
-  waits: string | null;
+  /** What waits for somebody's word: sign-offs first, then questions, each by its day. */
+  waits: FloorWait[];
   /** It cannot go on: its next stage needs something signed, and the clock of its window stands still. */
   isStopped: boolean;
   /** It stands on the viewer's own bench, or is one of this rep's. */

@@ -16,9 +16,9 @@ function saidWindow({ kind, earliestOn, latestOn, words }: KeptWindow): SaidWind
 }
 
 /** "between 20 October and 6 November, 8 in 10"; null where there is no date. */
-export function readyWords(kept: KeptWindow, today: string): string | null {
+export function readyWords(kept: KeptWindow, today: string, locale?: string): string | null {
   const said = saidWindow(kept);
-  return said.kind === 'unsayable' ? null : windowWords(said, today);
+  return said.kind === 'unsayable' ? null : windowWords(said, today, locale);
 }
 
 /** "Ready between 20 October and 6 November, 8 in 10.", or the sentence that says why there is no date. */

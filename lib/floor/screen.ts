@@ -2,7 +2,7 @@ import type { Floor } from './row';
 import { arrange, choicesOf, type FloorChoices, type FloorWish } from './wish';
 
 /** Rows that the server draws; the browser fetches all of them at once afterwards. */
-const FIRST_ROWS = 14;
+const FIRST_ROWS = 8;
 
 /** What a page of the floor shows before the rest of its rows has come. */
 export type FloorScreen = {

@@ -1,6 +1,7 @@
 import { digestBuilds, shownEntries, type DigestEntryRow, type Picture } from './digest-pages';
 import { mailWriters } from './mail-writers';
-import { findShop, listDigestEntries, listDigestPhotos, type MailReader } from '@/db/queries/mail-content';
+import { listDigestEntries, listDigestPhotos, type MailReader } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import { listNews } from '@/db/queries/news';
 import { mailJpegKey } from '@/db/queries/photos';
 import { listLatestWindows } from '@/db/queries/ready-windows';
@@ -72,7 +73,7 @@ async function withWindows(
   const today = dayOf(nowMs, soundZone((await findShop()).timeZone));
   return told.map((build) => {
     const window = windows.find(({ orderNumber }) => orderNumber === build.orderNumber);
-    return { ...build, readyWords: (window && readyWords(window, today)) ?? undefined };
+    return { ...build, readyWords: (window && readyWords(window, today, reader.locale)) ?? undefined };
   });
 }
 

@@ -1,11 +1,14 @@
 import type { listDigestEntries, MailReader } from '@/db/queries/mail-content';
 import type { DigestBuild } from '@/emails/digest-build';
 import { env } from '@/lib/env';
+import { mailedReading } from '@/lib/readings/mailed-reading';
+import type { ReadingValue, ShownReading } from '@/lib/readings/reading';
 import { excerpt } from '@/lib/rich-text/excerpt';
 import { localDateWords, soundZone } from '@/lib/schedule/digest-times';
 
 const ENTRIES_SHOWN_PER_BUILD = 4;
 const BUILDS_SHOWN = 12;
+const READINGS_SHOWN_PER_ENTRY = 4;
 
 export type DigestEntryRow = Awaited<ReturnType<typeof listDigestEntries>>[number];
 export type Picture = { key: string; contentId: string; alt: string };
@@ -33,6 +36,16 @@ export function digestBuilds(
   });
 }
 
+type TakenReading = { value: ReadingValue; shown: ShownReading | null };
+
+/** What was measured, in the units of who reads it. */
+function readingLines({ readings }: DigestEntryRow, { units }: MailReader): string[] {
+  const taken: TakenReading[] = JSON.parse(readings);
+  const lines = taken.flatMap(({ value, shown }) => (shown ? [mailedReading(value, shown, units)] : []));
+  const more = lines.length - READINGS_SHOWN_PER_ENTRY;
+  return more > 0 ? [...lines.slice(0, READINGS_SHOWN_PER_ENTRY), `and ${more} more in the diary`] : lines;
+}
+
 function buildSection(
   reader: MailReader,
   entries: DigestEntryRow[],
@@ -52,6 +65,7 @@ function buildSection(
         dateWords: localDateWords(entry.datedAt, soundZone(reader.timeZone), reader.locale),
         authorWords: entry.author,
         textExcerpt: excerpt(entry.text, 320),
+        readings: readingLines(entry, reader),
         url: `${url}#entry-${entry.id}`,
         ...(picture ? { photoCid: picture.contentId, photoAlt: picture.alt || undefined } : {}),
       };

@@ -9,14 +9,15 @@ export async function writeDueDigests(owner: string, now: () => number): Promise
   for (let readers = 0; ;) {
     const due = await claimDueReaders(owner, now(), LEASE_MS, READERS_A_TURN);
     if (due.length === 0) return readers;
-    await writeDigests(owner, await gather(due), now());
+    await writeDigests(owner, await gather(due, now()), now());
     readers += due.length;
     await new Promise(setImmediate);
   }
 }
 
-async function gather(due: DueReader[]) {
-  const news = await unscopedUntoldNews(due.map(({ viewer }) => viewer.id));
+async function gather(due: DueReader[], nowMs: number) {
+  const ids = due.map(({ viewer }) => viewer.id);
+  const news = await unscopedUntoldNews(ids, nowMs);
   return Promise.all(
     due.map(async (reader) => {
       const untold = await listUntold(reader);

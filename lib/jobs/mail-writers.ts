@@ -1,4 +1,5 @@
 import type { Writer } from './mail-writer';
+import { writeChangeAsked, writeChangeDeclined } from './write-changes';
 import { writeLetter, writeQuestion } from './write-letter';
 import {
   writeHeldEntry,
@@ -24,6 +25,8 @@ export const mailWriters: Record<Exclude<MailKind, 'digest'>, Writer> = {
   sign_off: writeSignOff,
   sign_off_reminder: writeSignOffReminder,
   sign_off_answered: writeSignOffAnswered,
+  change_asked: writeChangeAsked,
+  change_declined: writeChangeDeclined,
   held_entry: writeHeldEntry,
   quiet_build: writeQuietBuild,
   ready: writeReady,

@@ -12,7 +12,7 @@ export async function previewDigest(viewer: Viewer, nowMs: number): Promise<Prev
   const [reader, cursor, news] = await Promise.all([
     findMailReader(viewer.id),
     findCursor(viewer),
-    unscopedUntoldNews([viewer.id]),
+    unscopedUntoldNews([viewer.id], nowMs),
   ]);
   if (!reader) return null;
   const untold = await listUntold({ viewer, ...cursor });

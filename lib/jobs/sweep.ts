@@ -1,4 +1,5 @@
 import { sweepUnusedDocuments } from '@/db/queries/documents';
+import { dropOldBodies, sweepNews, sweepProviderEvents } from '@/db/queries/mail-sweep';
 import { settleDoomed, sweepUnfinishedPhotos, unscopedDoomedObjects } from '@/db/queries/photos';
 import { purgeExpiredSignIns } from '@/db/queries/sign-in';
 import { deleteObject } from '@/lib/storage';
@@ -18,10 +19,13 @@ export async function deleteDoomedObjects(nowMs: number): Promise<number> {
   return deleted.length;
 }
 
-/** What time has made useless: uploads that never finished, dead links, ended sessions, doomed objects. */
+/** What time has made useless: uploads that never finished, dead links, ended sessions, doomed objects, old mail. */
 export async function sweep(nowMs: number): Promise<void> {
   while ((await sweepUnfinishedPhotos(nowMs)) > 0);
   while ((await sweepUnusedDocuments(nowMs)) > 0);
   await purgeExpiredSignIns(nowMs);
   while ((await deleteDoomedObjects(nowMs)) > 0);
+  while ((await sweepNews(nowMs)) > 0);
+  while ((await sweepProviderEvents(nowMs)) > 0);
+  while ((await dropOldBodies(nowMs)) > 0);
 }

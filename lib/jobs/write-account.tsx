@@ -1,5 +1,6 @@
 import type { Writer } from './mail-writer';
-import { findShop, isLinkLive } from '@/db/queries/mail-content';
+import { isLinkLive } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import * as invitation from '@/emails/invitation';
 import * as signIn from '@/emails/sign-in';
 import { env } from '@/lib/env';

@@ -1,5 +1,6 @@
 import type { Told, Writer } from './mail-writer';
-import { findMailedLetter, findShop } from '@/db/queries/mail-content';
+import { findMailedLetter } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import * as letter from '@/emails/letter';
 import * as questionAsked from '@/emails/question-asked';
 import { env } from '@/lib/env';

@@ -1,6 +1,7 @@
 import { answerable, questionUrl } from './write-letter';
 import type { Told, Writer } from './mail-writer';
-import { findShop, type MailReader } from '@/db/queries/mail-content';
+import type { MailReader } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import { findMailedBuild, findMailedHeldEntry, findMailedQuestion, findMailedWindow } from '@/db/queries/mail-events';
 import { nameInLine } from '@/emails/name';
 import * as notice from '@/emails/notice';

@@ -1,5 +1,5 @@
 import type { Writer } from './mail-writer';
-import { findShop } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import { findMailedSignOff } from '@/db/queries/mail-events';
 import { nameInLine } from '@/emails/name';
 import * as notice from '@/emails/notice';

@@ -9,6 +9,8 @@ export const mailKinds = [
   'sign_off',
   'sign_off_reminder',
   'sign_off_answered',
+  'change_asked',
+  'change_declined',
   'held_entry',
   'quiet_build',
   'ready',
@@ -26,6 +28,8 @@ export type MailAbout = {
   letterId?: string;
   inviterId?: string;
   signOffId?: string;
+  /** A change request. */
+  changeId?: string;
   buildId?: string;
   /** The day of a ready window, yyyy-mm-dd. */
   givenOn?: string;

@@ -1,5 +1,13 @@
 import { isRefused, wrong, type Doubt } from '../craft/doubt';
-import { coatDryFilmUm, doubtCoat, filmBuild, filmWords } from '../craft/film';
+import {
+  coatDryFilmUm,
+  coverageSqFtPerUsGallon,
+  coverageSqMPerLitre,
+  doubtCoat,
+  filmBuild,
+  filmWords,
+  UM_PER_MIL,
+} from '../craft/film';
 import { figure } from '../craft/figure';
 import { readNumberField } from './number-field';
 import type { CoatReading, ShownReading } from './reading';
@@ -79,6 +87,15 @@ export function showCoat(value: CoatReading, before: CoatReading[]): ShownReadin
     standing: null,
     bar: null,
   };
+}
+
+/** How far the product goes at the film of this coat; null where film or solids are not known. Nothing lost in spraying. */
+export function coverageWords(coat: CoatReading): string | null {
+  const [dryUm, solids] = [coatDryFilmUm(coat), coat.volumeSolidsPercent];
+  if (dryUm === null || solids === null || !(dryUm > 0)) return null;
+  const sqM = figure(coverageSqMPerLitre(solids, dryUm), 1);
+  const sqFt = figure(coverageSqFtPerUsGallon(solids, dryUm / UM_PER_MIL), 0);
+  return `At this film a litre covers ${sqM} m², a US gallon ${sqFt} sq ft, with nothing lost.`;
 }
 
 function buildWords(coats: CoatReading[]): string {

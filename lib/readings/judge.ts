@@ -1,3 +1,4 @@
+import { boothTrouble, showBooth } from './booth';
 import { coatTrouble, showCoat } from './coat';
 import { colourTrouble, showColour } from './colour';
 import { lineOfSetup, lineTrouble, showLine, type MeasureLine } from './measure-line';
@@ -18,6 +19,8 @@ export function judgeReading({ value, itemKey }: NewReading, build: BenchBuild):
   switch (value.kind) {
     case 'wood_room':
       return said(woodRoomTrouble(value), () => showWoodRoom(value));
+    case 'booth_air':
+      return said(boothTrouble(value), () => showBooth(value));
     case 'coat':
       return said(coatTrouble(value), () => showCoat(value, build.coats));
     case 'abrasives':

@@ -1,7 +1,9 @@
+import { saddleWords } from '../craft/cents';
 import { wrong } from '../craft/doubt';
 import { add, subtract, valueOf, type Fraction } from '../craft/fractions';
-import { lengthWords, readTolerance, verdict, type Measure, type Quantity } from '../craft/measure';
-import { readMeasure, typedParts } from '../craft/read-measure';
+import { readTolerance, verdict, type Measure, type Quantity } from '../craft/measure';
+import { readMeasure } from '../craft/read-measure';
+import { figuresOf } from '../craft/typed-form';
 import { setupVerdict, type SetupLine } from '../craft/set-up';
 import { inUnit, isLengthUnit } from '../craft/units';
 import { toleranceText } from '../specs/tolerance';
@@ -97,8 +99,13 @@ export function showLine({ name, measured }: MeasureReading, line: MeasureLine |
   }
   const found = verdict(measured, line.aim, line.tolerance);
   if (!found.ok) return { ...plain, words: '', standing: null, bar: null };
-  return { ...plain, words: found.words, standing: found.standing, bar: barOf(measured, line.aim, line.tolerance) };
+  const isOff = found.standing === 'outside' && isIntonation(line);
+  const words = isOff ? `${found.words}: ${saddleWords(found.distanceValue)}` : found.words;
+  return { ...plain, words, standing: found.standing, bar: barOf(measured, line.aim, line.tolerance) };
 }
+
+/** Whether a line tells how far off a string sounds at the 12th fret. */
+export const isIntonation = ({ key, aim }: MeasureLine) => aim.unit === 'cents' && /:intonation_\d+$/.test(key);
 
 function wordsOfAim(measured: Measure, aim: Measure): string {
   const found = verdict(measured, aim, '0');
@@ -118,13 +125,4 @@ function barOf(measured: Measure, aim: Measure, tolerance: string): ShownReading
     value: found.value,
     aim: aimed.value,
   };
-}
-
-/** A measure as it was typed, and a length in the other unit system behind it. */
-export function figuresOf(measure: Measure): string {
-  const typed = typedParts(measure);
-  if (!typed || !isLengthUnit(typed.unit)) return lengthWords(measure, 'in');
-  if (typed.unit === 'mm') return `${lengthWords(measure, 'mm')} (${lengthWords(measure, 'in')})`;
-  const form = typed.isFraction || typed.unit === '64ths' ? 'fraction' : 'in';
-  return `${lengthWords(measure, form)} (${lengthWords(measure, 'mm')})`;
 }

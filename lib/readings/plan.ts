@@ -37,6 +37,8 @@ export type BenchBuild = {
   scaleLengthIn: number;
   /** Coats that are in the diary already, oldest first. */
   coats: CoatReading[];
+  /** When the last of them was put on, in milliseconds since 1970; null before the first. */
+  lastCoatAtMs: number | null;
 };
 
 export type BenchStage = { key: string; work: Work };
@@ -45,11 +47,13 @@ export type BenchStage = { key: string; work: Work };
 export type ReadingPlan = {
   work: Work;
   hasWoodRoom: boolean;
+  hasBooth: boolean;
   hasCoat: boolean;
   hasPapers: boolean;
   colours: ColourLine[] | null;
   lines: MeasureLine[];
   coatsBefore: CoatReading[];
+  lastCoatAtMs: number | null;
 };
 
 /** From this scale on an instrument is set up as a bass. */
@@ -67,16 +71,18 @@ export function planReadings({ key, work }: BenchStage, build: BenchBuild): Read
   return {
     work,
     hasWoodRoom: work === 'wood',
+    hasBooth: work === 'finish',
     hasCoat: work === 'finish',
     hasPapers: work === 'body' || work === 'buffing',
     colours: work === 'finish' ? here.flatMap(colourLine) : null,
     lines: [...ofSpec, ...ofSheet],
     coatsBefore: build.coats,
+    lastCoatAtMs: build.lastCoatAtMs,
   };
 }
 
-export const hasReadings = ({ hasWoodRoom, hasCoat, hasPapers, colours, lines }: ReadingPlan) =>
-  hasWoodRoom || hasCoat || hasPapers || colours !== null || lines.length > 0;
+export const hasReadings = ({ hasWoodRoom, hasBooth, hasCoat, hasPapers, colours, lines }: ReadingPlan) =>
+  hasWoodRoom || hasBooth || hasCoat || hasPapers || colours !== null || lines.length > 0;
 
 /** The line of one item, wherever in the route it is measured; none for an item that is no measure. */
 export function itemLine(item: BenchItem, sheet: readonly SetupLine[] = []): MeasureLine[] {

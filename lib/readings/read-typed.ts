@@ -1,3 +1,4 @@
+import { readBooth } from './booth';
 import { readCoat } from './coat';
 import { readColour } from './colour';
 import { readLine } from './measure-line';
@@ -19,6 +20,7 @@ export type ReadFields = {
 export function readTyped(typed: TypedReadings, plan: ReadingPlan): ReadFields {
   const parts: PartRead[] = [
     plan.hasWoodRoom ? readWoodRoom(typed) : nothingRead,
+    plan.hasBooth ? readBooth(typed) : nothingRead,
     plan.hasCoat ? readCoat(typed, plan.coatsBefore) : nothingRead,
     plan.colours ? readColour(typed, colourChosen(plan.colours, typed)) : nothingRead,
     plan.hasPapers ? readPapers(typed.papers, plan.work) : nothingRead,

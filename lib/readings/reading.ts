@@ -1,12 +1,12 @@
 import type { Measure } from '../craft/measure';
 
+export type Air = { temperatureC: number; relativeHumidityPercent: number };
+
 /** Wood room: air and, where taken, the wood itself. */
-export type WoodRoomReading = {
-  kind: 'wood_room';
-  temperatureC: number;
-  relativeHumidityPercent: number;
-  moisturePercent: number | null;
-};
+export type WoodRoomReading = Air & { kind: 'wood_room'; moisturePercent: number | null };
+
+/** Finish: the air of the spray booth. */
+export type BoothReading = Air & { kind: 'booth_air' };
 
 /** Finish: one coat. Film thickness in micrometres; the dry film is computed from the wet one and the volume solids. */
 export type CoatReading = {
@@ -27,7 +27,8 @@ export type MeasureReading = { kind: 'measure'; name: string; measured: Measure;
 /** Sanding: the papers used, in order. */
 export type AbrasiveReading = { kind: 'abrasives'; grades: string[] };
 
-export type ReadingValue = WoodRoomReading | CoatReading | ColourReading | MeasureReading | AbrasiveReading;
+export type ReadingValue =
+  WoodRoomReading | BoothReading | CoatReading | ColourReading | MeasureReading | AbrasiveReading;
 
 /** A reading as it is taken: `itemKey` names the spec item it measures, null for one that measures none. */
 export type NewReading = { value: ReadingValue; itemKey: string | null };

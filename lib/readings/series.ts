@@ -63,6 +63,3 @@ function coloursOf(readings: TimedReading[]): ReadingSeries['colours'] {
   }
   return [...series.values()];
 }
-
-export const isEmptySeries = ({ moisture, settles, film, colours }: ReadingSeries) =>
-  moisture.length + settles.length + film.length + colours.length === 0;

@@ -1,72 +1,53 @@
-import { isRefused, wrong, type Doubt } from '../craft/doubt';
+import { isRefused } from '../craft/doubt';
 import { figure } from '../craft/figure';
-import {
-  celsiusToFahrenheit,
-  doubtHumidity,
-  doubtMoisture,
-  doubtTemperature,
-  emcPercent,
-  fahrenheitToCelsius,
-  moistureWords,
-} from '../craft/moisture';
+import { doubtMoisture, emcPercent, moistureWords, relativeHumidityFor } from '../craft/moisture';
+import { readMeasure } from '../craft/read-measure';
+import { airTrouble, airWords, readAir } from './air';
+import type { MeasureLine } from './measure-line';
 import { readNumberField } from './number-field';
 import type { ShownReading, WoodRoomReading } from './reading';
 import { fieldDoubts, nothingRead, worstOf, type PartRead, type TypedReadings } from './typed';
-
-/** What a wood room people work in can be; a kiln is none. Sanity, not advice. */
-const ROOM_C = { low: -10, high: 45 };
-
-/** What is odd about a wood room's temperature. Outside what a room can be it is refused, with the other unit named. */
-export function doubtRoomTemperature(temperature: number, unit: 'C' | 'F'): Doubt | null {
-  const doubts = doubtTemperature(temperature, unit);
-  const temperatureC = unit === 'C' ? temperature : fahrenheitToCelsius(temperature);
-  if (isRefused(doubts) || (temperatureC >= ROOM_C.low && temperatureC < ROOM_C.high)) return worstOf(doubts);
-  return wrong(doubts[0]?.sentence ?? `${figure(temperature, 1)} °${unit} cannot be meant for a wood room.`);
-}
 
 type Parts = Pick<TypedReadings, 'temperature' | 'temperatureUnit' | 'humidity' | 'moisture'>;
 
 /** A wood-room reading from its fields; a unit typed behind the temperature wins over the one chosen. */
 export function readWoodRoom(typed: Parts): PartRead {
-  const read = {
-    temperature: readNumberField(typed.temperature, ['°c', '°f', 'c', 'f']),
-    humidity: readNumberField(typed.humidity, ['%']),
-    moisture: readNumberField(typed.moisture, ['%']),
-  };
-  const unit = unitOf(read.temperature.behind) ?? typed.temperatureUnit;
-  const [temperature, humidity, moisture] = [read.temperature.value, read.humidity.value, read.moisture.value];
   if ([typed.temperature, typed.humidity, typed.moisture].every((text) => text.trim() === '')) return nothingRead;
-  const doubts = fieldDoubts({
-    temperature: read.temperature.doubt ?? (temperature === null ? null : doubtRoomTemperature(temperature, unit)),
-    humidity: read.humidity.doubt ?? (humidity === null ? null : worstOf(doubtHumidity(humidity))),
-    moisture: read.moisture.doubt ?? (moisture === null ? null : worstOf(doubtMoisture(moisture))),
-  });
-  const missing = {
-    ...(typed.temperature.trim() === '' && { temperature: 'Write the temperature too: the moisture hangs on both.' }),
-    ...(typed.humidity.trim() === '' && { humidity: 'Write the humidity too: the moisture hangs on both.' }),
-  };
-  if (isRefused(Object.values(doubts)) || temperature === null || humidity === null)
-    return { reading: null, shown: null, doubts, missing };
-  const value: WoodRoomReading = {
-    kind: 'wood_room',
-    temperatureC: rounded(unit === 'C' ? temperature : fahrenheitToCelsius(temperature)),
-    relativeHumidityPercent: humidity,
-    moisturePercent: moisture,
-  };
+  const { air, doubts: ofAir, missing } = readAir(typed, NO_TEMPERATURE, NO_HUMIDITY);
+  const moisture = readNumberField(typed.moisture, ['%']);
+  const odd = moisture.value === null ? null : worstOf(doubtMoisture(moisture.value));
+  const doubts = { ...ofAir, ...fieldDoubts({ moisture: moisture.doubt ?? odd }) };
+  if (isRefused(Object.values(doubts)) || !air) return { reading: null, shown: null, doubts, missing };
+  const value: WoodRoomReading = { kind: 'wood_room', ...air, moisturePercent: moisture.value };
   return { reading: { value, itemKey: null }, shown: showWoodRoom(value), doubts, missing };
 }
 
-const unitOf = (behind: string) => (behind.endsWith('f') ? 'F' : behind.endsWith('c') ? 'C' : null);
-const rounded = (temperatureC: number) => Math.round(temperatureC * 100) / 100;
+const NO_TEMPERATURE = 'Write the temperature too: the moisture hangs on both.';
+const NO_HUMIDITY = 'Write the humidity too: the moisture hangs on both.';
 
 /** Why a wood-room reading cannot be meant, or null. */
 export function woodRoomTrouble(value: WoodRoomReading): string | null {
-  const doubts = [
-    doubtRoomTemperature(value.temperatureC, 'C'),
-    ...doubtHumidity(value.relativeHumidityPercent),
-    ...(value.moisturePercent === null ? [] : doubtMoisture(value.moisturePercent)),
-  ].filter((doubt) => doubt !== null);
-  return doubts.find(({ kind }) => kind === 'wrong')?.sentence ?? null;
+  const odd = value.moisturePercent === null ? [] : doubtMoisture(value.moisturePercent);
+  return airTrouble(value) ?? odd.find(({ kind }) => kind === 'wrong')?.sentence ?? null;
+}
+
+/**
+ * Which air keeps the wood at the moisture it is to have, else at the one it has; null where neither is known, or no air does.
+ */
+export function holdingWords(air: WoodRoomReading, aimedPercent: number | null): string | null {
+  const { temperatureC, moisturePercent } = air;
+  const held = aimedPercent ?? moisturePercent;
+  if (held === null || held <= 0 || held > emcPercent(temperatureC, 100)) return null;
+  const humidity = figure(relativeHumidityFor(held, temperatureC), 0);
+  const wood = aimedPercent === null ? 'stays at' : 'comes to';
+  return `At ${figure(temperatureC, 1)} °C the wood ${wood} ${moistureWords(held)} in air that is kept at ${humidity} % humidity.`;
+}
+
+/** The moisture the spec asks for, in percent, where a line of the stage gives one. */
+export function aimedMoisture(lines: readonly MeasureLine[]): number | null {
+  const line = lines.find(({ aim, label }) => aim.unit === 'percent' && /moisture/i.test(label));
+  const read = line && readMeasure(line.aim.text, line.aim.unit);
+  return read?.ok ? read.value : null;
 }
 
 /** "21 °C (70 °F), 45 %" and where the wood settles in it, beside what the meter says. @throws RangeError as `emcPercent` */
@@ -77,7 +58,7 @@ export function showWoodRoom(value: WoodRoomReading): ShownReading {
   return {
     kind: 'wood_room',
     label: 'Wood room',
-    figures: `${figure(temperatureC, 1)} °C (${figure(celsiusToFahrenheit(temperatureC), 0)} °F), ${figure(relativeHumidityPercent, 1)} %`,
+    figures: airWords(value),
     words: `the wood will settle at ${settles}${measured}`,
     standing: null,
     bar: null,

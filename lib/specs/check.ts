@@ -4,8 +4,12 @@ import { quantityOf } from './known-items';
 import { checkTogether } from './check-together';
 import { toleranceText } from './tolerance';
 
-/** What exists beside the document: the stages of the build's route and the shop's materials, by key. */
-export type SpecSurroundings = { stageKeys: ReadonlySet<string>; materialKeys: ReadonlySet<string> };
+/** What exists beside the document: stages of the build's route and the shop's materials by key, the build's drawings by id. */
+export type SpecSurroundings = {
+  stageKeys: ReadonlySet<string>;
+  materialKeys: ReadonlySet<string>;
+  drawingIds: ReadonlySet<string>;
+};
 
 export const MOST_ITEMS = 200;
 
@@ -44,7 +48,7 @@ export function checkDocument(document: SpecDocument, around: SpecSurroundings):
 function checkContent(item: SpecItem, around: SpecSurroundings): Record<string, string> {
   if (item.kind === 'measure') return checkMeasure(item);
   if (item.kind === 'material') return checkMaterial(item, around);
-  if (item.kind === 'look') return checkLook(item);
+  if (item.kind === 'look') return checkLook(item, around);
   if (item.value.trim() === '') return { value: 'Say what it is to be, or take the item out.' };
   if (item.options.length > 0 && !item.options.includes(item.value))
     return { value: `“${item.value}” is not among its choices. Choose one from the list.` };
@@ -71,8 +75,10 @@ function checkMaterial({ materialKey, words }: MaterialItem, around: SpecSurroun
   return {};
 }
 
-function checkLook({ words, colour }: LookItem): Record<string, string> {
+function checkLook({ words, documentId, colour }: LookItem, around: SpecSurroundings): Record<string, string> {
   const sentences: Record<string, string> = {};
+  if (documentId !== null && !around.drawingIds.has(documentId))
+    sentences.drawing = 'That drawing is not among those sent up for this build. Choose one from the list, or none.';
   if (words.trim() === '') sentences.words = 'Say what it is to look like, such as “your sample 2”.';
   if (!colour) return sentences;
   const { l, a, b, limitDeltaE } = colour;

@@ -1,6 +1,7 @@
 import type { ShownUnit } from '../craft/measure';
 import { isSame } from './canonical';
 import type { SpecDocument, SpecGroup, SpecItem } from './document';
+import { drawingWords, type Drawing } from './drawings';
 import { groupName } from './groups';
 import { allowedWords, itemWords, type MaterialNames } from './item-words';
 
@@ -15,7 +16,13 @@ export type SpecChange = {
   fields: FieldChange[];
 };
 
-export type DiffWords = { show: ShownUnit; materials: MaterialNames; stageNames: Readonly<Record<string, string>> };
+export type DiffWords = {
+  show: ShownUnit;
+  materials: MaterialNames;
+  stageNames: Readonly<Record<string, string>>;
+  /** Those that the reader may open. */
+  drawings: readonly Drawing[];
+};
 
 /** What the second version says differently from the first, item by item in its order; another order is no change. */
 export function diffSpecs(before: SpecDocument, after: SpecDocument, words: DiffWords): SpecChange[] {
@@ -34,7 +41,7 @@ function changeOf(before: SpecItem | undefined, after: SpecItem | undefined, wor
   const [one, other] = [fieldsOf(before, words), fieldsOf(after, words)];
   const fields = fieldNames
     .map((name) => ({ name, before: one[name] ?? null, after: other[name] ?? null }))
-    .filter((field) => field.before !== field.after);
+    .filter(({ name, before: was, after: is }) => was !== is || (name === 'drawing' && isOtherDrawing(before, after)));
   return { key, group, label, kind, fields };
 }
 
@@ -51,14 +58,14 @@ const fieldNames = [
 ] as const;
 type Fields = Partial<Record<(typeof fieldNames)[number], string | null>>;
 
-function fieldsOf(item: SpecItem | undefined, { show, materials, stageNames }: DiffWords): Fields {
+function fieldsOf(item: SpecItem | undefined, { show, materials, stageNames, drawings }: DiffWords): Fields {
   if (!item) return {};
   const stage = (key: string | null) => (key === null ? null : (stageNames[key] ?? key));
   return {
     value: exactWords(item, show, materials),
     tolerance: item.kind === 'measure' ? allowedWords(item) : null,
     colour: colourWords(item),
-    drawing: item.kind === 'look' ? item.documentId : null,
+    drawing: drawingWords(item, drawings),
     choices: item.kind === 'choice' && item.options.length > 0 ? item.options.join(', ') : null,
     name: item.label,
     group: groupName(item.group),
@@ -66,6 +73,12 @@ function fieldsOf(item: SpecItem | undefined, { show, materials, stageNames }: D
     'proven at': stage(item.provenAt),
   };
 }
+
+/** Two drawings that the reader may not open are called alike, and differ all the same. */
+const isOtherDrawing = (before: SpecItem | undefined, after: SpecItem | undefined) =>
+  drawingIdOf(before) !== drawingIdOf(after);
+
+const drawingIdOf = (item: SpecItem | undefined) => (item?.kind === 'look' ? item.documentId : null);
 
 /** As typed as well, where two different measures would read alike in the reader's unit. */
 function exactWords(item: SpecItem, show: ShownUnit, materials: MaterialNames): string {

@@ -1,9 +1,10 @@
 import type { LookItem, MeasureItem, SpecDocument, SpecItem } from './document';
 import { allowedWords, type MaterialNames } from './item-words';
-import { measureWords, signedWords } from './signed-words';
+import { signedWords } from './signed-words';
 import { toleranceText } from './tolerance';
 import { colourVerdict, MixedIlluminants } from '@/lib/craft/colour-difference';
 import { verdict, type Measure } from '@/lib/craft/measure';
+import { asTyped } from '@/lib/craft/typed-form';
 import type { ColourReading, ReadingValue } from '@/lib/readings/reading';
 
 /** An entry of the diary that shows an item, with one of its photos. */
@@ -119,7 +120,7 @@ function judge(item: SpecItem, taken: TakenReading[], isShown: boolean): Found {
 }
 
 function judgeMeasure(item: MeasureItem, measured: Measure | null, isShown: boolean): Found {
-  const words = measured && measureWords(measured);
+  const words = measured && asTyped(measured);
   if (!item.tolerance) return { state: isShown ? 'proven' : 'open', measured: words, withinWords: null };
   if (!measured) return { state: 'open', measured: null, withinWords: allowedWords(item) };
   const found = verdict(measured, item.aim, toleranceText(item.tolerance));

@@ -1,16 +1,13 @@
 import type { SpecItem } from './document';
 import { itemWords, type MaterialNames } from './item-words';
-import { lengthWords, type Measure, type ShownUnit } from '@/lib/craft/measure';
+import { asTyped, figuresOf } from '@/lib/craft/typed-form';
 
-/** The form a measure was typed in: what is signed is shown as it was written, whatever the reader's units. */
-function ownForm({ text, unit }: Measure): ShownUnit {
-  if (unit === 'mm') return 'mm';
-  return text.includes('/') ? 'fraction' : 'in';
+/** The value of an item as its owner signed it: `27 in`, `4/64 in`, `Ebony, one piece`. */
+export function signedWords(item: SpecItem, materials: MaterialNames): string {
+  return item.kind === 'measure' ? asTyped(item.aim) : itemWords(item, 'in', materials);
 }
 
-export const measureWords = (measure: Measure) => lengthWords(measure, ownForm(measure));
-
-/** The value of an item as its owner signed it: `27 in`, `Ebony, one piece`. */
-export function signedWords(item: SpecItem, materials: MaterialNames): string {
-  return itemWords(item, item.kind === 'measure' ? ownForm(item.aim) : 'in', materials);
+/** The same with a length in the other unit system behind it: `27 in (685.8 mm)`. */
+export function signedFigures(item: SpecItem, materials: MaterialNames): string {
+  return item.kind === 'measure' ? figuresOf(item.aim) : itemWords(item, 'in', materials);
 }

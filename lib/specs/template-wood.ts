@@ -8,6 +8,7 @@ export const woodItems: SpecItem[] = [
     material('top_wood', 'Top', ['bigleaf_maple', 'figured, bookmatched'], ['blanks', 'blanks']),
     measure('top_thickness', 'Thickness of the top', ['5/16', 'in', '1/32'], ['blanks', 'blanks']),
     choice('body_shape', 'Outline', ['house outline', 'house outline, deep cutaways'], ['machining', 'machining']),
+    measure('body_width', 'Body width at the lower bout', ['12.75', 'in', '0.060'], ['machining', 'machining']),
     measure('body_thickness', 'Body thickness', ['1.750', 'in', '0.030'], ['machining', 'machining']),
     choice('body_edge', 'Edge', ['1/8 in round-over', 'belly and arm carve', 'bound'], ['machining', 'body-joint']),
     choice('neck_joint', 'Neck joint', ['set, long tenon', 'bolted, four screws'], ['machining', 'body-joint']),

@@ -42,6 +42,7 @@ const multiscaleSeven = varied(sixString, {
 const hollow = varied(sixString, {
   instead: [
     measure('scale_length', 'Scale length', ['25', 'in', '0.005'], cut),
+    measure('body_width', 'Body width at the lower bout', ['15.75', 'in', '0.060'], cut),
     measure('body_thickness', 'Body thickness at the rim', ['2.250', 'in', '0.040'], cut),
     choice('body_edge', 'Edge', ['bound', '1/8 in round-over'], ['machining', 'body-joint']),
     choice('bridge', 'Bridge', ['wooden, on two posts', 'fixed, stop bar'], ['machining', 'hardware-setup']),
@@ -57,6 +58,7 @@ const hollow = varied(sixString, {
 
 const bass = varied(sixString, {
   instead: [
+    measure('body_width', 'Body width at the lower bout', ['13.25', 'in', '0.060'], cut),
     measure('scale_length', 'Scale length', ['34', 'in', '0.005'], cut),
     measure('fret_count', 'Frets', ['24', 'count'], ['machining', 'frets']),
     measure('nut_width', 'Nut width', ['1.500', 'in', '0.010'], ['machining', 'neck-board']),

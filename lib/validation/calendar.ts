@@ -3,43 +3,25 @@ import { idField } from './people';
 import { cleanLine } from '@/lib/rich-text/names';
 import { isDate } from '@/lib/schedule/days';
 import { isZone } from '@/lib/schedule/digest-times';
+import { minutesOf, readDay, stretches, weekdayNumbers, type Hours } from '@/lib/schedule/week-form';
 
-export const weekdayNumbers = [1, 2, 3, 4, 5, 6, 7] as const;
-
-const CLOCK = /^([01]\d|2[0-3]):([0-5]\d)$/;
-
-/** "07:30" as minutes after midnight; NaN for anything else. */
-function minutesOf(clock: string): number {
-  const [, hour, minute] = CLOCK.exec(clock) ?? [];
-  return hour === undefined ? NaN : Number(hour) * 60 + Number(minute);
-}
-
+const clockField = z.string().max(8).default('');
 const times = Object.fromEntries(
-  weekdayNumbers.flatMap((day) => [
-    [`opens${day}`, z.string().max(8).default('')],
-    [`closes${day}`, z.string().max(8).default('')],
-  ]),
+  weekdayNumbers.flatMap((day) =>
+    stretches.flatMap(({ opens, closes }) => [
+      [`${opens}${day}`, clockField],
+      [`${closes}${day}`, clockField],
+    ]),
+  ),
 );
-
-export type Hours = { weekday: number; opensAtMin: number; closesAtMin: number };
-
-function hoursOf(day: number, opens: string, closes: string): Hours | string | null {
-  if (opens === '' && closes === '') return null;
-  const [opensAtMin, closesAtMin] = [minutesOf(opens), minutesOf(closes)];
-  if (Number.isNaN(opensAtMin) || Number.isNaN(closesAtMin))
-    return 'Enter both times, such as 07:30 and 16:00, or neither.';
-  if (opensAtMin >= closesAtMin) return 'The shop must open before it closes.';
-  return { weekday: day, opensAtMin, closesAtMin };
-}
 
 /** The week as the form sends it: a day with no times is a day off. */
 export const hoursForm = z.object(times).transform((typed, context): Hours[] => {
-  const week = weekdayNumbers.flatMap((day) => {
-    const found = hoursOf(day, typed[`opens${day}`] ?? '', typed[`closes${day}`] ?? '');
-    if (typeof found === 'string') context.addIssue({ code: 'custom', path: [`opens${day}`], message: found });
-    return found === null || typeof found === 'string' ? [] : [found];
-  });
-  if (week.length === 0 && context.issues.length === 0)
+  const days = weekdayNumbers.map((day) => readDay(day, typed));
+  const problems = days.flatMap(({ problem }) => problem ?? []);
+  for (const { field, message } of problems) context.addIssue({ code: 'custom', path: [field], message });
+  const week = days.flatMap(({ hours }) => hours);
+  if (week.length === 0 && problems.length === 0)
     context.addIssue({ code: 'custom', path: ['opens1'], message: 'Enter at least one day of the week.' });
   return week;
 });

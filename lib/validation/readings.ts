@@ -22,6 +22,7 @@ const readingValue = z.discriminatedUnion('kind', [
     relativeHumidityPercent: finite,
     moisturePercent: orNothing,
   }),
+  z.strictObject({ kind: z.literal('booth_air'), temperatureC: finite, relativeHumidityPercent: finite }),
   z.strictObject({
     kind: z.literal('coat'),
     product: nameField.refine((text) => text !== '', 'Write what was put on, as its can is labelled.'),

@@ -18,24 +18,20 @@ import {
   saveShopZone,
   saveStage,
 } from '@/db/queries/shop-calendar';
+import { listUnreachableOwners } from '@/db/queries/contacts';
 import { findStageWords } from '@/db/queries/stage-words';
 import { editEntry, postEntry, releaseEntry, requireEditableEntry, withdrawEntry } from '@/db/queries/entries';
-import { listMailProblems } from '@/db/queries/mail-watch';
-import {
-  addCompanion,
-  assignStaff,
-  holdBuild,
-  invitePerson,
-  listPeople,
-  removeCompanion,
-  stepIn,
-} from '@/db/queries/people';
+import { listMails } from '@/db/queries/mail-watch';
+import { assignStaff, stepIn } from '@/db/queries/assignments';
+import { addCompanion, removeCompanion } from '@/db/queries/companions';
+import { holdBuild } from '@/db/queries/holds';
+import { invitePerson, listPeople } from '@/db/queries/people';
 import { grantPhoto } from '@/db/queries/photos';
 import { askForChange, signSignOff, withdrawSignOff } from '@/db/queries/sign-off-answers';
 import { listBuildSignOffs, requireSignOff } from '@/db/queries/sign-offs';
-import { grantDocument, requireDocumentFile } from '@/db/queries/documents';
+import { grantDocument, listDrawings, requireDocumentFile } from '@/db/queries/documents';
 import { listBuildQuestions } from '@/db/queries/question-lists';
-import { findBench, findSpecForBench, listBoards, listReadings } from '@/db/queries/readings';
+import { findBench, listBoards, listReadings } from '@/db/queries/readings';
 import { saveAway } from '@/db/queries/away';
 import { listMargin, writeMargin } from '@/db/queries/margin';
 import { listPenPasses, passPen } from '@/db/queries/pen';
@@ -139,14 +135,14 @@ const doors: { name: string; by: string; open: Open }[] = [
     open: (v, { build }) => listReadings(v, build.orderNumber),
   },
   {
-    name: 'reads the spec as the bench measures it',
-    by: 'owner, builder, rep, admin',
-    open: (v, { build }) => findSpecForBench(v, build.orderNumber),
-  },
-  {
     name: 'reads how its boards move',
     by: 'owner, builder, rep, admin',
     open: (v, { build }) => listBoards(v, build.orderNumber),
+  },
+  {
+    name: 'is told of an owner whom mail does not reach',
+    by: 'rep, admin',
+    open: (v, { build }) => listUnreachableOwners(v, build.orderNumber),
   },
   { name: 'opens the bench', by: staff, open: (v, { build }) => findBench(v, build.orderNumber) },
   {
@@ -342,6 +338,11 @@ const doors: { name: string; by: string; open: Open }[] = [
     by: 'owner, builder, rep, admin',
     open: (v, { build }) => listChangeRequests(v, build.orderNumber),
   },
+  {
+    name: 'lists the drawings of the build',
+    by: 'owner, builder, rep, admin',
+    open: (v, { build }) => listDrawings(v, build.orderNumber),
+  },
   { name: 'reads the draft of the spec', by: staff, open: (v, { build }) => findDraft(v, build.orderNumber) },
   {
     name: 'starts a spec',
@@ -420,7 +421,7 @@ const doors: { name: string; by: string; open: Open }[] = [
   { name: 'lists people', by: 'admin', open: (v) => listPeople(v, '') },
   { name: 'lists builds by number', by: 'admin', open: (v) => listBuildsByNumber(v, '') },
   { name: 'reads the audit log', by: 'admin', open: (v) => listAuditEvents(v, 1) },
-  { name: 'watches the mail', by: 'admin', open: (v) => listMailProblems(v) },
+  { name: 'watches the mail', by: 'admin', open: (v) => listMails(v, 'trouble') },
   {
     name: 'steps in',
     by: 'admin',

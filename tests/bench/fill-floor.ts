@@ -44,6 +44,14 @@ const progressStatements = (nowMs: number) => [
       from builds b join build_stages s on s.build_id = b.id and s.position = 0 where b.delivered_at is null`,
 ];
 
+/** The owner of every eighth build on the floor waits for an answer, of staff-0 to staff-11 in turn. */
+const questionStatements = (nowMs: number) => [
+  sql`insert into topics (id, name, position, answered_by, department) values ('neck', 'Wood & neck', 1, 'department', 'neck')`,
+  sql`insert into questions (id, build_id, topic_id, asked_by_id, subject, pen_holder_id, state, due_at, idempotency_key, last_letter_at, created_at)
+      select ${newId}, b.id, 'neck', p.user_id, 'Which fret wire?', 'staff-' || (b.rowid % 12), 'waiting', ${nowMs + DAY_MS}, b.id, ${nowMs}, ${nowMs}
+      from builds b join build_people p on p.build_id = b.id where b.delivered_at is null and b.rowid % 8 = 0`,
+];
+
 /** A database file with five hundred builds on the floor, at all stages, and the history of those before them. */
 export async function fillFloor(file: string, _builds: number, nowMs: number): Promise<void> {
   const database = new Database(`file:${file}`);
@@ -55,6 +63,7 @@ export async function fillFloor(file: string, _builds: number, nowMs: number): P
       ...peopleStatements(ON_FLOOR + DELIVERED, nowMs),
       ...buildStatements(ON_FLOOR + DELIVERED, nowMs),
       ...progressStatements(nowMs),
+      ...questionStatements(nowMs),
       sessionsStatement(ON_FLOOR + DELIVERED, nowMs),
     ];
     for (const statement of statements) await tx.run(statement);

@@ -79,6 +79,16 @@ for (const [device, viewport] of [
   });
 }
 
+test('a build whose owner has asked something says who owes the answer', async ({ browser }) => {
+  const context = await browser.newContext({ viewport: { width: 390, height: 844 } });
+  const page = await openFloor(context, '?find=Q-10007');
+  const row = rows(page).filter({ hasText: 'Q-10007' });
+  await expect(row).toContainText('waits on Bench hand 8');
+  await page.getByRole('button', { name: 'Move Q-10007' }).click();
+  await expect(page.getByRole('dialog')).toContainText('Owner 7 waits for Bench hand 8’s answer on “Which fret wire?”');
+  await context.close();
+});
+
 test('a whole rack moves at once, and its list is there to print', async ({ browser }) => {
   const context = await browser.newContext({ viewport: { width: 1360, height: 900 } });
   const page = await openFloor(context, '?rack=rack+7');

@@ -1,14 +1,16 @@
 import { eq } from 'drizzle-orm';
-import { beforeEach, expect, test } from 'vitest';
+import { beforeEach, describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
 import { floorAnswer, listRack } from '@/db/queries/floor';
 import { moveBuilds, undoMoves } from '@/db/queries/floor-moves';
+import { passPen } from '@/db/queries/pen';
 import { builds, buildStages, signOffs, standingAssignments } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { OutOfReach } from '@/lib/errors';
 import type { Floor } from '@/lib/floor/row';
 import type { Viewer } from '@/lib/viewer';
 import { openTestDatabase } from '../support/database';
+import { askOn, openThread, rowOf, writeOn } from '../support/question-world';
 import { DAY_MS, makeBuild, makeEntry, makePerson, NOW_MS, openShop, type TestBuild } from '../support/world';
 
 await openTestDatabase();
@@ -73,6 +75,59 @@ test('an admin reads of every build its number, and of none anything else', asyn
   const floor = await floorOf(await makePerson('admin'));
   expect(floor.rows).toEqual([]);
   expect(floor.numbersOnly).toEqual(expect.arrayContaining([mine.orderNumber, theirs.orderNumber]));
+});
+
+describe('a question that waits for the shop', () => {
+  let rep: Viewer;
+  let asked: Awaited<ReturnType<typeof openThread>>;
+
+  beforeEach(async () => {
+    asked = await openThread();
+    ({ rep } = asked);
+  });
+  const waitsFor = async (viewer: Viewer, nowMs?: number) => (await floorOf(viewer, nowMs)).rows[0]?.waits;
+
+  test('says who waits for whom, to its holder that it is them, and is gone with the answer', async () => {
+    const { id } = await askOn(asked.build, asked.owner);
+    expect(await waitsFor(asked.builder)).toEqual([
+      { on: 'you', words: expect.stringMatching(/^Maren Oyelaran waits for your answer on “Fret wire”, due /) },
+    ]);
+    expect(await waitsFor(rep)).toEqual([
+      { on: 'Bo Lindgren', words: expect.stringMatching(/^Maren Oyelaran waits for Bo Lindgren’s answer/) },
+    ]);
+    await writeOn(asked.builder, id);
+    expect(await waitsFor(rep)).toEqual([]);
+  });
+
+  test('about money shows to the rep and to no builder', async () => {
+    await askOn(asked.build, asked.owner, { topicId: 'money' });
+    expect(await waitsFor(rep)).toHaveLength(1);
+    expect([await waitsFor(asked.builder), await waitsFor(asked.painter)]).toEqual([[], []]);
+  });
+
+  test('of a held build shows to nobody who is not cleared for it', async () => {
+    const secret = await openThread({ heldUntilAt: HELD_UNTIL });
+    await askOn(secret.build, secret.owner);
+    expect((await floorAnswer(secret.builder, null, NOW_MS)).text).not.toContain('Fret wire');
+    expect(await waitsFor(secret.rep)).toHaveLength(1);
+  });
+
+  test('changes the mark when it is asked, when the pen passes, when it falls due and when it is answered', async () => {
+    const mark = async (nowMs = NOW_MS) => (await floorAnswer(rep, null, nowMs)).etag;
+    const marks = [await mark()];
+    const { id } = await askOn(asked.build, asked.owner);
+    marks.push(await mark());
+    await passPen(rep, id, { toId: asked.painter.id, reason: 'She laid the wire.' }, NOW_MS);
+    marks.push(await mark());
+    const { dueAt } = await rowOf(id);
+    await write((tx) => tx.run(`update questions set due_at = ${NOW_MS - 1} where id = '${id}'`));
+    marks.push(await mark());
+    expect(dueAt).toBeGreaterThan(NOW_MS);
+    await writeOn(asked.painter, id);
+    marks.push(await mark());
+    expect(new Set(marks.slice(0, 4)).size).toBe(4);
+    expect(marks[4]).toBe(marks[0]);
+  });
 });
 
 test('clients have no floor', async () => {

@@ -4,6 +4,9 @@ import { db, write } from '@/db/client';
 import { listStandingsOf, requirePersonPage, reviewBuild, listAssignmentsOf } from '@/db/queries/access-review';
 import { findBrokenLink, listAccessEvents } from '@/db/queries/audit';
 import { listBuilds, listClients, listStaff, requireBuild } from '@/db/queries/builds';
+import { assignStaff, stepIn } from '@/db/queries/assignments';
+import { addCompanion, removeCompanion } from '@/db/queries/companions';
+import { holdBuild } from '@/db/queries/holds';
 import * as people from '@/db/queries/people';
 import { findSessionViewer } from '@/db/queries/sessions';
 import { outbox, standingAssignments, users } from '@/db/schema';
@@ -107,7 +110,7 @@ describe('assigning', () => {
     const [first, last] = [await makeBuild(), await makeBuild()];
     const orderNumbers = [first.orderNumber, 'Q-0', last.orderNumber];
     const wish = { userId: builder.id, orderNumbers, cleared: false };
-    expect((await sentenceOf(people.assignStaff(admin, wish, NOW_MS))).orderNumbers).toContain('Q-0');
+    expect((await sentenceOf(assignStaff(admin, wish, NOW_MS))).orderNumbers).toContain('Q-0');
     expect(await numbersOf(builder)).toEqual([]);
   });
 
@@ -116,7 +119,7 @@ describe('assigning', () => {
     const builder = await makePerson('builder');
     const build = await makeBuild();
     const wish = { userId: buyer.id, orderNumbers: [build.orderNumber], cleared: false };
-    expect(await sentenceOf(people.assignStaff(admin, wish, NOW_MS))).toHaveProperty('userId');
+    expect(await sentenceOf(assignStaff(admin, wish, NOW_MS))).toHaveProperty('userId');
     for (const [userId, role] of [
       [buyer.id, 'rep'],
       [builder.id, 'artist'],
@@ -132,8 +135,8 @@ describe('assigning', () => {
     const build = await makeBuild({ staff: [{ person: builder }], heldUntilAt: NEXT_YEAR_MS });
     expect(await numbersOf(builder)).toEqual([]);
     const wish = { userId: builder.id, orderNumbers: [build.orderNumber], cleared: true };
-    expect(await people.assignStaff(admin, wish, NOW_MS)).toBe(1);
-    expect(await people.assignStaff(admin, wish, NOW_MS)).toBe(0);
+    expect(await assignStaff(admin, wish, NOW_MS)).toBe(1);
+    expect(await assignStaff(admin, wish, NOW_MS)).toBe(0);
     expect(await numbersOf(builder)).toEqual([build.orderNumber]);
   });
 
@@ -151,7 +154,7 @@ describe('stepping in', () => {
     const build = await makeBuild({ owner });
     await expect(requireBuild(admin, build.orderNumber)).rejects.toThrow(OutOfReach);
     const reason = 'The rep is away and the owner has asked twice.';
-    await people.stepIn(admin, { orderNumber: build.orderNumber, reason }, NOW_MS);
+    await stepIn(admin, { orderNumber: build.orderNumber, reason }, NOW_MS);
     expect(await requireBuild(admin, build.orderNumber)).toMatchObject({ standing: 'assigned' });
     const events = await listAccessEvents(owner, build.orderNumber);
     expect(events).toEqual([
@@ -163,7 +166,7 @@ describe('stepping in', () => {
     const build = await makeBuild();
     for (const role of ['rep', 'builder', 'buyer', 'artist'] as const) {
       const step = { orderNumber: build.orderNumber, reason: 'I would like to see it.' };
-      await expect(people.stepIn(await makePerson(role), step, NOW_MS)).rejects.toThrow(OutOfReach);
+      await expect(stepIn(await makePerson(role), step, NOW_MS)).rejects.toThrow(OutOfReach);
     }
   });
 });
@@ -175,17 +178,17 @@ describe('companions', () => {
     const owner = await makePerson('buyer');
     const build = await makeBuild({ owner });
     const friend = await makePerson('buyer');
-    await people.addCompanion(owner, build.orderNumber, friend, NOW_MS);
+    await addCompanion(owner, build.orderNumber, friend, NOW_MS);
     expect(await numbersOf(friend)).toEqual([build.orderNumber]);
     expect(await listClients(friend, build.orderNumber)).toEqual([]);
-    await people.removeCompanion(owner, build.orderNumber, friend.id, NOW_MS);
+    await removeCompanion(owner, build.orderNumber, friend.id, NOW_MS);
     expect(await numbersOf(friend)).toEqual([]);
   });
 
   test('cannot be added while the build is held', async () => {
     const owner = await makePerson('artist');
     const build = await makeBuild({ owner, heldUntilAt: NEXT_YEAR_MS });
-    expect(await sentenceOf(people.addCompanion(owner, build.orderNumber, companion, NOW_MS))).toHaveProperty('email');
+    expect(await sentenceOf(addCompanion(owner, build.orderNumber, companion, NOW_MS))).toHaveProperty('email');
     expect(await listClients(owner, build.orderNumber)).toHaveLength(1);
   });
 
@@ -195,9 +198,9 @@ describe('companions', () => {
     const rep = await makePerson('rep');
     const build = await makeBuild({ owner, companions: [friend], staff: [{ person: rep }] });
     for (const viewer of [friend, rep])
-      await expect(people.addCompanion(viewer, build.orderNumber, companion, NOW_MS)).rejects.toThrow(Denied);
+      await expect(addCompanion(viewer, build.orderNumber, companion, NOW_MS)).rejects.toThrow(Denied);
     for (const person of [rep, owner])
-      expect(await sentenceOf(people.addCompanion(owner, build.orderNumber, person, NOW_MS))).toHaveProperty('email');
+      expect(await sentenceOf(addCompanion(owner, build.orderNumber, person, NOW_MS))).toHaveProperty('email');
   });
 
   test('cannot take the owner, or anybody of another build, off', async () => {
@@ -206,7 +209,7 @@ describe('companions', () => {
     const build = await makeBuild({ owner });
     await makeBuild({ owner: await makePerson('buyer'), companions: [stranger] });
     for (const { id } of [owner, stranger])
-      await expect(people.removeCompanion(owner, build.orderNumber, id, NOW_MS)).rejects.toThrow(OutOfReach);
+      await expect(removeCompanion(owner, build.orderNumber, id, NOW_MS)).rejects.toThrow(OutOfReach);
   });
 });
 
@@ -215,7 +218,7 @@ describe('holding from view', () => {
     const [owner, friend] = [await makePerson('artist'), await makePerson('buyer')];
     const [rep, builder] = [await makePerson('rep'), await makePerson('builder')];
     const build = await makeBuild({ owner, companions: [friend], staff: [{ person: rep }, { person: builder }] });
-    await people.holdBuild(rep, build.orderNumber, NEXT_YEAR_MS, NOW_MS);
+    await holdBuild(rep, build.orderNumber, NEXT_YEAR_MS, NOW_MS);
     expect(await numbersOf(friend)).toEqual([]);
     expect(await numbersOf(builder)).toEqual([]);
     expect(await numbersOf(owner)).toEqual([build.orderNumber]);
@@ -226,8 +229,8 @@ describe('holding from view', () => {
     const rep = await makePerson('rep');
     const build = await makeBuild();
     await write((tx) => tx.insert(standingAssignments).values({ userId: rep.id, startedAt: NOW_MS }));
-    await people.holdBuild(rep, build.orderNumber, NEXT_YEAR_MS, NOW_MS);
-    await people.holdBuild(rep, build.orderNumber, null, NOW_MS);
+    await holdBuild(rep, build.orderNumber, NEXT_YEAR_MS, NOW_MS);
+    await holdBuild(rep, build.orderNumber, null, NOW_MS);
     expect(await requireBuild(rep, build.orderNumber)).toMatchObject({ heldUntilAt: null });
   });
 });

@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { db } from '@/db/client';
-import { endAssignment } from '@/db/queries/people';
+import { endAssignment } from '@/db/queries/assignments';
 import {
   discardPhoto,
   GRANT_MS,

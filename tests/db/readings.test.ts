@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
 import { diaryAnswer, diaryPage, diaryState } from '@/db/queries/diary';
 import { postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
-import { findBench, findSpecForBench, listBoards, listReadings } from '@/db/queries/readings';
+import { findBench, listBoards, listReadings } from '@/db/queries/readings';
 import { entries, materials, proofs, readings, signOffs, specVersions } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { materialRows } from '@/lib/craft/materials';
@@ -166,7 +166,6 @@ describe('readings are read by who reads their entry', () => {
 
   test('a companion reads them and not the spec behind them', async () => {
     const { companion, build } = await openBench();
-    await expect(findSpecForBench(companion, build.orderNumber)).rejects.toBeInstanceOf(Denied);
     await expect(listBoards(companion, build.orderNumber)).rejects.toBeInstanceOf(Denied);
     await expect(findBench(companion, build.orderNumber)).rejects.toBeInstanceOf(Denied);
   });
@@ -177,7 +176,7 @@ describe('what the bench measures against', () => {
     const { builder, rep, build } = await openBench();
     const wider = smallSpec(measureItem({ aim: { text: '1.750', unit: 'in' } }));
     await sendSpec(build, rep, 2, wider, false);
-    const aim = async () => (await findSpecForBench(builder, build.orderNumber))[0]?.aim?.text;
+    const aim = async () => (await findBench(builder, build.orderNumber)).items[0]?.aim?.text;
     expect(await aim()).toBe('1.700');
     await sendSpec(build, rep, 3, wider, true);
     expect(await aim()).toBe('1.750');
@@ -187,9 +186,9 @@ describe('what the bench measures against', () => {
     const builder = await makePerson('builder');
     const rep = await makePerson('rep');
     const build = await makeBuild({ staff: [{ person: builder }, { person: rep }] });
-    expect(await findSpecForBench(builder, build.orderNumber)).toEqual([]);
+    expect((await findBench(builder, build.orderNumber)).items).toEqual([]);
     await sendSpec(build, rep, 1, smallSpec(), false);
-    expect(await findSpecForBench(builder, build.orderNumber)).toHaveLength(2);
+    expect((await findBench(builder, build.orderNumber)).items).toHaveLength(2);
   });
 
   test('counts the coats that are in the diary, a withdrawn one not', async () => {

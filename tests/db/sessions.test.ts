@@ -2,14 +2,10 @@ import { eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { db } from '@/db/client';
 import { requireBuild } from '@/db/queries/builds';
-import {
-  closePerson,
-  endAssignment,
-  endSessionsOf,
-  holdBuild,
-  removeCompanion,
-  reopenPerson,
-} from '@/db/queries/people';
+import { endAssignment } from '@/db/queries/assignments';
+import { removeCompanion } from '@/db/queries/companions';
+import { holdBuild } from '@/db/queries/holds';
+import { closePerson, endSessionsOf, reopenPerson } from '@/db/queries/people';
 import {
   endOtherSessions,
   endSession,

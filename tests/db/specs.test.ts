@@ -2,6 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { eq } from 'drizzle-orm';
 import { db, write } from '@/db/client';
 import { requestChange, declineChange, listChangeRequests, offerChange } from '@/db/queries/change-requests';
+import { listDrawings } from '@/db/queries/documents';
 import { findDraft, saveDraft, startDraft } from '@/db/queries/spec-drafts';
 import { requireFreezeGround } from '@/db/queries/spec-freeze';
 import { findVersion, listVersions, requireComparison, sendVersion } from '@/db/queries/spec-versions';
@@ -11,7 +12,8 @@ import { contentHashOf } from '@/lib/specs/content-hash';
 import type { SpecDocument } from '@/lib/specs/document';
 import type { Viewer } from '@/lib/viewer';
 import { openTestDatabase } from '../support/database';
-import { choiceItem, measureItem, smallSpec } from '../support/spec';
+import { choiceItem, lookItem, measureItem, smallSpec } from '../support/spec';
+import { askDrawing, makeDocument } from '../support/sign-off-world';
 import { DAY_MS, makeBuild, makePerson, NOW_MS, openShop, type TestBuild } from '../support/world';
 
 await openTestDatabase();
@@ -88,6 +90,16 @@ describe('a draft', () => {
       'items.nut_width.tolerance',
     ]);
     expect(await findDraft(builder, build.orderNumber)).toMatchObject({ document: smallSpec(), revision: 1 });
+  });
+
+  test('points to a drawing of its own build only', async () => {
+    const [{ rep, build }, other] = [await openScene(), await openScene()];
+    const pointing = (documentId: string) => smallSpec(measureItem(), lookItem({ documentId }));
+    const foreign = pointing(await makeDocument(other.build, other.rep));
+    expect(Object.keys(await sentencesOf(save(rep, build, foreign, 1)))).toEqual(['items.headstock_logo.drawing']);
+    const own = pointing(await makeDocument(build, rep));
+    expect(await save(rep, build, own, 1)).toBe(2);
+    expect((await findDraft(rep, build.orderNumber))?.document).toEqual(own);
   });
 
   test('is the shop’s own: its owner sees none of it', async () => {
@@ -251,4 +263,15 @@ describe('a change request', () => {
 test('drafts are one a build', async () => {
   const { build } = await openScene();
   expect(await db().select().from(specDrafts).where(eq(specDrafts.buildId, build.id))).toHaveLength(1);
+});
+
+test('an owner opens the drawings that were put before them, the shop all of its build', async () => {
+  const { owner, companion, builder, rep, build } = await openScene();
+  const kept = await makeDocument(build, rep, 'Still ours');
+  const asked = await makeDocument(build, rep, 'For the owner');
+  await askDrawing(build, rep, { documentId: asked });
+  const idsFor = async (viewer: Viewer) => (await listDrawings(viewer, build.orderNumber)).map(({ id }) => id);
+  expect(await idsFor(owner)).toEqual([asked]);
+  expect((await idsFor(builder)).toSorted()).toEqual([kept, asked].toSorted());
+  await expect(listDrawings(companion, build.orderNumber)).rejects.toThrow(Denied);
 });

@@ -86,12 +86,16 @@ describe('the two schemes', () => {
 describe('a digest', () => {
   const [build] = digest(plainWords).builds;
 
-  test('of 36 pages stays below the 102 kB at which a mail is cut off', async () => {
+  test('of 36 pages with all their readings stays below the 102 kB at which a mail is cut off', async () => {
     if (build === undefined) throw new Error('no build');
     const entries = Array.from({ length: 12 }, (_, i) => ({
       dateWords: `${i + 1} September`,
       authorWords: 'Tove Järvi, finish',
       textExcerpt: 'Colour is on. '.repeat(20),
+      readings: Array.from(
+        { length: 5 },
+        (_, line) => `Action at the 12th fret, string ${line}: 1.59 mm, within its tolerance`,
+      ),
       photoCid: `photo-${i}`,
       photoAlt: 'Body in the booth',
       url: `${build.url}#${i}`,

@@ -33,7 +33,7 @@ export function invitation({ person, shopName }: Words): InvitationProps {
 }
 
 export function digest({ person, shopName, instrument, excerpt }: Words): DigestProps {
-  const entry = { authorWords: `${person}, finish`, textExcerpt: excerpt };
+  const entry = { authorWords: `${person}, finish`, textExcerpt: excerpt, readings: ['Nut width: 42.85 mm'] };
   const build = `${site}/builds/Q-2417`;
   return {
     readerName: person,

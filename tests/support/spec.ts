@@ -1,4 +1,4 @@
-import type { ChoiceItem, MeasureItem, SpecDocument, SpecItem } from '@/lib/specs/document';
+import type { ChoiceItem, LookItem, MeasureItem, SpecDocument, SpecItem } from '@/lib/specs/document';
 
 type Over<T> = Partial<Omit<T, 'kind'>>;
 
@@ -24,6 +24,18 @@ export const choiceItem = (over: Over<ChoiceItem> = {}): ChoiceItem => ({
   provenAt: 'finish',
   value: 'gloss',
   options: ['gloss', 'satin'],
+  ...over,
+});
+
+export const lookItem = (over: Over<LookItem> = {}): LookItem => ({
+  ...base,
+  kind: 'look',
+  group: 'neck',
+  key: 'headstock_logo',
+  label: 'Headstock logo',
+  words: 'house logo, shell',
+  documentId: null,
+  colour: null,
   ...over,
 });
 

@@ -1,7 +1,8 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
-import { assignStaff, endAssignment, invitePerson } from '@/db/queries/people';
+import { assignStaff, endAssignment } from '@/db/queries/assignments';
+import { invitePerson } from '@/db/queries/people';
 import { action } from '@/lib/action';
 import { wakeMail } from '@/lib/jobs/run';
 import { assignment, assignmentRef, invitation } from '@/lib/validation/people';

@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react';
 import { notFound } from 'next/navigation';
-import { AccessNav } from '@/components/access/access-nav';
+import { SubNav } from '@/components/shell/sub-nav';
 import { can } from '@/lib/access';
 import { pageViewer } from '@/lib/auth/page';
 
@@ -21,7 +21,7 @@ export default async function AccessLayout({ children }: { children: ReactNode }
   if (!can(viewer.role, 'none', 'people.manage')) notFound();
   return (
     <>
-      <AccessNav links={links} />
+      <SubNav label="Access" links={links} />
       {children}
     </>
   );

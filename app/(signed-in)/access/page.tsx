@@ -6,7 +6,8 @@ import { SearchForm } from '@/components/access/search-form';
 import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { LinkButton } from '@/components/ui/button';
 import { EmptyState } from '@/components/ui/empty-state';
-import { listDepartments, listPeople } from '@/db/queries/people';
+import { listDepartments } from '@/db/queries/departments';
+import { listPeople } from '@/db/queries/people';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 
 export const metadata: Metadata = { title: 'People' };

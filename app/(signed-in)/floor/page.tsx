@@ -1,5 +1,6 @@
 import type { Metadata } from 'next';
 import { FloorBoard } from '@/components/floor/floor-board';
+import { FloorNav } from '@/components/floor/floor-nav';
 import { floorScreen } from '@/db/queries/floor';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { parseWish } from '@/lib/floor/wish';
@@ -15,8 +16,11 @@ export default async function FloorPage({ searchParams }: PageProps<'/floor'>) {
   });
   const { first, total, choices } = await orNotFound(floorScreen(viewer, wish, requestMs()));
   return (
-    <div className="mx-auto grid max-w-[82rem] grid-cols-[minmax(0,1fr)] gap-5 px-4.5 py-8 md:px-10">
-      <FloorBoard first={first} total={total} choices={choices} wish={wish} viewerKey={viewer.id} />
-    </div>
+    <>
+      <FloorNav />
+      <div className="mx-auto grid max-w-[82rem] grid-cols-[minmax(0,1fr)] gap-5 px-4.5 py-8 md:px-10">
+        <FloorBoard first={first} total={total} choices={choices} wish={wish} viewerKey={viewer.id} />
+      </div>
+    </>
   );
 }

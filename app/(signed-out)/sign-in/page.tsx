@@ -5,7 +5,7 @@ import { AskForm } from '@/components/sign-in/ask-form';
 import { DemoPeople } from '@/components/sign-in/demo-people';
 import { SignedOutPage } from '@/components/shell/signed-out-page';
 import { listDemoPeople } from '@/db/queries/demo-people';
-import { findShop } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import { findViewer } from '@/lib/auth/viewer';
 import { env } from '@/lib/env';
 

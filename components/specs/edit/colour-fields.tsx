@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { PlainInput, PlainSelect } from './plain-fields';
 import { FieldError } from '@/components/ui/field';
+import { PHOTO_COLOUR_SENTENCE } from '@/lib/craft/colour-difference';
 import type { AimedColour, LookItem, SpecItem } from '@/lib/specs/document';
 
 type ColourFieldsProps = { item: LookItem; say: (item: SpecItem) => void; sentence?: string };
@@ -53,6 +54,7 @@ export function ColourFields({ item, say, sentence }: ColourFieldsProps) {
           />
         </span>
       </span>
+      <span className="text-sm text-soft">{PHOTO_COLOUR_SENTENCE}</span>
       <FieldError id={`${item.key}-colour`} error={sentence} />
       <button
         type="button"

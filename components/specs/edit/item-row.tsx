@@ -6,6 +6,7 @@ import { useSurroundings } from './surroundings';
 import type { CanChange } from '@/lib/specs/can-change';
 import { checkItem } from '@/lib/specs/check';
 import type { SpecItem } from '@/lib/specs/document';
+import { drawingWords } from '@/lib/specs/drawings';
 import { allowedWords, itemWords } from '@/lib/specs/item-words';
 
 type ItemRowProps = {
@@ -57,7 +58,7 @@ export const ItemRow = memo(function ItemRow({ item, canChange, said, suggestion
 });
 
 function FrozenRow({ item, words, sentence }: { item: SpecItem; words: string; sentence?: string }) {
-  const { materialNames } = useSurroundings();
+  const { materialNames, drawings } = useSurroundings();
   return (
     <li className="grid grid-cols-[minmax(0,1fr)] gap-x-5 gap-y-1 border-b border-line py-3 md:grid-cols-[13rem_minmax(0,1fr)]">
       <div>
@@ -65,7 +66,9 @@ function FrozenRow({ item, words, sentence }: { item: SpecItem; words: string; s
         <p className="text-sm text-soft">{words}</p>
       </div>
       <p>
-        {[itemWords(item, 'in', materialNames), allowedWords(item)].filter(Boolean).join(', ')}
+        {[itemWords(item, 'in', materialNames), allowedWords(item), drawingWords(item, drawings)]
+          .filter(Boolean)
+          .join(', ')}
         {sentence && <span className="block text-sm font-semibold text-late">{sentence}</span>}
       </p>
     </li>

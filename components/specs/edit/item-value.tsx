@@ -1,4 +1,5 @@
 import { ColourFields } from './colour-fields';
+import { DrawingField } from './drawing-field';
 import { PlainInput, PlainSelect } from './plain-fields';
 import { useSurroundings } from './surroundings';
 import { unitWord, type Unit } from '@/lib/craft/units';
@@ -121,6 +122,7 @@ function LookFields({ item, say, sentences }: ValueProps<LookItem>) {
         say={(text) => say({ ...item, words: text })}
         sentence={sentences.words ?? sentences.value}
       />
+      <DrawingField item={item} say={say} sentence={sentences.drawing} />
       <ColourFields item={item} say={say} sentence={sentences.colour} />
     </span>
   );

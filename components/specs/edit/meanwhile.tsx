@@ -4,6 +4,7 @@ import type { EditState } from './edit-state';
 import { Button } from '@/components/ui/button';
 import { Notice } from '@/components/ui/notice';
 import type { SpecDocument, SpecItem } from '@/lib/specs/document';
+import { drawingWords } from '@/lib/specs/drawings';
 import { allowedWords, itemWords } from '@/lib/specs/item-words';
 
 type MeanwhileProps = {
@@ -15,13 +16,17 @@ type MeanwhileProps = {
 
 /** Somebody else saved this spec: what came over from them, and what both have changed. */
 export function Meanwhile({ meanwhile: { by, takenKeys, clashes }, document, takeTheirs, seen }: MeanwhileProps) {
-  const { materialNames } = useSurroundings();
+  const { materialNames, drawings } = useSurroundings();
   const place = useRef<HTMLDivElement>(null);
   // Whoever saved stands at the foot of a long form; what has to be looked at stands at its head.
   useEffect(() => place.current?.focus(), []);
   const labels = new Map(document.items.map(({ key, label }) => [key, label]));
   const words = (item: SpecItem | null) =>
-    item ? [itemWords(item, 'in', materialNames), allowedWords(item)].filter(Boolean).join(', ') : 'taken out';
+    item
+      ? [itemWords(item, 'in', materialNames), allowedWords(item), drawingWords(item, drawings)]
+          .filter(Boolean)
+          .join(', ')
+      : 'taken out';
   return (
     <div ref={place} tabIndex={-1} className="scroll-mt-64">
       <Notice

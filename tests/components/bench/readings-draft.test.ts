@@ -13,7 +13,7 @@ const stages: StageChoice[] = [
   { id: 'stage-finish', key: 'finish', name: 'Finish', work: 'finish', state: 'ahead' },
 ];
 const items = [measureItem(), choiceItem()].map(benchItemOf);
-const bench: BenchBuild = { items, scaleLengthIn: 25.5, coats: [] };
+const bench: BenchBuild = { items, scaleLengthIn: 25.5, coats: [], lastCoatAtMs: null };
 
 const run = (draft: Draft, ...events: DraftEvent[]) => events.reduce(draftReducer, draft);
 

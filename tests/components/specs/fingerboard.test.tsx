@@ -4,6 +4,7 @@ import { FingerboardDrawing } from '@/components/specs/fingerboard-drawing';
 import { FretSheet } from '@/components/specs/fret-sheet';
 import { FretTable } from '@/components/specs/fret-table';
 import { StringBalance } from '@/components/specs/string-balance';
+import { StringTrial } from '@/components/specs/string-trial';
 import { fingerboard, type FingerboardPlan } from '@/lib/craft/fingerboard';
 import { fretSheet } from '@/lib/craft/fret-sheet';
 import { stringBalance } from '@/lib/craft/string-balance';
@@ -34,13 +35,18 @@ function sheetHtml(plan: FingerboardPlan): string {
   return renderToStaticMarkup(<FretSheet sheet={read.sheet} board={board} title="Order Q-2417, version 4" />);
 }
 
-function balanceHtml(gauges: string): string {
+function baritoneSet(gauges: string, band: { lowLb: number; highLb: number }) {
   const set = readStringSet('B1 E2 A2 D3 F#3 B3', gauges);
   if (!set.ok) throw new Error(set.message);
   const plan = { strings: set.strings, bassScaleMm: 685.8, trebleScaleMm: 685.8 };
-  const read = stringBalance(plan, { lowLb: 19, highLb: 22 });
+  const read = stringBalance(plan, band);
   if (!read.ok) throw new Error(read.message);
-  return renderToStaticMarkup(<StringBalance balance={read.balance} />);
+  return { plan, balance: read.balance };
+}
+
+function balanceHtml(gauges: string): string {
+  const { balance } = baritoneSet(gauges, { lowLb: 19, highLb: 22 });
+  return renderToStaticMarkup(<StringBalance balance={balance} />);
 }
 
 describe('the fingerboard drawing', () => {
@@ -86,6 +92,26 @@ describe('the balance across the strings', () => {
     expect(html.match(/above the band/g)).toHaveLength(2);
     expect(html.match(/within the band/g)).toHaveLength(4);
     expect(html).toContain('a .036 would bring it to 21.9 lb');
+  });
+});
+
+describe('another gauge on one string', () => {
+  const trialHtml = (highLb: number) => {
+    const { plan, balance } = baritoneSet('14 19 26 38 50 62', { lowLb: 10, highLb });
+    return renderToStaticMarkup(<StringTrial plan={plan} strings={balance.strings} />);
+  };
+
+  test('starts with what would bring the first string into the band, and says what that does', () => {
+    // Weights .00026471 and .00023964 lb/in of the published table at 27 in and 110 Hz, by T = UW (2 L F)^2 / 386.4.
+    expect(trialHtml(22)).toContain(
+      'A .036 takes A2 from 24.2 to 21.9 lb (97 N), 2.3 lb less, and the set to 126.4 lb (562 N).',
+    );
+  });
+
+  test('starts with the first string as it is where every string lies in the band', () => {
+    const html = trialHtml(90);
+    expect(html).toContain('Choose a gauge to see what it does.');
+    expect(html.match(/<option value="(plain|wound) /g)).toHaveLength(22 + 33);
   });
 });
 

@@ -3,7 +3,7 @@ import { specCounts, specOver } from '@/components/specs/spec-head-words';
 import { specLine, unproven } from '@/components/specs/spec-line';
 import type { VersionRow } from '@/db/queries/spec-versions';
 import type { SpecItem } from '@/lib/specs/document';
-import { choiceItem, measureItem } from '../../support/spec';
+import { choiceItem, lookItem, measureItem } from '../../support/spec';
 
 const NOW_MS = Date.UTC(2026, 11, 1);
 const stage = { key: 'neck', name: 'Neck & frets', position: 1, usualDays: 9, startedAt: NOW_MS, finishedAt: null };
@@ -15,6 +15,7 @@ const around = {
   nowMs: NOW_MS,
   orderNumber: 'Q-2417',
   materials: { ebony: 'Ebony' },
+  drawings: [{ id: 'd1', name: 'Headstock logo', photoId: null }],
   papersKeys: new Set(['ebony']),
   isDelivered: false,
 };
@@ -33,7 +34,13 @@ describe('one item of the spec page', () => {
 
   test('keeps an action in 64ths as a fraction, as it is read at the bench', () => {
     const action = measureItem({ key: 'action_bass', aim: { text: '6', unit: '64ths' } });
-    expect(line(action).signed).toEqual({ in: '6/64 in', fraction: '6/64 in', mm: '2.381 mm' });
+    const inEach = { in: '6/64 in', fraction: '6/64 in', mm: '2.381 mm' };
+    expect(line(action, { measured: '6/64 in' })).toMatchObject({ signed: inEach, measured: inEach });
+  });
+
+  test('says a count without a unit', () => {
+    const frets = measureItem({ key: 'fret_count', aim: { text: '22', unit: 'count' }, tolerance: null });
+    expect(line(frets, { measured: '22' }).measured).toEqual({ in: '22', fraction: '22', mm: '22' });
   });
 
   test('leads to the entry that proves it, or names the stage that will', () => {
@@ -42,6 +49,12 @@ describe('one item of the spec page', () => {
     expect(proven.proofs).toEqual([{ href: '/builds/Q-2417#entry-e1', words: '1 Dec, Neck & frets' }]);
     expect(line(measureItem()).expectedAt).toBe('at Neck & frets');
     expect(line(choiceItem({ provenAt: 'elsewhere' })).expectedAt).toBeNull();
+  });
+
+  test('leads to its drawing where this reader may open it', () => {
+    expect(line(lookItem({ documentId: 'd1' })).drawing).toMatchObject({ id: 'd1', name: 'Headstock logo' });
+    expect(line(lookItem({ documentId: 'd2' })).drawing).toBeNull();
+    expect(line(lookItem()).drawing).toBeNull();
   });
 
   test('asks for papers only where the material it names is marked', () => {

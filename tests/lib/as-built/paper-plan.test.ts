@@ -9,6 +9,7 @@ const row = (key: string): AsBuiltRow => ({
   label: 'Scale length',
   signed: '27 in',
   allowed: null,
+  drawing: null,
   measured: null,
   within: null,
   state: 'open',

@@ -50,6 +50,7 @@ const facts = (over: Partial<AsBuiltFacts> = {}): AsBuiltFacts => ({
   deliveredAt: null,
   version: { number: 4, signedAt: NOW_MS, signedName: 'Mara Okafor' },
   lines: [line('joint'), line('scale', { signed: '27 in', measured: '27.002 in', withinWords: 'within ± 0.005 in' })],
+  drawings: [],
   setUp: [{ key: 'relief', label: 'Relief', figures: '0.008 in', words: 'within', datedAt: NOW_MS, authorName: 'Ida' }],
   papers: ['Ebony'],
   photos: [photo('a', 'one'), photo('b', 'one'), photo('c', 'two')],
@@ -103,6 +104,28 @@ test('the sheet says what was signed, what was measured, who showed it and when'
     'Ebony',
   ])
     expect(text).toContain(words);
+});
+
+test('a length stands in both unit systems, a count in none', async () => {
+  const measure = { ...line('m').item, kind: 'measure', tolerance: null } as const;
+  const action = { ...measure, aim: { text: '4', unit: '64ths' } } as const;
+  const frets = { ...measure, aim: { text: '22', unit: 'count' } } as const;
+  const { text } = await readPaper({
+    lines: [
+      line('action', { item: action, signed: '4/64 in', measured: '5/64 in' }),
+      line('frets', { item: frets, signed: '22', measured: '22' }),
+    ],
+  });
+  expect(text).toContain('4/64 in (1.588 mm)');
+  expect(text).toContain('5/64 in (1.984 mm)');
+  expect(text).not.toContain('22 in');
+});
+
+test('an item that was signed as a drawing names it', async () => {
+  const look = { ...line('logo').item, kind: 'look', words: 'shell', documentId: 'd1', colour: null } as const;
+  const drawings = [{ id: 'd1', title: 'Headstock logo, drawing 2', photoId: null, createdAt: NOW_MS }];
+  const { text } = await readPaper({ drawings, lines: [line('logo', { item: look, signed: 'shell' })] });
+  expect(text).toContain('see “Headstock logo, drawing 2”');
 });
 
 test('every photo is in it, and each picture once', async () => {

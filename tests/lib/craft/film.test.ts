@@ -9,7 +9,14 @@ import {
   filmWords,
   UM_PER_MIL,
 } from '@/lib/craft/film';
-import { finishWindows, windowState, type FinishWindow } from '@/lib/craft/finish-windows';
+import {
+  coatMaterials,
+  finishWindows,
+  materialOf,
+  windowsOf,
+  windowState,
+  type FinishWindow,
+} from '@/lib/craft/finish-windows';
 import { byProvenance, cell } from '../../support/provenance';
 import { readReference } from '../../support/reference';
 
@@ -142,4 +149,21 @@ describe('finish windows', () => {
   });
 
   test('that count coats have no clock', () => expect(windowState({ ...window, unit: 'coats' }, 0, 0)).toBeNull());
+});
+
+describe('what is on a can', () => {
+  test.each([
+    ['Clear lacquer, nitro', 'nitrocellulose lacquer'],
+    ['Water-borne clear lacquer', 'water-borne clear'],
+    ['2K polyurethane', 'polyurethane (2K), clear'],
+    ['Polyester 2K filler', 'polyester (2K) base'],
+    ['Tung oil', 'oil finish'],
+    ['Tinted toner', null],
+  ])('%s is told as %s', (product, material) => expect(materialOf(product)).toBe(material));
+
+  test.each(coatMaterials)('%s has windows to wait for, each a placeholder', (material) => {
+    const windows = windowsOf(material);
+    expect(windows.length).toBeGreaterThan(0);
+    expect(windows.every(({ isPlaceholder }) => isPlaceholder)).toBe(true);
+  });
 });

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { fretTable, type FretTable, type ScalePlan } from '@/lib/craft/fret-table';
-import { fretName, scaleWords, slotWords } from '@/lib/craft/fret-words';
+import { fretName, ruleOf18Words, scaleWords, slotErrorWords, slotWords } from '@/lib/craft/fret-words';
 import { readReference } from '../../support/reference';
 
 const single: ScalePlan = { bassScaleMm: 647.7, trebleScaleMm: 647.7, perpendicularFret: 0, fretCount: 24 };
@@ -104,5 +104,22 @@ describe('the table in words', () => {
     const fan = tableOf({ bassScaleMm: 685.8, trebleScaleMm: 647.7, perpendicularFret: 7, fretCount: 24 });
     expect(scaleWords(fan, 'in')).toBe('27 in on the bass side, 25.5 in on the treble side, square at fret 7');
     expect(scaleWords(tableOf(single), 'mm')).toBe('647.7 mm');
+  });
+});
+
+describe('what stands below the table', () => {
+  // By hand for 647.7 mm: 1200 log2(r / (r - 0.1)), r = 647.7 x 2^(-n/12), is 0.28 cents at fret 1 and 1.07 at fret 24.
+  test('says what a slot that is off does at the first fret and the last', () => {
+    expect(slotErrorWords(tableOf(single))).toBe(
+      'A slot cut 0.1 mm (0.004 in) too near the bridge sounds 0.3 cents sharp at fret 1 and 1.1 at fret 24.',
+    );
+  });
+
+  // 1 - (17/18)^12 = 0.49635 of the scale instead of half of it; 12 x (1200 log2(18/17) - 100) = -12.5 cents.
+  test('says how a board cut by the rule of 18 differs at the 12th fret', () => {
+    const words = ruleOf18Words(tableOf(single));
+    expect(words).toContain('12.5 cents flat');
+    expect(words).toContain('17.817');
+    expect(Number(/lies ([\d.]+) mm/.exec(words)?.[1])).toBeCloseTo(647.7 * (0.5 - (1 - (17 / 18) ** 12)), 2);
   });
 });

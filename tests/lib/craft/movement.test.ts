@@ -1,15 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { isRefused } from '@/lib/craft/doubt';
 import { materialRows, movementOf, starterMaterials } from '@/lib/craft/materials';
-import {
-  changeByCoefficient,
-  changeByShrinkage,
-  coefficientFor,
-  doubtMovement,
-  expectedMovement,
-  shrinkageFor,
-} from '@/lib/craft/movement';
+import { changeByCoefficient, changeByShrinkage, expectedMovement, shrinkageFor } from '@/lib/craft/movement';
 import { byProvenance, cell } from '../../support/provenance';
 import { readReference } from '../../support/reference';
 
@@ -56,10 +48,11 @@ describe('the coefficients of the Wood Handbook, Table 13-5', () => {
   test('come to 21 rows read there', () => expect(published.outside).toHaveLength(21));
 
   test.each(withShrinkage)('agree with the shrinkage of $species where the two forms meet', (row) => {
-    const radial = coefficientFor(cell(row, 'shrinkage_S_R_green_to_ovendry_pct'));
-    const tangential = coefficientFor(cell(row, 'shrinkage_S_T_green_to_ovendry_pct'));
-    expect(Math.abs(radial - cell(row, 'C_R_radial_per_pct_mc'))).toBeLessThanOrEqual(0.0000062);
-    expect(Math.abs(tangential - cell(row, 'C_T_tangential_per_pct_mc'))).toBeLessThanOrEqual(0.0000062);
+    const radial = shrinkageFor(cell(row, 'C_R_radial_per_pct_mc'));
+    const tangential = shrinkageFor(cell(row, 'C_T_tangential_per_pct_mc'));
+    // The coefficients are printed to 0.00001, which is up to 0.02 of a percent of shrinkage.
+    expect(Math.abs(radial - cell(row, 'shrinkage_S_R_green_to_ovendry_pct'))).toBeLessThanOrEqual(0.02);
+    expect(Math.abs(tangential - cell(row, 'shrinkage_S_T_green_to_ovendry_pct'))).toBeLessThanOrEqual(0.02);
   });
 
   const listed = starterMaterials.filter(({ movement }) => movement !== null);
@@ -106,10 +99,14 @@ describe('expected movement', () => {
     expect(at(60)).toBe(at(30));
   });
 
-  test('shrinkage and coefficient turn into each other', () => {
+  test('by a coefficient and by the shrinkage worked out from it are the same step at 10 %', () => {
     fc.assert(
-      fc.property(fc.double({ min: 1, max: 15, noNaN: true }), (shrinkage) => {
-        expect(shrinkageFor(coefficientFor(shrinkage))).toBeCloseTo(shrinkage, 9);
+      fc.property(fc.double({ min: 0.0005, max: 0.006, noNaN: true }), (coefficient) => {
+        const step = { dimension: 1, fromPercent: 10, toPercent: 10.5 };
+        expect(changeByShrinkage(step, shrinkageFor(coefficient))).toBeCloseTo(
+          changeByCoefficient(step, coefficient),
+          9,
+        );
       }),
     );
   });
@@ -131,7 +128,6 @@ describe('expected movement', () => {
     { dimension: 10, fromPercent: 8, toPercent: Number.NaN },
   ])('$dimension wide from $fromPercent to $toPercent % is refused', (step) => {
     expect(() => changeByCoefficient(step, 0.002)).toThrow(RangeError);
-    expect(isRefused(doubtMovement(step))).toBe(true);
   });
 
   test.each([0, -4, 100, Number.NaN])('a shrinkage of %d %% is refused', (shrinkage) => {

@@ -202,7 +202,8 @@ describe('string tension', () => {
 
   test('a gauge without a known weight is refused with the ones that have it', () => {
     expect(setTension(planOf('E2 E4', '10 120', 25.5))).toMatchObject({
-      message: 'No weight is known for a wound .120: ours run from .017 to .080. Choose one of those.',
+      message:
+        'The tension of this set cannot be told: no weight is known for a wound .120. Those that were published run from .017 to .080; for others ask the strings’ maker.',
     });
   });
 });
@@ -236,7 +237,11 @@ describe('balance across the strings', () => {
     if (!changed.ok) throw new Error(changed.message);
     expect(changed.totalLb - tensionOf(plan).totalLb).toBeCloseTo(changed.differenceLb, 9);
     expect(changed.differenceLb).toBeGreaterThan(0);
-    expect(changeWords(changed)).toBe('A .049 takes E2 from 17.5 to 19.7 lb, and the set to 105.7 lb.');
+    expect(changeWords(changed)).toBe(
+      'A .049 takes E2 from 17.5 to 19.7 lb (87 N), 2.2 lb more, and the set to 105.7 lb (470 N).',
+    );
+    const back = changeString(plan, 6, gaugeOf('46'));
+    expect(back.ok && changeWords(back)).toContain('from 17.5 to 17.5 lb (78 N), no more and no less, and the set to');
     expect(changeString(plan, 7, gaugeOf('49'))).toMatchObject({ ok: false });
   });
 

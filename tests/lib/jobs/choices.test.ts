@@ -89,7 +89,7 @@ describe('a kind of mail', () => {
     for (const kind of ['sign_in', 'invitation', 'sign_off', 'sign_off_reminder', 'held_entry'] as const)
       await expect(choose(owner, kind, 'never')).rejects.toThrow(BadInput);
     const kinds = (await listChoices(owner)).map(({ kind }) => kind);
-    expect(kinds).toEqual(['letter', 'ready', 'shipped', 'window_moved']);
+    expect(kinds).toEqual(['letter', 'change_declined', 'ready', 'shipped', 'window_moved']);
   });
 
   test('of a held build says nothing of it, by itself or in the digest', async () => {

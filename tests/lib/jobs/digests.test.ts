@@ -1,17 +1,30 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
 import { GET, POST } from '@/app/api/unsubscribe/[token]/route';
-import { db } from '@/db/client';
+import { db, write } from '@/db/client';
 import { editEntry, postEntry, releaseEntry, withdrawEntry } from '@/db/queries/entries';
 import { claimDueReaders, writeDigests, type DueReader } from '@/db/queries/digests';
-import { saveMailSettings, unsubscribe } from '@/db/queries/mail-settings';
-import { closePerson, holdBuild, removeCompanion } from '@/db/queries/people';
+import { saveMailSettings, saveWording, unsubscribe } from '@/db/queries/mail-settings';
+import { removeCompanion } from '@/db/queries/companions';
+import { holdBuild } from '@/db/queries/holds';
+import { closePerson } from '@/db/queries/people';
 import { storeObject } from '@/lib/storage';
-import { mailSettings, outbox } from '@/db/schema';
+import { mailSettings, outbox, readings, readyWindows, users } from '@/db/schema';
 import { writeDueDigests } from '@/lib/jobs/digests';
 import { sendDueMail } from '@/lib/jobs/outbox';
+import { showLine } from '@/lib/readings/measure-line';
 import { readReference } from '../../support/reference';
-import { DAY_MS, entryFor, makeBuild, makePerson, makePhoto, noteOf, NOW_MS, type Person } from '../../support/world';
+import {
+  DAY_MS,
+  entryFor,
+  makeBuild,
+  makePerson,
+  makePhoto,
+  noteOf,
+  NOW_MS,
+  type Person,
+  type TestBuild,
+} from '../../support/world';
 import { clock, openStandIns } from './stand-ins';
 
 const { database, mailsTo, behave } = await openStandIns();
@@ -37,6 +50,19 @@ async function openBuild(over: { releaseNeeded?: boolean; wish?: typeof daily | 
   for (const reader of [owner, companion]) await saveMailSettings(reader, wish, 'UTC', NOW_MS);
   return { owner, companion, builder, rep, build };
 }
+
+const keepWindow = ({ id: buildId }: TestBuild) =>
+  write((tx) =>
+    tx.insert(readyWindows).values({
+      buildId,
+      givenOn: '2026-12-01',
+      stageKey: 'wood',
+      kind: 'window',
+      earliestOn: '2027-01-20',
+      latestOn: '2027-02-06',
+      computedAt: NOW_MS,
+    }),
+  );
 
 const post = ({ build, builder }: Awaited<ReturnType<typeof openBuild>>, text: string) =>
   postEntry(builder, entryFor(build, { note: noteOf(text) }), clock.nowMs);
@@ -73,6 +99,27 @@ describe('a digest', () => {
     expect(mails[1]?.text).toContain('The neck is set.');
     expect(mails[1]?.text).not.toContain('The top is joined.');
     expect((await settingsOf(diary.owner))?.nextDigestAt).toBe(NEXT_8 + 3 * DAY_MS);
+  });
+
+  test('says dates, measures and the ready window as its reader reads them', async () => {
+    const diary = await openBuild();
+    const wording = { locale: 'en-US', units: 'mm' } as const;
+    await saveWording(diary.owner, wording);
+    const nearMidnight = { timeZone: 'Asia/Tokyo' };
+    await write((tx) => tx.update(users).set(nearMidnight).where(eq(users.id, diary.owner.id)));
+    clock.nowMs = Date.UTC(2026, 11, 1, 20);
+    const { id } = await post(diary, 'The frets are level.');
+    const value = { kind: 'measure', name: 'Relief', measured: { text: '0.010', unit: 'in' } } as const;
+    const row = { buildId: diary.build.id, entryId: id, position: 0, value, shown: showLine(value, null) };
+    await write((tx) => tx.insert(readings).values(row));
+    await keepWindow(diary.build);
+    await runJobs(NEXT_8 + DAY_MS);
+    const [[owners], [companions]] = [await mailsTo(diary.owner), await mailsTo(diary.companion)];
+    expect(owners?.text).toMatch(/December 2[^]*Relief: 0\.254 mm$/m);
+    expect(owners?.text).toContain('between January 20 and February 6, 2027');
+    expect(owners?.text).not.toMatch(/0\.010 in|1 December/);
+    expect(companions?.text).toMatch(/1 December[^]*Relief: 0\.010 in$/m);
+    expect(companions?.text).toContain('between 20 January and 6 February 2027');
   });
 
   test('goes to a companion as well, and to nobody who wants none or belongs to another build', async () => {

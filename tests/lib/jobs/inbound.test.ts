@@ -2,7 +2,7 @@ import { asc, desc, eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
 import { listRefusedReplies } from '@/db/queries/mail-watch';
-import { removeCompanion } from '@/db/queries/people';
+import { removeCompanion } from '@/db/queries/companions';
 import { askQuestion } from '@/db/queries/questions';
 import { assignments, letters, outbox, photos, providerEvents, users } from '@/db/schema';
 import { newId } from '@/db/schema/columns';

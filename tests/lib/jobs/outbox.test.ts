@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
-import { listMailProblems } from '@/db/queries/mail-watch';
+import { countMails, listMails } from '@/db/queries/mail-watch';
 import { beginTries, claimMails, queueMail, retryMail } from '@/db/queries/outbox';
 import { askForLink } from '@/db/queries/sign-in';
 import { askQuestion, writeLetter } from '@/db/queries/questions';
@@ -132,10 +132,11 @@ describe('a provider that', () => {
     expect(await rowOf(person)).toMatchObject({ state: 'failed', attempts: 1 });
     clock.nowMs += DAY_MS;
     expect(await send()).toBe(0);
-    const { troubled, counts } = await listMailProblems(await makePerson('admin'));
+    const admin = await makePerson('admin');
+    const troubled = await listMails(admin, 'trouble');
     expect(troubled).toMatchObject([{ kind: 'invitation', state: 'failed', person: person.name }]);
     expect(troubled[0]?.problem).toContain('422');
-    expect(counts).toContainEqual({ state: 'failed', n: 1 });
+    expect(await countMails(admin)).toContainEqual({ state: 'failed', n: 1 });
     expect(JSON.stringify(troubled)).not.toContain(person.email);
   });
 
@@ -147,7 +148,7 @@ describe('a provider that', () => {
     expect(await rowOf(person)).toMatchObject({ state: 'failed', attempts: 8 });
     expect((await rowOf(person)).lastProblem).toMatch(/^given up: 500/);
     expect(clock.nowMs - NOW_MS).toBeLessThan(DAY_MS);
-    const { troubled } = await listMailProblems(await makePerson('admin'));
+    const troubled = await listMails(await makePerson('admin'), 'trouble');
     expect(troubled.map(({ state }) => state)).toEqual(['failed']);
   });
 
@@ -161,7 +162,7 @@ describe('a provider that', () => {
     expect(await mailsTo(person)).toHaveLength(1);
     clock.nowMs += DAY_MS;
     expect(await send()).toBe(0);
-    const { troubled } = await listMailProblems(await makePerson('admin'));
+    const troubled = await listMails(await makePerson('admin'), 'trouble');
     expect(troubled.map(({ state }) => state)).toEqual(['parked']);
   });
 });

@@ -3,11 +3,11 @@ import { beforeEach, describe, expect, test } from 'vitest';
 import { db, write } from '@/db/client';
 import { askForChange, signSignOff, withdrawSignOff } from '@/db/queries/sign-off-answers';
 import { queueSignOffReminders } from '@/db/queries/sign-off-reminders';
-import { outbox, signOffs } from '@/db/schema';
+import { assignments, outbox, signOffs } from '@/db/schema';
 import { sendDueMail } from '@/lib/jobs/outbox';
 import { clock, openStandIns } from './stand-ins';
 import { askDrawing, signOffCast } from '../../support/sign-off-world';
-import { DAY_MS, NOW_MS } from '../../support/world';
+import { DAY_MS, makePerson, NOW_MS } from '../../support/world';
 
 const { mailsTo, behave } = await openStandIns();
 const HOUR_MS = 3_600_000;
@@ -73,6 +73,22 @@ describe('the answer', () => {
     const [mail] = await mailsTo(rep);
     expect(mail?.subject).toContain('Maren Oduya asks for a change');
     expect(mail?.text).toContain('The R is too wide.');
+  });
+
+  test('goes to the reps who are there when who asked has left the build', async () => {
+    const { owner, build, rep } = await signOffCast();
+    const next = await makePerson('rep');
+    const signOffId = await askDrawing(build, rep);
+    await write(async (tx) => {
+      await tx.update(assignments).set({ endedAt: NOW_MS }).where(eq(assignments.userId, rep.id));
+      await tx.insert(assignments).values({ buildId: build.id, userId: next.id, startedAt: NOW_MS });
+    });
+    await signSignOff(owner, { signOffId, name: owner.name }, NOW_MS);
+    await send();
+    expect((await mailsTo(next)).map(({ subject }) => subject)).toEqual([
+      'Maren Oduya signed: Headstock logo, drawing 1',
+    ]);
+    expect(await mailsTo(rep)).toEqual([]);
   });
 
   test('of a build held from view keeps the words out', async () => {

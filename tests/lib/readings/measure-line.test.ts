@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { setupLines } from '@/lib/craft/set-up';
-import { figuresOf, lineOfItem, lineOfSetup, readLine } from '@/lib/readings/measure-line';
+import { figuresOf } from '@/lib/craft/typed-form';
+import { lineOfItem, lineOfSetup, readLine } from '@/lib/readings/measure-line';
 import { measureItem } from '../../support/spec';
 
 const nut = lineOfItem(measureItem());
@@ -58,6 +59,14 @@ describe('a number out of tolerance is taken, and said', () => {
     expect(read.shown?.standing).toBe('outside');
     expect(readLine('-0.002', sheetLine('relief')).shown?.standing).toBe('outside');
   });
+});
+
+test.each([
+  ['5', /outside ± 3 cents: move the saddle away from the neck$/],
+  ['-4', /outside ± 3 cents: move the saddle towards the neck$/],
+  ['2', /^within ± 3 cents$/],
+])('an intonation of %s cents says which way the saddle goes where it is off', (text, words) => {
+  expect(readLine(text, sheetLine('intonation_1')).shown?.words).toMatch(words);
 });
 
 test('an empty field says nothing', () => {

@@ -14,7 +14,7 @@ const [six] = starterTemplates;
 function buildOf(over: Partial<BenchBuild> = {}): BenchBuild {
   const items = (six?.document.items ?? []).map(benchItemOf);
   const coloured = items.map((item) => (item.key === 'finish_colour' ? { ...item, colour: sample } : item));
-  return { items: coloured, scaleLengthIn: 25.5, coats: [], ...over };
+  return { items: coloured, scaleLengthIn: 25.5, coats: [], lastCoatAtMs: null, ...over };
 }
 
 const build = buildOf();
@@ -45,7 +45,11 @@ describe('a stage asks for the readings of its kind of work', () => {
   });
 
   test('and for the measures of the spec that are proven there', () => {
-    expect(labels('machining', 'machining')).toEqual(['Body thickness', 'Scale length']);
+    expect(labels('machining', 'machining')).toEqual([
+      'Body width at the lower bout',
+      'Body thickness',
+      'Scale length',
+    ]);
     expect(labels('sand-buff', 'buffing')).toEqual(['Film when cured']);
     expect(labels('lumber', 'wood')).toEqual([]);
   });
@@ -60,7 +64,10 @@ describe('a stage asks for the readings of its kind of work', () => {
   test('a bass has the sheet of a bass, with the strings its spec counts', () => {
     const bass = starterTemplates.find(({ name }) => name === 'Bass');
     const items = (bass?.document.items ?? []).map(benchItemOf);
-    const { lines } = planReadings({ key: 'elsewhere', work: 'setup' }, { items, scaleLengthIn: 34, coats: [] });
+    const { lines } = planReadings(
+      { key: 'elsewhere', work: 'setup' },
+      { items, scaleLengthIn: 34, coats: [], lastCoatAtMs: null },
+    );
     expect(lines.filter(({ label }) => label.startsWith('Nut slot'))).toHaveLength(4);
   });
 });

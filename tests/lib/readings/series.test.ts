@@ -3,7 +3,8 @@ import { emcPercent } from '@/lib/craft/moisture';
 import { movementOf, starterMaterials } from '@/lib/craft/materials';
 import { boardsOf, movementBetween } from '@/lib/readings/board-movement';
 import type { ReadingValue } from '@/lib/readings/reading';
-import { isEmptySeries, seriesOf } from '@/lib/readings/series';
+import { seriesOf } from '@/lib/readings/series';
+import { starterTemplates } from '@/lib/specs/templates';
 import { measureItem, smallSpec } from '../../support/spec';
 import { byProvenance, cell } from '../../support/provenance';
 import { readReference } from '../../support/reference';
@@ -42,9 +43,12 @@ describe('readings over time', () => {
     expect(series.colours).toEqual([{ label: 'Top', limitDeltaE: 2, points: [{ atMs: 1, value: 1.4 }] }]);
   });
 
-  test('measures and papers have no series', () => {
+  test('measures, papers and the air of the booth have no series', () => {
     const measured = { kind: 'measure', name: 'Nut', measured: { text: '1.7', unit: 'in' } } as const;
-    expect(isEmptySeries(seriesOf([at(1, measured), at(2, { kind: 'abrasives', grades: ['P320'] })]))).toBe(true);
+    const air = { kind: 'booth_air', temperatureC: 22, relativeHumidityPercent: 48 } as const;
+    expect(seriesOf([at(1, measured), at(2, { kind: 'abrasives', grades: ['P320'] }), at(3, air)])).toEqual(
+      seriesOf([]),
+    );
   });
 });
 
@@ -60,6 +64,12 @@ describe('how far a board has moved', () => {
     materialKey: 'red_alder',
     words: '',
   } as const;
+
+  test.each(starterTemplates)('the template $name gives a width for its body, neck and fingerboard', ({ document }) => {
+    const widths = boardsOf(document).map(({ label, widthLabel }) => [label, widthLabel]);
+    expect(widths).toContainEqual(['Body wood', 'Body width at the lower bout']);
+    expect(widths).toContainEqual(['Fingerboard wood', 'Width at the last fret']);
+  });
 
   test('boards are those whose wood and width the spec names, in millimetres', () => {
     const [board] = boardsOf(smallSpec(wood, width));

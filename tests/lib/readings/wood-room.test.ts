@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { nothingTyped } from '@/lib/readings/typed';
-import { readWoodRoom, showWoodRoom, woodRoomTrouble } from '@/lib/readings/wood-room';
+import { holdingWords, readWoodRoom, showWoodRoom, woodRoomTrouble } from '@/lib/readings/wood-room';
 import { byProvenance, cell } from '../../support/provenance';
 import { readReference } from '../../support/reference';
 
@@ -53,3 +53,25 @@ test.each(byProvenance(readReference('01_emc_wood')).outside)(
     expect(Math.abs(told - cell(row, 'expected_emc_pct'))).toBeLessThan(0.11);
   },
 );
+
+describe('the air that holds the wood', () => {
+  // USDA Wood Handbook FPL-GTR-282, Eq. (4-5), as tests/reference gives its inverse.
+  test.each(byProvenance(readReference('01b_emc_inverse')).outside)(
+    'holds $target_mc_pct % at $temperature_C °C',
+    (row) => {
+      const [temperature, moisture] = [cell(row, 'temperature_C'), cell(row, 'target_mc_pct')];
+      const humidity = /kept at ([\d.]+) %/.exec(holdingWords(air(temperature, 45, moisture), null) ?? '')?.[1];
+      expect(Math.abs(Number(humidity) - cell(row, 'expected_relative_humidity_pct'))).toBeLessThanOrEqual(0.56);
+    },
+  );
+
+  test('is that of the moisture the spec asks for, where it does', () => {
+    expect(holdingWords(air(21, 45, 10.8), 8)).toMatch(/the wood comes to 8 % in air that is kept at 4\d % humidity/);
+  });
+
+  test('is not told without a moisture, nor of one that no air gives', () => {
+    expect(holdingWords(air(21, 45), null)).toBeNull();
+    expect(holdingWords(air(21, 45, 60), null)).toBeNull();
+    expect(holdingWords(air(21, 45, 0), null)).toBeNull();
+  });
+});

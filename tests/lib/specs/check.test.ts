@@ -3,13 +3,18 @@ import { starterMaterials } from '@/lib/craft/materials';
 import { checkDocument, MOST_ITEMS } from '@/lib/specs/check';
 import type { SpecItem } from '@/lib/specs/document';
 import { starterTemplates } from '@/lib/specs/templates';
-import { choiceItem, measureItem } from '../../support/spec';
+import { choiceItem, lookItem, measureItem } from '../../support/spec';
 
-const around = { stageKeys: new Set(['neck', 'finish']), materialKeys: new Set(['ebony']) };
+const around = {
+  stageKeys: new Set(['neck', 'finish']),
+  materialKeys: new Set(['ebony']),
+  drawingIds: new Set(['d1']),
+};
 const check = (...items: SpecItem[]) => checkDocument({ items }, around);
 
 const scale = (text: string, unit: 'in' | 'mm' = 'in') =>
   measureItem({ key: 'scale_length', aim: { text, unit }, tolerance: null });
+const drawn = (documentId: string | null) => lookItem({ documentId });
 const count = (key: string, text: string) => measureItem({ key, aim: { text, unit: 'count' }, tolerance: null });
 const words = (key: string, value: string) => choiceItem({ key, value, options: [] });
 
@@ -121,10 +126,17 @@ const houseStages = 'lumber wood-room blanks machining neck-board frets body-joi
 const house = {
   stageKeys: new Set([...houseStages.split(' '), 'hardware-setup', 'final-check']),
   materialKeys: new Set(starterMaterials.map(({ key }) => key)),
+  drawingIds: new Set<string>(),
 };
 
 test.each(starterTemplates)('the template $name can be sent as it stands, with 45 to 60 items', ({ document }) => {
   expect(checkDocument(document, house)).toEqual({});
   expect(document.items.length).toBeGreaterThanOrEqual(45);
   expect(document.items.length).toBeLessThanOrEqual(60);
+});
+
+test('a look points to a drawing that was sent up for its build, or to none', () => {
+  expect(check(drawn('d1'))).toEqual({});
+  expect(check(drawn(null))).toEqual({});
+  expect(check(drawn('of another build'))['items.headstock_logo.drawing']).toMatch(/Choose one from the list, or none/);
 });

@@ -4,12 +4,13 @@ import { contentHashOf } from '@/lib/specs/content-hash';
 import { diffSpecs } from '@/lib/specs/diff';
 import { mergeSpecs } from '@/lib/specs/merge';
 import { toleranceFrom, toleranceText } from '@/lib/specs/tolerance';
-import { choiceItem, measureItem, smallSpec } from '../../support/spec';
+import { choiceItem, lookItem, measureItem, smallSpec } from '../../support/spec';
 
 const words = {
   show: 'in',
   materials: { ebony: 'Ebony' },
   stageNames: { neck: 'Neck & frets', finish: 'Finish' },
+  drawings: [],
 } as const;
 
 describe('the difference between two versions', () => {
@@ -30,6 +31,18 @@ describe('the difference between two versions', () => {
 
   test('is empty between equal versions, whatever the order of their items', () => {
     expect(diffSpecs(smallSpec(), smallSpec(choiceItem(), measureItem()), words)).toEqual([]);
+  });
+
+  test('names the drawing that took the place of another', () => {
+    const drawings = [{ id: 'd2', name: 'Inlay, drawing 2', photoId: null }];
+    const [before, after] = [smallSpec(lookItem({ documentId: 'd1' })), smallSpec(lookItem({ documentId: 'd2' }))];
+    expect(diffSpecs(before, after, { ...words, drawings })[0]?.fields).toEqual([
+      { name: 'drawing', before: 'a drawing that was not put before you', after: 'Inlay, drawing 2' },
+    ]);
+    expect(diffSpecs(before, after, words)[0]?.fields.map(({ name }) => name)).toEqual(['drawing']);
+    expect(diffSpecs(smallSpec(lookItem()), after, { ...words, drawings })[0]?.fields).toEqual([
+      { name: 'drawing', before: null, after: 'Inlay, drawing 2' },
+    ]);
   });
 
   test('is seen even where both read the same in the unit shown', () => {

@@ -24,7 +24,9 @@ test('a second scale is frozen and proven where the first is, and meets it on th
   const frets = measureItem({ key: 'fret_count', aim: { text: '24', unit: 'count' }, tolerance: null });
   const items = [scale, ...secondScale(scale), frets];
   expect(items.map(({ frozenFrom }) => frozenFrom)).toEqual(['neck', 'neck', 'neck', 'neck']);
-  expect(checkDocument({ items }, { stageKeys: new Set(['neck']), materialKeys: new Set() })).toEqual({});
+  expect(
+    checkDocument({ items }, { stageKeys: new Set(['neck']), materialKeys: new Set(), drawingIds: new Set() }),
+  ).toEqual({});
 });
 
 test.each([4, 5, 6, 7, 8])('the usual set for %i strings fits them', (strings) => {
@@ -34,7 +36,11 @@ test.each([4, 5, 6, 7, 8])('the usual set for %i strings fits them', (strings) =
     choiceItem({ key: 'tuning', value: usual?.tuning ?? '', options: [] }),
     choiceItem({ key: 'gauges', value: usual?.gauges ?? '', options: [] }),
   ];
-  const around = { stageKeys: new Set(['neck', 'finish']), materialKeys: new Set<string>() };
+  const around = {
+    stageKeys: new Set(['neck', 'finish']),
+    materialKeys: new Set<string>(),
+    drawingIds: new Set<string>(),
+  };
   expect(checkDocument({ items }, around)).toEqual({});
 });
 

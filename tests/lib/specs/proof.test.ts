@@ -38,7 +38,7 @@ const reading = (itemKey: string, datedAt: number, value: ReadingValue): TakenRe
   itemKey,
   value,
 });
-const measured = (itemKey: string, datedAt: number, text: string, unit: 'in' | 'mm' | 'deg' = 'in') =>
+const measured = (itemKey: string, datedAt: number, text: string, unit: 'in' | 'mm' | 'deg' | '64ths' = 'in') =>
   reading(itemKey, datedAt, { kind: 'measure', name: 'Taken', measured: { text, unit } });
 const read = (datedAt: number, l: number, illuminant: 'D50' | 'D65' = 'D65') =>
   reading('edge', datedAt, { kind: 'colour', l, a: -20, b: -10, illuminant });
@@ -57,6 +57,20 @@ function lineOf(item: SpecItem, ground: Partial<ProofGround> = {}) {
   if (!line) throw new Error('an item without a line');
   return line;
 }
+
+test.each([
+  ['4', '64ths', '4/64 in'],
+  ['25 1/2', 'in', '25 1/2 in'],
+  ['5/16', 'in', '5/16 in'],
+  ['648.0', 'mm', '648.0 mm'],
+  ['25.5', 'in', '25.5 in'],
+] as const)('%s %s is signed and measured in the form it was typed in: %s', (text, unit, words) => {
+  const item = { ...scale, aim: { text, unit }, tolerance: { plus: '1/64', minus: '1/64' } };
+  expect(lineOf(item, { readings: [measured('scale', 1, text, unit)] })).toMatchObject({
+    signed: words,
+    measured: words,
+  });
+});
 
 describe('a measure with a tolerance', () => {
   test('is open until it is measured, and a linked entry alone does not prove it', () => {

@@ -13,7 +13,28 @@ describe('the working week', () => {
     ]);
   });
 
+  test('takes a day in two stretches, with the break between them', () => {
+    const result = hoursForm.safeParse({ opens1: '07:30', closes1: '12:00', reopens1: '12:45', ends1: '16:15' });
+    expect(result.data).toEqual([
+      { weekday: 1, opensAtMin: 450, closesAtMin: 720 },
+      { weekday: 1, opensAtMin: 765, closesAtMin: 975 },
+    ]);
+  });
+
+  test('takes a day of which only the second stretch is filled in', () => {
+    expect(hoursForm.parse({ reopens2: '13:00', ends2: '18:00' })).toEqual([
+      { weekday: 2, opensAtMin: 780, closesAtMin: 1080 },
+    ]);
+  });
+
   test.each([
+    ['half of an afternoon', { opens1: '07:30', closes1: '12:00', reopens1: '13:00' }, 'reopens1'],
+    [
+      'an afternoon that begins in the morning',
+      { opens1: '07:30', closes1: '12:00', reopens1: '11:00', ends1: '16:00' },
+      'reopens1',
+    ],
+    ['a break of no length', { opens1: '07:30', closes1: '12:00', reopens1: '12:00', ends1: '16:00' }, 'reopens1'],
     ['half of a day', { opens1: '07:30', closes1: '' }, 'opens1'],
     ['a day that ends before it begins', { opens2: '16:00', closes2: '08:00' }, 'opens2'],
     ['no such time', { opens3: '25:00', closes3: '26:00' }, 'opens3'],

@@ -6,7 +6,7 @@ import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { LinkButton } from '@/components/ui/button';
 import { EmptyState } from '@/components/ui/empty-state';
 import { listBuildsByNumber } from '@/db/queries/builds';
-import { listStaffPeople } from '@/db/queries/people';
+import { listStaffPeople } from '@/db/queries/assignments';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 
 export const metadata: Metadata = { title: 'Who is on which build' };

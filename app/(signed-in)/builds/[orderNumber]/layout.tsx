@@ -1,14 +1,19 @@
 import type { ReactNode } from 'react';
-import { BuildNav } from '@/components/builds/build-nav';
 import { FinishStyle } from '@/components/builds/finish-style';
-import { openBuild } from '@/lib/auth/page';
+import { UnreachableNotice } from '@/components/people/unreachable-notice';
+import { SubNav } from '@/components/shell/sub-nav';
+import { listUnreachableOwners } from '@/db/queries/contacts';
 import { can, isClientRole } from '@/lib/access';
+import { openBuild } from '@/lib/auth/page';
 import { pageNonce } from '@/lib/request';
 
 /** Every page of a build wears its finish and carries the way to the others. It guards nothing by itself. */
 export default async function BuildLayout({ children, params }: LayoutProps<'/builds/[orderNumber]'>) {
   const { viewer, build } = await openBuild((await params).orderNumber);
   const path = `/builds/${build.orderNumber}`;
+  const unreachable = can(viewer.role, build.standing, 'contacts.read')
+    ? await listUnreachableOwners(viewer, build.orderNumber)
+    : [];
   const links = [
     { href: path, label: 'Diary' },
     ...(can(viewer.role, build.standing, 'spec.read') ? [{ href: `${path}/spec`, label: 'Spec' }] : []),
@@ -26,7 +31,15 @@ export default async function BuildLayout({ children, params }: LayoutProps<'/bu
   return (
     <>
       <FinishStyle finishHex={build.finishHex} nonce={await pageNonce()} />
-      <BuildNav links={links} instrument={build.instrument} isAlone={isClientRole(viewer.role)} />
+      <SubNav
+        label={build.instrument}
+        links={links}
+        back={isClientRole(viewer.role) ? { href: '/builds', label: 'Your builds' } : undefined}
+      />
+      <UnreachableNotice
+        owners={unreachable}
+        className="mx-4.5 mt-6 max-w-[77rem] md:mx-10 min-[82rem]:mx-auto print:hidden"
+      />
       {children}
     </>
   );

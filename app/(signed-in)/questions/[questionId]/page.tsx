@@ -2,6 +2,7 @@ import { cache } from 'react';
 import type { Metadata } from 'next';
 import { end, pass, reopen } from './actions';
 import { FinishStyle } from '@/components/builds/finish-style';
+import { UnreachableNotice } from '@/components/people/unreachable-notice';
 import { KeepFresh } from '@/components/questions/keep-fresh';
 import { LetterList } from '@/components/questions/letter-list';
 import { MarkRead } from '@/components/questions/mark-read';
@@ -11,6 +12,7 @@ import { QuestionTools } from '@/components/questions/question-tools';
 import { QuotedEntry } from '@/components/questions/quoted-entry';
 import { Reply } from '@/components/questions/reply';
 import { ShopMargin } from '@/components/questions/shop-margin';
+import { listUnreachableOwners } from '@/db/queries/contacts';
 import { listMargin } from '@/db/queries/margin';
 import { listPenPasses, listPenTakers } from '@/db/queries/pen';
 import { findPhraseValues, listPhrases } from '@/db/queries/phrases';
@@ -35,9 +37,10 @@ export default async function QuestionPage({ params }: Props) {
   const reader = { id: viewer.id, isStaff: isStaffRole(viewer.role), zone: viewer.timeZone, nowMs: requestMs() };
   const isWriter = mayWrite(viewer, question, reader.nowMs);
   const standing = reader.isStaff ? 'assigned' : 'owner';
-  const [phrases, takers] = await Promise.all([
+  const [phrases, takers, unreachable] = await Promise.all([
     isWriter ? filledPhrases(viewer, question.id) : [],
     listPenTakers(viewer, question.id, reader.nowMs),
+    can(viewer.role, standing, 'contacts.read') ? listUnreachableOwners(viewer, question.orderNumber) : [],
   ]);
   return (
     <>
@@ -47,6 +50,7 @@ export default async function QuestionPage({ params }: Props) {
       <QuestionHeader question={question} reader={reader} />
       <div className="mx-auto grid max-w-[82rem] lg:grid-cols-[minmax(0,1fr)_23rem]">
         <div className="min-w-0 px-4.5 py-8 md:px-10">
+          <UnreachableNotice owners={unreachable} className="mb-8" />
           {question.entry && (
             <div className="pb-9 md:pl-32">
               <QuotedEntry

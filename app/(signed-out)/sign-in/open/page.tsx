@@ -1,7 +1,7 @@
 import type { Metadata } from 'next';
 import { OpenButton } from '@/components/sign-in/open-button';
 import { SignedOutPage } from '@/components/shell/signed-out-page';
-import { findShop } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 
 export const metadata: Metadata = { title: 'Sign in' };
 

@@ -3,7 +3,7 @@ import Link from 'next/link';
 import { CodeForm } from '@/components/sign-in/code-form';
 import { SignedOutPage } from '@/components/shell/signed-out-page';
 import { Notice } from '@/components/ui/notice';
-import { findShop } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 import { env } from '@/lib/env';
 
 export const metadata: Metadata = { title: 'Look at your mail' };

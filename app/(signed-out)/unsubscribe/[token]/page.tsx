@@ -2,7 +2,7 @@ import type { Metadata } from 'next';
 import { stopDiaryMail } from './actions';
 import { StopForm } from '@/components/mail/stop-form';
 import { SignedOutPage } from '@/components/shell/signed-out-page';
-import { findShop } from '@/db/queries/mail-content';
+import { findShop } from '@/db/queries/shop';
 
 export const metadata: Metadata = { title: 'Diary mail' };
 

@@ -1,7 +1,7 @@
 'use server';
 
 import { redirect } from 'next/navigation';
-import { stepIn as stepInOn } from '@/db/queries/people';
+import { stepIn as stepInOn } from '@/db/queries/assignments';
 import { action } from '@/lib/action';
 import { stepInForm } from '@/lib/validation/people';
 

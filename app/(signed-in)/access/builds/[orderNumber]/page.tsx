@@ -8,7 +8,7 @@ import { TakeOff } from '@/components/access/take-off';
 import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { LinkButton } from '@/components/ui/button';
 import { reviewBuild } from '@/db/queries/access-review';
-import { listStaffPeople } from '@/db/queries/people';
+import { listStaffPeople } from '@/db/queries/assignments';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';
 

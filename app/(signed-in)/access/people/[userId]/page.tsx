@@ -9,7 +9,7 @@ import { PlaceList } from '@/components/access/place-list';
 import { TakeOff } from '@/components/access/take-off';
 import { PageFrame, PageSection } from '@/components/people/page-frame';
 import { listAssignmentsOf, listRulesOf, listStandingsOf, requirePersonPage } from '@/db/queries/access-review';
-import { listDepartments } from '@/db/queries/people';
+import { listDepartments } from '@/db/queries/departments';
 import { isStaffRole } from '@/lib/access';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';

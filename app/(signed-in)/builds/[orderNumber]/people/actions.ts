@@ -1,7 +1,8 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
-import { addCompanion, holdBuild, removeCompanion } from '@/db/queries/people';
+import { addCompanion, removeCompanion } from '@/db/queries/companions';
+import { holdBuild } from '@/db/queries/holds';
 import { action } from '@/lib/action';
 import { wakeMail } from '@/lib/jobs/run';
 import { holdForm, holdUntilMs, openForm } from '@/lib/validation/hold';

@@ -13,6 +13,7 @@ import { SpecTable } from '@/components/specs/spec-table';
 import { UnitFrame } from '@/components/specs/unit-frame';
 import { SectionHeading } from '@/components/ui/section-heading';
 import { listChangeRequests } from '@/db/queries/change-requests';
+import { listDrawings } from '@/db/queries/documents';
 import { listMaterials } from '@/db/queries/materials';
 import { listProofLines } from '@/db/queries/proofs';
 import { findDraft, listTemplates } from '@/db/queries/spec-drafts';
@@ -22,6 +23,7 @@ import { listVersions } from '@/db/queries/spec-versions';
 import { can } from '@/lib/access';
 import { openBuild, orNotFound } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';
+import { nameDrawings } from '@/lib/specs/drawings';
 import { shownUnitFrom, UNIT_COOKIE } from '@/lib/specs/shown-unit';
 
 export async function generateMetadata({ params }: PageProps<'/builds/[orderNumber]/spec'>): Promise<Metadata> {
@@ -37,11 +39,12 @@ export default async function SpecPage({ params }: PageProps<'/builds/[orderNumb
     const templates = may('spec.edit') ? await listTemplates(viewer, orderNumber) : null;
     return <SpecEmpty orderNumber={orderNumber} templates={templates} hasDraft={shown !== null} start={start} />;
   }
-  const [sheet, versions, ground, materials, changes, draft, jar] = await Promise.all([
+  const [sheet, versions, ground, materials, drawings, changes, draft, jar] = await Promise.all([
     listProofLines(viewer, orderNumber),
     listVersions(viewer, orderNumber),
     requireFreezeGround(viewer, orderNumber),
     listMaterials(viewer, orderNumber),
+    listDrawings(viewer, orderNumber),
     listChangeRequests(viewer, orderNumber),
     may('spec.edit') ? findDraft(viewer, orderNumber) : null,
     cookies(),
@@ -54,6 +57,7 @@ export default async function SpecPage({ params }: PageProps<'/builds/[orderNumb
     nowMs,
     isDelivered: build.deliveredAt !== null,
     materials: Object.fromEntries(materials.map(({ key, name }) => [key, name])),
+    drawings: nameDrawings(drawings, viewer.timeZone),
     papersKeys: new Set(materials.filter((one) => one.papersMayBeNeeded).map(({ key }) => key)),
   };
   const judged = shown.state === 'signed' ? sheet.lines : shown.document.items.map(unproven);

@@ -1,4 +1,5 @@
 import type { Metadata } from 'next';
+import { FloorNav } from '@/components/floor/floor-nav';
 import { PrintButton } from '@/components/floor/print-button';
 import { RackList } from '@/components/floor/rack-list';
 import { LinkButton } from '@/components/ui/button';
@@ -27,22 +28,25 @@ export default async function RackPage({ params }: PageProps<'/floor/racks/[rack
   const { rows, routes, others } = await orNotFound(listRack(viewer, rack, nowMs));
   const count = rows.length === 1 ? 'One build' : `${rows.length} builds`;
   return (
-    <div className="mx-auto grid max-w-[60rem] grid-cols-[minmax(0,1fr)] gap-5 px-4.5 py-8 md:px-10 print:max-w-none print:p-0">
-      <div className="flex flex-wrap items-end justify-between gap-4">
-        <div>
-          <h1 className="text-3xl first-letter:uppercase">{rack}</h1>
-          <p className="mt-1 text-soft">
-            {count}, {dayWords(nowMs, viewer.timeZone, nowMs)}
-          </p>
+    <>
+      <FloorNav />
+      <div className="mx-auto grid max-w-[60rem] grid-cols-[minmax(0,1fr)] gap-5 px-4.5 py-8 md:px-10 print:max-w-none print:p-0">
+        <div className="flex flex-wrap items-end justify-between gap-4">
+          <div>
+            <h1 className="text-3xl first-letter:uppercase">{rack}</h1>
+            <p className="mt-1 text-soft">
+              {count}, {dayWords(nowMs, viewer.timeZone, nowMs)}
+            </p>
+          </div>
+          <div className="flex flex-wrap gap-3 print:hidden">
+            <LinkButton variant="quiet" className="min-h-11" href={`/floor?rack=${encodeURIComponent(rack)}`}>
+              Move them on the floor
+            </LinkButton>
+            <PrintButton />
+          </div>
         </div>
-        <div className="flex flex-wrap gap-3 print:hidden">
-          <LinkButton variant="quiet" className="min-h-11" href={`/floor?rack=${encodeURIComponent(rack)}`}>
-            Move them on the floor
-          </LinkButton>
-          <PrintButton />
-        </div>
+        <RackList rows={rows} routes={routes} others={others} />
       </div>
-      <RackList rows={rows} routes={routes} others={others} />
-    </div>
+    </>
   );
 }

@@ -10,6 +10,7 @@ import { SignOffHeader } from '@/components/sign-offs/sign-off-header';
 import { Subject } from '@/components/sign-offs/subject';
 import { LinkButton } from '@/components/ui/button';
 import { shopDay } from '@/db/queries/calendar';
+import { listDrawings } from '@/db/queries/documents';
 import { listMaterials } from '@/db/queries/materials';
 import { findItemLabel, findSubject } from '@/db/queries/sign-off-subjects';
 import { requireSignOff, type SignOffPage } from '@/db/queries/sign-offs';
@@ -17,6 +18,7 @@ import { can } from '@/lib/access';
 import { orNotFound, pageViewer } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';
 import { chainOf } from '@/lib/sign-offs/chain';
+import { nameDrawings } from '@/lib/specs/drawings';
 
 type Props = PageProps<'/builds/[orderNumber]/sign-offs/[signOffId]'>;
 
@@ -35,9 +37,10 @@ export default async function SignOffPage({ params }: Props) {
   const viewer = await pageViewer();
   const signOff = await load(orderNumber, signOffId);
   const nowMs = requestMs();
-  const [subject, materials, itemLabel, today] = await Promise.all([
+  const [subject, materials, drawings, itemLabel, today] = await Promise.all([
     findSubject(viewer, signOff),
     listMaterials(viewer, orderNumber),
+    listDrawings(viewer, orderNumber),
     findItemLabel(viewer, signOff),
     shopDay(nowMs),
   ]);
@@ -49,7 +52,13 @@ export default async function SignOffPage({ params }: Props) {
       <div className="grid min-w-0 content-start gap-8">
         <SignOffHeader signOff={signOff} reader={reader} />
         <Answered signOff={signOff} reader={reader} />
-        <Subject subject={subject} title={signOff.title} materials={names} itemLabel={itemLabel} />
+        <Subject
+          subject={subject}
+          title={signOff.title}
+          materials={names}
+          drawings={nameDrawings(drawings, viewer.timeZone)}
+          itemLabel={itemLabel}
+        />
         {may('sign_off.answer') && signOff.state === 'asked' && (
           <AnswerForms
             signOffId={signOff.id}

@@ -8,6 +8,7 @@ import { LinkButton } from '@/components/ui/button';
 import { EmptyState } from '@/components/ui/empty-state';
 import { SectionHeading } from '@/components/ui/section-heading';
 import { shopDay } from '@/db/queries/calendar';
+import { listDrawings } from '@/db/queries/documents';
 import { listMaterials } from '@/db/queries/materials';
 import { findDraft } from '@/db/queries/spec-drafts';
 import { requireFreezeGround } from '@/db/queries/spec-freeze';
@@ -18,6 +19,7 @@ import { dayWords, clockWords } from '@/lib/date-words';
 import { requestMs } from '@/lib/request';
 import { dueRange } from '@/lib/sign-offs/due-day';
 import { canChange } from '@/lib/specs/can-change';
+import { nameDrawings } from '@/lib/specs/drawings';
 import { keepFrozen } from '@/lib/specs/freeze';
 
 export async function generateMetadata({ params }: PageProps<'/builds/[orderNumber]/spec/edit'>): Promise<Metadata> {
@@ -40,10 +42,11 @@ export default async function EditSpecPage({ params }: PageProps<'/builds/[order
       </SpecFrame>
     );
   const nowMs = requestMs();
-  const [ground, versions, materials, today] = await Promise.all([
+  const [ground, versions, materials, drawings, today] = await Promise.all([
     requireFreezeGround(viewer, orderNumber),
     listVersions(viewer, orderNumber),
     listMaterials(viewer, orderNumber),
+    listDrawings(viewer, orderNumber),
     shopDay(nowMs),
   ]);
   const clock = { ...ground, zone: viewer.timeZone, nowMs };
@@ -62,7 +65,11 @@ export default async function EditSpecPage({ params }: PageProps<'/builds/[order
       title="Edit the spec"
       intro={`Saved last by ${draft.editedBy}, ${dayWords(draft.editedAt, viewer.timeZone, nowMs)} at ${clockWords(draft.editedAt, viewer.timeZone)}. The owner sees only what is sent.`}
     >
-      <EditSurroundings stages={ground.stages.map(asOption)} materials={materials.map(asOption)}>
+      <EditSurroundings
+        stages={ground.stages.map(asOption)}
+        materials={materials.map(asOption)}
+        drawings={nameDrawings(drawings, viewer.timeZone)}
+      >
         <SpecForm orderNumber={orderNumber} saved={saved} canChange={Object.fromEntries(changeOf)} save={save} />
       </EditSurroundings>
       {can(viewer.role, build.standing, 'spec.send') && (

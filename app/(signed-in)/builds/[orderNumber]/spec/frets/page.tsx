@@ -9,6 +9,7 @@ import { cookies } from 'next/headers';
 import { findShownSpec } from '@/db/queries/spec-shown';
 import { openBuild, orNotFound } from '@/lib/auth/page';
 import { fretTable } from '@/lib/craft/fret-table';
+import { ruleOf18Words, slotErrorWords } from '@/lib/craft/fret-words';
 import { scalePlanOf } from '@/lib/specs/board';
 import { shownName } from '@/lib/specs/shown-name';
 import { shownUnitFrom, UNIT_COOKIE } from '@/lib/specs/shown-unit';
@@ -49,6 +50,9 @@ export default async function FretsPage({ params }: PageProps<'/builds/[orderNum
       >
         <SpecBoard document={shown.document} />
         <FretTable table={table.table} className="max-w-3xl" />
+        <p className="max-w-[62ch] text-soft">
+          {slotErrorWords(table.table)} {ruleOf18Words(table.table)}
+        </p>
       </SpecFrame>
     </UnitFrame>
   );

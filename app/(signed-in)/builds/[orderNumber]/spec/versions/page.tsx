@@ -7,6 +7,7 @@ import { VersionList } from '@/components/specs/version-list';
 import { EmptyState } from '@/components/ui/empty-state';
 import { SectionHeading } from '@/components/ui/section-heading';
 import { listStages } from '@/db/queries/builds';
+import { listDrawings } from '@/db/queries/documents';
 import { listMaterials } from '@/db/queries/materials';
 import { findDraft } from '@/db/queries/spec-drafts';
 import { listVersions, requireComparison } from '@/db/queries/spec-versions';
@@ -15,6 +16,7 @@ import { openBuild, orNotFound } from '@/lib/auth/page';
 import { requestMs } from '@/lib/request';
 import { chosenSides, sideName } from '@/lib/specs/compare';
 import { diffSpecs } from '@/lib/specs/diff';
+import { nameDrawings } from '@/lib/specs/drawings';
 import { shownUnitFrom, UNIT_COOKIE } from '@/lib/specs/shown-unit';
 
 export async function generateMetadata({
@@ -63,15 +65,17 @@ export default async function VersionsPage({ params, searchParams }: PageProps<'
   );
 
   async function changesBetween({ from, to }: NonNullable<typeof sides>) {
-    const [{ before, after }, materials, stages, jar] = await Promise.all([
+    const [{ before, after }, materials, drawings, stages, jar] = await Promise.all([
       orNotFound(requireComparison(viewer, orderNumber, from, to)),
       listMaterials(viewer, orderNumber),
+      listDrawings(viewer, orderNumber),
       listStages(viewer, build.id),
       cookies(),
     ]);
     return diffSpecs(before, after, {
       show: shownUnitFrom(jar.get(UNIT_COOKIE)?.value),
       materials: Object.fromEntries(materials.map(({ key, name }) => [key, name])),
+      drawings: nameDrawings(drawings, viewer.timeZone),
       stageNames: Object.fromEntries(stages.map(({ key, name }) => [key, name])),
     });
   }
