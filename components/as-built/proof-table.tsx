@@ -16,13 +16,13 @@ type ProofTableProps = { group: AsBuiltSheet['groups'][number]; orderNumber: str
 /** One group of the spec: what was signed beside what was measured, and the entry that shows it. */
 export function ProofTable({ group, orderNumber }: ProofTableProps) {
   return (
-    <Table caption={group.name} isCaptionHidden={false} columns={columns}>
+    <Table caption={group.name} isCaptionHidden={false} columns={columns} isStacked>
       {group.rows.map((row) => (
         <Row key={row.key}>
           <RowHead className="min-w-36">
             <bdi>{row.label}</bdi>
           </RowHead>
-          <Cell note={row.allowed} className="min-w-28 font-semibold">
+          <Cell title="As signed" note={row.allowed} className="min-w-28 font-semibold">
             <bdi>{row.signed}</bdi>
             {row.drawing && (
               <span className="block">
@@ -31,7 +31,7 @@ export function ProofTable({ group, orderNumber }: ProofTableProps) {
             )}
           </Cell>
           <Built row={row} />
-          <Cell className="min-w-44">
+          <Cell title="Proof" className="min-w-44 max-md:col-span-2">
             <ProofOf row={row} orderNumber={orderNumber} />
           </Cell>
         </Row>
@@ -43,7 +43,7 @@ export function ProofTable({ group, orderNumber }: ProofTableProps) {
 function Built({ row }: { row: AsBuiltRow }) {
   const isOff = row.state === 'out_of_tolerance';
   return (
-    <Cell className="min-w-32">
+    <Cell title="As built" className="min-w-32">
       {row.measured !== null && <bdi className="font-semibold">{row.measured}</bdi>}
       {row.measured !== null && row.within !== null && row.within !== row.allowed && (
         <p className="text-sm text-soft">{row.within}</p>

@@ -27,22 +27,24 @@ type CheckLinesProps = {
 /** Signed items with how they stand and what mends them. */
 export function CheckLines({ caption, lastColumn, lines, nextOf }: CheckLinesProps) {
   return (
-    <Table caption={caption} columns={columns(lastColumn)}>
+    <Table caption={caption} columns={columns(lastColumn)} isStacked>
       {lines.map((line) => (
         <Row key={line.item.key} id={`item-${line.item.key}`}>
           <RowHead className="min-w-36">
             <bdi>{line.item.label}</bdi>
           </RowHead>
-          <Cell className="min-w-28">
+          <Cell title="As signed" className="min-w-28">
             <bdi>{concededWords(line).signed}</bdi>
           </Cell>
-          <Cell note={line.withinWords} className="min-w-36">
+          <Cell title="As built" note={line.withinWords} className="min-w-36">
             {line.measured !== null && <bdi className="font-semibold">{line.measured}, </bdi>}
             <span className={clsx(line.state === 'out_of_tolerance' && 'font-semibold text-late')}>
               {words[line.state]}
             </span>
           </Cell>
-          <Cell className="min-w-52">{nextOf(line)}</Cell>
+          <Cell title={lastColumn} className="min-w-52 max-md:col-span-2">
+            {nextOf(line)}
+          </Cell>
         </Row>
       ))}
     </Table>

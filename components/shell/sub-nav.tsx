@@ -2,6 +2,7 @@
 
 import Link from 'next/link';
 import { usePathname } from 'next/navigation';
+import { useEffect, useRef } from 'react';
 import { currentHref } from './current-href';
 
 export type SubLink = { href: string; label: string };
@@ -20,13 +21,18 @@ export function SubNav({ label, links, back }: SubNavProps) {
     usePathname(),
     links.map(({ href }) => href),
   );
+  const row = useRef<HTMLUListElement>(null);
+  useEffect(() => {
+    // On a phone the row scrolls: the page one is on must not be out of it.
+    row.current?.querySelector('[aria-current]')?.scrollIntoView({ block: 'nearest', inline: 'nearest' });
+  }, [current]);
   return (
     <nav
       aria-label={label}
       data-sub-nav={back ? 'alone' : 'below'}
       className="border-b border-line bg-sheet print:hidden"
     >
-      <ul role="list" className="relative mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
+      <ul ref={row} role="list" className="relative mx-auto flex max-w-[82rem] gap-1 overflow-x-auto px-2 md:px-10">
         {back && (
           <li className="md:hidden">
             <Link href={back.href} className="flex min-h-11 items-center px-3 whitespace-nowrap text-soft">

@@ -89,10 +89,12 @@ const lastNames = [
 ];
 const zones = ['Europe/London', 'America/New_York', 'Europe/Berlin', 'America/Los_Angeles', 'Asia/Tokyo'];
 
-/** Everybody else who has ordered, by combination; as many as there are pairs of names. */
-export const furtherBuyers = firstNames.flatMap((first, row) =>
-  lastNames.map((last, column) => client('buyer', `${first} ${last}`, zones[(row + column) % zones.length] ?? 'UTC')),
-);
+/** Everybody else who has ordered: as many as there are pairs of names, no two of one name beside each other. */
+export const furtherBuyers = Array.from({ length: firstNames.length * lastNames.length }, (_, index) => {
+  const round = Math.floor(index / firstNames.length);
+  const [first, last] = [firstNames[index % firstNames.length], lastNames[(index + round + 4) % lastNames.length]];
+  return client('buyer', `${first} ${last}`, zones[index % zones.length] ?? 'UTC');
+});
 
 /** Lets the owner of the first build be looked over the shoulder. */
 export const companion = client('buyer', 'Felix Oyelaran', 'Europe/Lisbon');

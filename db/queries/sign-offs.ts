@@ -1,4 +1,4 @@
-import { and, asc, eq, gt, inArray, or, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, inArray, or, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { ownerNameOf } from './owners';
 import { requireCan } from './standing';
@@ -49,12 +49,12 @@ const rowsFor = (viewer: Viewer) =>
 
 const openFirst = sql`case ${signOffs.state} when 'asked' then 0 when 'change_asked' then 1 else 2 end`;
 
-/** The sign-offs of one build: what waits first, by its day; then the rest. @throws OutOfReach or Denied */
+/** The sign-offs of one build: what waits first, then the rest, newest first. @throws OutOfReach or Denied */
 export async function listBuildSignOffs(viewer: Viewer, orderNumber: string) {
   const build = await requireCan(viewer, 'sign_off.read', orderNumber);
   return rowsFor(viewer)
     .where(and(eq(signOffs.buildId, build.id), buildIsVisible(viewer), signOffIsVisible(viewer)))
-    .orderBy(openFirst, asc(signOffs.dueOn), asc(signOffs.askedAt))
+    .orderBy(openFirst, desc(signOffs.askedAt), desc(signOffs.id))
     .limit(MAX_OF_BUILD);
 }
 

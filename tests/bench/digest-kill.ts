@@ -159,6 +159,7 @@ export const digestKill: Bench = {
         next = startWorker(file, place);
         await misbehave(place, kinds[kill % kinds.length] ?? MIDWAY);
         await killOne(worker, kill * STEP_MS, longestMs);
+        if ((kill + 1) % 50 === 0) console.log(`  killed ${kill + 1} of ${KILLS}`);
       }
       await workThrough(await next, 'until done', KILLS * STEP_MS);
       await ended(await next, 'SIGTERM');

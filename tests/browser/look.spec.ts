@@ -11,13 +11,16 @@ const build = `/builds/${ORDER}`;
 const pages: [keyof typeof people | 'nobody', string[]][] = [
   ['nobody', ['/sign-in', '/sign-in/sent', '/sign-in/open', '/unsubscribe/some-token']],
   ['buyer', [build, '/builds', `${build}/people`, `${build}/questions`, `${build}/questions/new`, '/questions', '/me']],
-  ['buyer', [`${build}/window`]],
+  ['buyer', [`${build}/window`, `${build}/spec`, `${build}/spec/versions`, `${build}/spec/frets`]],
+  ['buyer', [`${build}/spec/changes`, `${build}/sign-offs`, `${build}/readings`, `${build}/as-built`]],
+  ['buyer', ['/sign-offs', '/me/digest-preview']],
   ['companion', [build, `${build}/people`]],
   ['builder', ['/bench', `/bench/${ORDER}`, '/builds', '/questions', '/me', build]],
   ['builder', ['/floor', '/floor/load', '/floor/windows', '/floor/racks/rack%209']],
   ['rep', ['/builds', '/questions', build, `${build}/people`]],
   ['rep', ['/questions?show=late', '/questions/phrases', '/search', '/search?words=edge']],
-  ['admin', ['/access/topics']],
+  ['rep', [`${build}/spec/edit`, `${build}/checks`, `${build}/final-check`, `${build}/sign-offs/new`]],
+  ['admin', ['/access/topics', '/access/checks']],
   ['admin', ['/access/calendar', '/access/stages', '/floor']],
   [
     'admin',
