@@ -37,13 +37,13 @@ export function NeckNames({ names, className }: { names: string[]; className?: s
         role="img"
         aria-label={`Stages: ${names.join(', ')}`}
         width="100%"
-        height="84"
+        height="92"
         className="block overflow-visible text-xs"
       >
         {names.map((name, index) => {
           const middle = ((boundaries[index] ?? 0) + (boundaries[index + 1] ?? 1)) / 2;
           return (
-            <svg key={name} x={`${Number((middle * 100).toFixed(3))}%`} y="78" className="overflow-visible">
+            <svg key={name} x={`${Number((middle * 100).toFixed(3))}%`} y="86" className="overflow-visible">
               <text transform="rotate(-48)" className="fill-soft">
                 {name}
               </text>

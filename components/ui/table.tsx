@@ -79,7 +79,7 @@ export function Cell({
   return (
     <td role="cell" className={clsx(cellClass, isNumeric && 'text-right', className)} {...cell}>
       {title && (
-        <span aria-hidden="true" className="block text-xs text-soft md:hidden">
+        <span aria-hidden="true" className="block text-xs font-normal text-soft md:hidden">
           {title}
         </span>
       )}

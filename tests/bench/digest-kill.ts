@@ -48,8 +48,8 @@ const misbehave = ({ env }: MailPlace, fault: Faults) =>
   });
 
 function startWorker(file: string, { env }: MailPlace): Promise<ChildProcess> {
-  // The bundle finds the packages from the folder of the project.
-  return ready(fork(file, { env, cwd: process.cwd(), stdio: ['ignore', 'inherit', 'inherit', 'ipc'] }));
+  // The bundle finds the packages from the folder of the project, and needs none of what this process was started with.
+  return ready(fork(file, { env, execArgv: [], cwd: process.cwd(), stdio: ['ignore', 'inherit', 'inherit', 'ipc'] }));
 }
 
 type Work = 'once' | 'forever' | 'until done';
