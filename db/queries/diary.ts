@@ -1,5 +1,5 @@
 import { and, eq, sql, type SQL } from 'drizzle-orm';
-import { prepared } from '../prepared';
+import { preparedByRole } from '../prepared';
 import { buildIsVisible, entryIsVisible } from '../scope';
 import { builds, buildStages, entries, photos, proofs, readings, users } from '../schema';
 import { isStaffRole, type Role } from '@/lib/access';
@@ -48,7 +48,7 @@ export function parseCursor(text: string | null): DiaryCursor | null {
  * @throws OutOfReach
  */
 export async function diaryState(viewer: Viewer, orderNumber: string): Promise<{ buildId: string; etag: string }> {
-  const state = await stateQueries[viewer.role]().get({ viewerId: viewer.id, orderNumber });
+  const state = await stateOf(viewer.role).get({ viewerId: viewer.id, orderNumber });
   if (!state) throw new OutOfReach(orderNumber);
   return state;
 }
@@ -88,50 +88,32 @@ const recentPages = new RecentTexts(64_000_000);
 
 /** The page with the state it was made in: both from one statement, so that a page is never kept under another state. */
 function makePage(viewer: Viewer, buildId: string, before: DiaryCursor | null) {
-  const query = (before ? olderPageQueries : pageQueries)[viewer.role];
-  return query().get({ viewerId: viewer.id, buildId, ...before });
+  const queryOf = before ? olderPageOf : pageOf;
+  return queryOf(viewer.role).get({ viewerId: viewer.id, buildId, ...before });
 }
-
-const readerOf = (role: Role) => ({ id: sql.placeholder('viewerId'), role });
 
 const etagOf = (role: Role) =>
   sql<string>`'"${sql.raw(isStaffRole(role) ? 's' : 'c')}' || ${builds.diaryRevision} || '"'`;
 
-/** A role decides the shape of the conditions, so each has a text of its own. */
-function forEachRole<Query>(build: (role: Role) => Query): Record<Role, Query> {
-  return {
-    buyer: build('buyer'),
-    artist: build('artist'),
-    builder: build('builder'),
-    rep: build('rep'),
-    admin: build('admin'),
-  };
-}
-
-const stateQueries = forEachRole((role) =>
-  prepared((on) =>
-    on
-      .select({ buildId: builds.id, etag: etagOf(role) })
-      .from(builds)
-      .where(and(eq(builds.orderNumber, sql.placeholder('orderNumber')), buildIsVisible(readerOf(role))))
-      .prepare(),
-  ),
+const stateOf = preparedByRole((on, reader) =>
+  on
+    .select({ buildId: builds.id, etag: etagOf(reader.role) })
+    .from(builds)
+    .where(and(eq(builds.orderNumber, sql.placeholder('orderNumber')), buildIsVisible(reader)))
+    .prepare(),
 );
 
-function preparePages(hasCursor: boolean) {
-  return forEachRole((role) =>
-    prepared((on) =>
-      on
-        .select({ etag: etagOf(role), page: sql<string>`(${pageJson(role, hasCursor)})` })
-        .from(builds)
-        .where(and(eq(builds.id, sql.placeholder('buildId')), buildIsVisible(readerOf(role))))
-        .prepare(),
-    ),
+const preparePages = (hasCursor: boolean) =>
+  preparedByRole((on, reader) =>
+    on
+      .select({ etag: etagOf(reader.role), page: sql<string>`(${pageJson(reader.role, hasCursor)})` })
+      .from(builds)
+      .where(and(eq(builds.id, sql.placeholder('buildId')), buildIsVisible(reader)))
+      .prepare(),
   );
-}
 
-const pageQueries = preparePages(false);
-const olderPageQueries = preparePages(true);
+const pageOf = preparePages(false);
+const olderPageOf = preparePages(true);
 
 /**
  * The page of the outer query's build. SQLite writes the JSON: one row crosses into JavaScript instead of one for each

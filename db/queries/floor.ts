@@ -7,10 +7,9 @@ import { listDepartments } from './departments';
 import { requireCan } from './standing';
 import { db } from '../client';
 import { correlated } from '../correlated';
-import { prepared } from '../prepared';
+import { preparedByRole } from '../prepared';
 import { buildIsKnownByNumber, buildIsVisible, isOpen } from '../scope';
 import { assignments, builds, entries, questions, readyWindows, shop, users } from '../schema';
-import type { Role } from '@/lib/access';
 import { OutOfReach } from '@/lib/errors';
 import { makeRow } from '@/lib/floor/make-row';
 import type { Floor, FloorFigures, FloorRoute, FloorRow } from '@/lib/floor/row';
@@ -22,36 +21,30 @@ import { judge } from '@/lib/schedule/calibration';
 import { coverageOf } from '@/lib/schedule/scores';
 import type { Viewer } from '@/lib/viewer';
 
-const readerOf = (role: Role) => ({ id: sql.placeholder('viewerId'), role });
 const onTheFloor = isNull(builds.deliveredAt);
 
-function prepareState(role: Role) {
-  const reader = readerOf(role);
-  return prepared((on) =>
-    on
-      .select({
-        zone: shop.timeZone,
-        settings: sql<string>`${shop.scheduleChangedAt} || ' ' || ${shop.windowsComputedAt}`,
-        reached: correlated(
-          sql<string>`(select group_concat(${builds.orderNumber} || ' ' || ${builds.diaryRevision}) from ${builds} where ${and(onTheFloor, buildIsVisible(reader))})`,
-        ),
-        known: correlated(
-          sql<string>`(select group_concat(${builds.orderNumber}) from ${builds} where ${and(onTheFloor, buildIsKnownByNumber(reader))})`,
-        ),
-        own: correlated(
-          sql<string>`(select count(*) || ' ' || coalesce(sum(${assignments}.rowid), 0) from ${assignments} where ${assignments.userId} = ${reader.id} and ${assignments.endedAt} is null)`,
-        ),
-        // Not of the reader's builds only: more of them would make the mark dearer, and nothing can be read out of it.
-        asked: correlated(
-          sql<string>`(select group_concat(${questions.id} || ' ' || coalesce(${questions.penHolderId}, '') || ' ' || coalesce(${questions.dueAt} < ${sql.placeholder('nowMs')}, '')) from ${questions} where ${questions.state} = 'waiting')`,
-        ),
-      })
-      .from(shop)
-      .prepare(),
-  );
-}
-
-const stateQueries = { builder: prepareState('builder'), rep: prepareState('rep'), admin: prepareState('admin') };
+const stateOf = preparedByRole((on, reader) =>
+  on
+    .select({
+      zone: shop.timeZone,
+      settings: sql<string>`${shop.scheduleChangedAt} || ' ' || ${shop.windowsComputedAt}`,
+      reached: correlated(
+        sql<string>`(select group_concat(${builds.orderNumber} || ' ' || ${builds.diaryRevision}) from ${builds} where ${and(onTheFloor, buildIsVisible(reader))})`,
+      ),
+      known: correlated(
+        sql<string>`(select group_concat(${builds.orderNumber}) from ${builds} where ${and(onTheFloor, buildIsKnownByNumber(reader))})`,
+      ),
+      own: correlated(
+        sql<string>`(select count(*) || ' ' || coalesce(sum(${assignments}.rowid), 0) from ${assignments} where ${assignments.userId} = ${reader.id} and ${assignments.endedAt} is null)`,
+      ),
+      // Not of the reader's builds only: more of them would make the mark dearer, and nothing can be read out of it.
+      asked: correlated(
+        sql<string>`(select group_concat(${questions.id} || ' ' || coalesce(${questions.penHolderId}, '') || ' ' || coalesce(${questions.dueAt} < ${sql.placeholder('nowMs')}, '')) from ${questions} where ${questions.state} = 'waiting')`,
+      ),
+    })
+    .from(shop)
+    .prepare(),
+);
 
 /**
  * The state of the floor for this viewer, as a mark that changes with everything their page would show differently. Which
@@ -60,7 +53,7 @@ const stateQueries = { builder: prepareState('builder'), rep: prepareState('rep'
 async function floorState(viewer: Viewer, nowMs: number): Promise<string> {
   const { role } = viewer;
   if (role !== 'builder' && role !== 'rep' && role !== 'admin') throw new Error('the floor is for staff');
-  const state = await stateQueries[role]().get({ viewerId: viewer.id, nowMs });
+  const state = await stateOf(role).get({ viewerId: viewer.id, nowMs });
   const today = dayOf(nowMs, state?.zone ?? 'UTC');
   const whole = JSON.stringify([viewer.id, role, viewer.department, viewer.timeZone, today, state]);
   return `"${createHash('sha1').update(whole).digest('base64url')}"`;

@@ -1,7 +1,7 @@
 import { and, desc, eq, isNull, sql } from 'drizzle-orm';
 import { alias, unionAll } from 'drizzle-orm/sqlite-core';
 import { db } from '../client';
-import { prepared } from '../prepared';
+import { preparedByRole } from '../prepared';
 import { buildIsVisible, entryIsVisible, questionIsVisible } from '../scope';
 import {
   assignments,
@@ -14,7 +14,7 @@ import {
   standingAssignments,
   users,
 } from '../schema';
-import { isStaffRole, type Role } from '@/lib/access';
+import { isStaffRole } from '@/lib/access';
 import { markedExcerpt } from '@/lib/search/excerpt';
 import { matchQuery, searchWords } from '@/lib/search/match';
 import type { Viewer } from '@/lib/viewer';
@@ -83,45 +83,34 @@ function inPlaces(words: string, places: string[] | null): string {
  * is decided by the scope of each row's build, entry and question, in the same statement. Cross joins keep the order in
  * which SQLite looks, the build before the words, so that what is out of reach costs little.
  */
-const hitsFor = (role: Role) => {
-  const reader = { id: sql.placeholder('viewerId'), role };
+const hitsOf = preparedByRole((on, reader) => {
   const reads = sql`case when ${searchRows.kind} = 'entry' then ${entryIsVisible(reader)} else ${questionIsVisible(reader)} end`;
-  return prepared((on) =>
-    on
-      .select(hitColumns)
-      .from(sql`search_index`)
-      .crossJoin(searchRows)
-      .crossJoin(builds)
-      .leftJoin(entries, and(eq(searchRows.kind, 'entry'), eq(entries.id, searchRows.subjectId)))
-      .leftJoin(letters, and(eq(searchRows.kind, 'letter'), eq(letters.id, searchRows.subjectId)))
-      .leftJoin(questions, eq(questions.id, letters.questionId))
-      .leftJoin(author, sql`${author.id} = coalesce(${entries.authorId}, ${letters.authorId})`)
-      .where(
-        and(
-          sql`search_index match ${sql.placeholder('match')}`,
-          sql`search_index.rowid < ${sql.placeholder('before')}`,
-          sql`${searchRows.seq} = search_index.rowid`,
-          eq(builds.id, searchRows.buildId),
-          buildIsVisible(reader),
-          reads,
-        ),
-      )
-      .orderBy(desc(sql`search_index.rowid`))
-      .limit(PAGE + 1)
-      .prepare(),
-  );
-};
-
-const hits = {
-  buyer: hitsFor('buyer'),
-  artist: hitsFor('artist'),
-  builder: hitsFor('builder'),
-  rep: hitsFor('rep'),
-  admin: hitsFor('admin'),
-};
+  return on
+    .select(hitColumns)
+    .from(sql`search_index`)
+    .crossJoin(searchRows)
+    .crossJoin(builds)
+    .leftJoin(entries, and(eq(searchRows.kind, 'entry'), eq(entries.id, searchRows.subjectId)))
+    .leftJoin(letters, and(eq(searchRows.kind, 'letter'), eq(letters.id, searchRows.subjectId)))
+    .leftJoin(questions, eq(questions.id, letters.questionId))
+    .leftJoin(author, sql`${author.id} = coalesce(${entries.authorId}, ${letters.authorId})`)
+    .where(
+      and(
+        sql`search_index match ${sql.placeholder('match')}`,
+        sql`search_index.rowid < ${sql.placeholder('before')}`,
+        sql`${searchRows.seq} = search_index.rowid`,
+        eq(builds.id, searchRows.buildId),
+        buildIsVisible(reader),
+        reads,
+      ),
+    )
+    .orderBy(desc(sql`search_index.rowid`))
+    .limit(PAGE + 1)
+    .prepare();
+});
 
 const findHits = (viewer: Viewer, match: string, before: number | null) =>
-  hits[viewer.role]().execute({ viewerId: viewer.id, match, before: before ?? AFTER_ALL });
+  hitsOf(viewer.role).execute({ viewerId: viewer.id, match, before: before ?? AFTER_ALL });
 
 type Hit = Awaited<ReturnType<typeof findHits>>[number];
 

@@ -1,9 +1,9 @@
 import { and, eq, isNull, or, sql, type SQL } from 'drizzle-orm';
 import { correlated } from '../correlated';
-import { prepared } from '../prepared';
+import { preparedByRole } from '../prepared';
 import { buildIsVisible, questionIsVisible, signOffIsVisible, type Reader } from '../scope';
 import { builds, questions, shop, signOffs } from '../schema';
-import { isClientRole, type Role } from '@/lib/access';
+import { isClientRole } from '@/lib/access';
 import type { Viewer } from '@/lib/viewer';
 
 /** To a builder the questions whose pen they hold, to a rep also those that nobody answers. */
@@ -23,29 +23,18 @@ function waitingSignOffs(reader: Reader): SQL<number> {
   return sql<number>`(select count(*) from ${signOffs} join ${builds} on ${builds.id} = ${signOffs.buildId} where ${waits})`;
 }
 
-function prepareShell(role: Role) {
-  const reader = { id: sql.placeholder('viewerId'), role };
-  return prepared((on) =>
-    on
-      .select({
-        shopName: shop.name,
-        questions: correlated(waitingQuestions(reader)),
-        signOffs: correlated(waitingSignOffs(reader)),
-      })
-      .from(shop)
-      .prepare(),
-  );
-}
-
-const shells = {
-  buyer: prepareShell('buyer'),
-  artist: prepareShell('artist'),
-  builder: prepareShell('builder'),
-  rep: prepareShell('rep'),
-  admin: prepareShell('admin'),
-};
+const shellOf = preparedByRole((on, reader) =>
+  on
+    .select({
+      shopName: shop.name,
+      questions: correlated(waitingQuestions(reader)),
+      signOffs: correlated(waitingSignOffs(reader)),
+    })
+    .from(shop)
+    .prepare(),
+);
 
 /** What stands over every page of this viewer: the shop's name, and how many questions and sign-offs wait for them. */
 export async function findShell({ id, role }: Pick<Viewer, 'id' | 'role'>) {
-  return (await shells[role]().get({ viewerId: id })) ?? { shopName: 'The shop', questions: 0, signOffs: 0 };
+  return (await shellOf(role).get({ viewerId: id })) ?? { shopName: 'The shop', questions: 0, signOffs: 0 };
 }
