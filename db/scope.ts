@@ -100,7 +100,7 @@ export function entryIsVisible(
 }
 
 /** Ready photos of entries, of letters and of what is signed, as far as this viewer reads those, and for staff those of inspections; an uploader also sees their own before it is posted or sent. */
-export function photoIsVisible(viewer: Viewer): SQL {
+export function photoIsVisible(viewer: Reader): SQL {
   const entry = alias(entries, 'photo_entry');
   const ofEntry = all(eq(entry.id, photos.entryId), entryIsVisible(viewer, entry));
   const ofReadableEntry = exists(from.select(one).from(entry).where(ofEntry));
@@ -115,7 +115,7 @@ export function photoIsVisible(viewer: Viewer): SQL {
   return all(eq(photos.state, 'ready'), readable);
 }
 
-function ofReadableLetter(viewer: Viewer): SQL {
+function ofReadableLetter(viewer: Reader): SQL {
   const ofLetter = all(
     eq(letters.id, photos.letterId),
     eq(questions.buildId, photos.buildId),
@@ -141,7 +141,7 @@ export function signOffIsVisible(viewer: Reader): SQL {
 }
 
 /** Checked drawings and samples of a visible build: staff all, its owner those that were put before them. */
-export function documentIsVisible(viewer: Viewer): SQL {
+export function documentIsVisible(viewer: Reader): SQL {
   const checked = eq(documents.state, 'ready');
   if (isStaffRole(viewer.role)) return checked;
   const asked = all(eq(signOffs.documentId, documents.id), signOffIsVisible(viewer));

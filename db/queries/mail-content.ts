@@ -1,6 +1,7 @@
-import { and, desc, eq, gt, inArray, isNull, sql } from 'drizzle-orm';
+import { and, desc, eq, gt, isNull, sql, type SQLWrapper } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { db } from '../client';
+import { preparedByRole } from '../prepared';
 import { buildIsVisible, entryIsVisible, isOpen, photoIsVisible, questionIsVisible } from '../scope';
 import {
   builds,
@@ -46,9 +47,11 @@ export type MailReader = NonNullable<Awaited<ReturnType<typeof findMailReader>>>
 /** The readings of an entry of the outer query, as JSON; in the one statement, because a digest run asks for thousands. */
 const readingsOfEntry = sql<string>`(select json_group_array(json_object('value', json(r.value), 'shown', json(r.shown))) filter (where json_valid(r.value) and json_valid(r.shown)) from (select ${readings.value}, ${readings.shown} from ${readings} where ${readings.entryId} = ${entries.id} order by ${readings.position}) r)`;
 
-/** Those of these entries that the reader may still read, newest first; of a held build nothing but its number. */
-export function listDigestEntries(reader: Viewer, entryIds: string[]) {
-  return db()
+/** One of the given ids; a list as JSON, because the number of values is part of a prepared text. */
+const isGiven = (id: SQLWrapper) => sql`${id} in (select value from json_each(${sql.placeholder('entryIds')}))`;
+
+const entriesOf = preparedByRole((on, reader) =>
+  on
     .select({
       id: entries.id,
       buildId: builds.id,
@@ -65,22 +68,29 @@ export function listDigestEntries(reader: Viewer, entryIds: string[]) {
     .innerJoin(builds, eq(builds.id, entries.buildId))
     .innerJoin(buildStages, eq(buildStages.id, entries.stageId))
     .innerJoin(users, eq(users.id, entries.authorId))
-    .where(and(inArray(entries.id, entryIds), buildIsVisible(reader), entryIsVisible(reader)))
+    .where(and(isGiven(entries.id), buildIsVisible(reader), entryIsVisible(reader)))
     .orderBy(desc(entries.datedAt), desc(entries.id))
-    .limit(MAX_ENTRIES_TOLD);
-}
+    .limit(MAX_ENTRIES_TOLD)
+    .prepare(),
+);
 
-/** The first photo of each of these entries that the reader may see. */
-export function listDigestPhotos(reader: Viewer, entryIds: string[]) {
-  return db()
+/** Those of these entries that the reader may still read, newest first; of a held build nothing but its number. */
+export const listDigestEntries = ({ id, role }: Viewer, entryIds: string[]) =>
+  entriesOf(role).all({ viewerId: id, entryIds: JSON.stringify(entryIds) });
+
+const photosOf = preparedByRole((on, reader) =>
+  on
     .select({ entryId: photos.entryId, outPrefix: photos.outPrefix, alt: photos.alt })
     .from(photos)
     .innerJoin(builds, eq(builds.id, photos.buildId))
-    .where(
-      and(inArray(photos.entryId, entryIds), eq(photos.position, 0), buildIsVisible(reader), photoIsVisible(reader)),
-    )
-    .limit(60);
-}
+    .where(and(isGiven(photos.entryId), eq(photos.position, 0), buildIsVisible(reader), photoIsVisible(reader)))
+    .limit(60)
+    .prepare(),
+);
+
+/** The first photo of each of these entries that the reader may see. */
+export const listDigestPhotos = ({ id, role }: Viewer, entryIds: string[]) =>
+  photosOf(role).all({ viewerId: id, entryIds: JSON.stringify(entryIds) });
 
 const writer = alias(users, 'writer');
 
