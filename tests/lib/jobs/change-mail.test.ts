@@ -5,12 +5,10 @@ import { listChoices, saveChoices } from '@/db/queries/mail-choices';
 import { startDraft } from '@/db/queries/spec-drafts';
 import { sendVersion } from '@/db/queries/spec-versions';
 import { buildStages, specTemplates } from '@/db/schema';
-import { writeDueDigests } from '@/lib/jobs/digests';
-import { sendDueMail } from '@/lib/jobs/outbox';
 import { signOffCast } from '../../support/sign-off-world';
 import { smallSpec } from '../../support/spec';
 import { DAY_MS, NOW_MS } from '../../support/world';
-import { clock, openStandIns } from './stand-ins';
+import { clock, openStandIns, runJobs } from './stand-ins';
 
 const { mailsTo, behave } = await openStandIns();
 await write((tx) =>
@@ -21,12 +19,6 @@ beforeEach(async () => {
   await behave();
   clock.nowMs = NOW_MS;
 });
-
-async function runJobs(nowMs = clock.nowMs): Promise<void> {
-  clock.nowMs = nowMs;
-  await writeDueDigests('digests', clock.now);
-  await sendDueMail('sender', clock.now);
-}
 
 /** A build whose spec went out, and whose stages have all begun. */
 async function openFrozen(wish: { heldUntilAt?: number } = {}) {

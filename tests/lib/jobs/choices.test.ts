@@ -8,12 +8,10 @@ import { insertMail, queueMail } from '@/db/queries/outbox';
 import { builds, mailSettings, outbox, users } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
 import { BadInput } from '@/lib/errors';
-import { writeDueDigests } from '@/lib/jobs/digests';
-import { sendDueMail } from '@/lib/jobs/outbox';
 import { previewDigest } from '@/lib/jobs/preview-digest';
 import { mailKinds, type MailKind } from '@/lib/mail/kinds';
 import { DAY_MS, makeBuild, makePerson, makeQuestion, NOW_MS, type Person } from '../../support/world';
-import { clock, openStandIns } from './stand-ins';
+import { clock, openStandIns, runJobs } from './stand-ins';
 
 const { mailsTo, behave } = await openStandIns();
 
@@ -21,12 +19,6 @@ beforeEach(async () => {
   await behave();
   clock.nowMs = NOW_MS;
 });
-
-async function runJobs(nowMs = clock.nowMs): Promise<void> {
-  clock.nowMs = nowMs;
-  await writeDueDigests('digests', clock.now);
-  await sendDueMail('sender', clock.now);
-}
 
 /** A build that is ready, and a question on it that still waits: something to tell either side. */
 async function openNews(over: { heldUntilAt?: number } = {}) {

@@ -25,7 +25,7 @@ import {
   type Person,
   type TestBuild,
 } from '../../support/world';
-import { clock, openStandIns } from './stand-ins';
+import { clock, openStandIns, runJobs } from './stand-ins';
 
 const { database, mailsTo, behave } = await openStandIns();
 
@@ -66,13 +66,6 @@ const keepWindow = ({ id: buildId }: TestBuild) =>
 
 const post = ({ build, builder }: Awaited<ReturnType<typeof openBuild>>, text: string) =>
   postEntry(builder, entryFor(build, { note: noteOf(text) }), clock.nowMs);
-
-/** Runs the jobs as they would run at this moment. */
-async function runJobs(nowMs = clock.nowMs): Promise<void> {
-  clock.nowMs = nowMs;
-  await writeDueDigests('digests', clock.now);
-  await sendDueMail('sender', clock.now);
-}
 
 const digestsOf = (person: Person) => db().select().from(outbox).where(eq(outbox.userId, person.id));
 const settingsOf = async (person: Person) =>

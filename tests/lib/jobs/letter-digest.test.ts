@@ -8,13 +8,11 @@ import { saveMailSettings } from '@/db/queries/mail-settings';
 import { queueMail } from '@/db/queries/outbox';
 import { builds, mailSettings } from '@/db/schema';
 import { newId } from '@/db/schema/columns';
-import { writeDueDigests } from '@/lib/jobs/digests';
-import { sendDueMail } from '@/lib/jobs/outbox';
 import { previewDigest } from '@/lib/jobs/preview-digest';
 import { CORRECTABLE_MS } from '@/lib/questions/thread-rules';
 import { askOn, openThread, writeOn } from '../../support/question-world';
 import { DAY_MS, NOW_MS } from '../../support/world';
-import { clock, openStandIns } from './stand-ins';
+import { clock, openStandIns, runJobs } from './stand-ins';
 
 const { mailsTo, behave } = await openStandIns();
 
@@ -22,12 +20,6 @@ beforeEach(async () => {
   await behave();
   clock.nowMs = NOW_MS;
 });
-
-async function runJobs(nowMs: number): Promise<void> {
-  clock.nowMs = nowMs;
-  await writeDueDigests('digests', clock.now);
-  await sendDueMail('sender', clock.now);
-}
 
 /** An owner who is told of answers in the digest, and an answer written at `atMs`. */
 async function answered(cadence: 'at_once' | 'daily', atMs: number) {

@@ -3,6 +3,8 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll } from 'vitest';
 import { z } from 'zod';
+import { writeDueDigests } from '@/lib/jobs/digests';
+import { sendDueMail } from '@/lib/jobs/outbox';
 import { startMailRoom } from '@/lib/fakes/mail-room/server';
 import { startObjectStore } from '@/lib/fakes/object-store/server';
 import { openTestDatabase, testEnv } from '../../support/database';
@@ -22,6 +24,13 @@ const listedMails = z.array(
 
 /** A clock that a test moves by hand, in milliseconds since 1970. */
 export const clock = { nowMs: 0, now: () => clock.nowMs };
+
+/** Runs the jobs that mail as they would run at this moment. */
+export async function runJobs(nowMs = clock.nowMs): Promise<void> {
+  clock.nowMs = nowMs;
+  await writeDueDigests('digests', clock.now);
+  await sendDueMail('sender', clock.now);
+}
 
 /** The database, a mail room and an object store of this test file's own, over HTTP, with the shop's rows. */
 export async function openStandIns() {
