@@ -14,7 +14,8 @@ export function useKeepDraft(keeper: DraftKeeper, draft: Draft, opened: Draft): 
     const { step } = draft.posting;
     const movedOn = step !== lastStep.current;
     lastStep.current = step;
-    if (draft === opened || step === 'posted') return;
+    // What is under way has been written down before it left.
+    if (draft === opened || step === 'posted' || step === 'sending') return;
     if (movedOn) void keeper.keepNow(draft);
     else keeper.keepSoon(draft);
   }, [keeper, draft, opened]);

@@ -13,13 +13,13 @@ type FloorTableProps = {
 };
 
 /** The columns of the wide table; below that a row is a card of two columns. */
-const headClass = 'xl:grid-cols-[8.5rem_9rem_minmax(12rem,1fr)_6rem_7rem_8.5rem_3.5rem] xl:gap-x-4 xl:px-3';
+const tableClass = '[--floor-columns:8.5rem_9rem_minmax(12rem,1fr)_6rem_7rem_8.5rem_3.5rem]';
 
 /** Said once for five hundred rows. Those out of sight are there, and cost no layout. */
 const rowsClass =
   '*:grid *:grid-cols-[minmax(0,3fr)_minmax(0,2fr)] *:items-center *:gap-x-4 *:gap-y-1.5 *:border-b *:border-line *:px-4 *:py-3 ' +
   '*:[content-visibility:auto] *:[contain-intrinsic-size:auto_10.5rem] xl:*:[contain-intrinsic-size:auto_4rem] ' +
-  'xl:*:min-h-16 xl:*:grid-cols-[8.5rem_9rem_minmax(12rem,1fr)_6rem_7rem_8.5rem_3.5rem] xl:*:px-3 xl:*:py-2';
+  'xl:*:min-h-16 xl:*:grid-cols-(--floor-columns) xl:*:px-3 xl:*:py-2';
 
 /** All builds with their necks under one set of stage names; on a narrow page each is a card. */
 export function FloorTable({ rows, routes, total, onMove }: FloorTableProps) {
@@ -30,7 +30,12 @@ export function FloorTable({ rows, routes, total, onMove }: FloorTableProps) {
       </EmptyState>
     );
   return (
-    <div role="table" aria-label="Builds on the floor" aria-rowcount={total + 1} className="bg-sheet">
+    <div
+      role="table"
+      aria-label="Builds on the floor"
+      aria-rowcount={total + 1}
+      className={clsx('bg-sheet', tableClass)}
+    >
       <div role="rowgroup">
         <TableHead names={commonRoute(rows, routes)?.stages.map(({ name }) => name) ?? []} />
       </div>
@@ -50,7 +55,7 @@ function TableHead({ names }: { names: string[] }) {
     <div
       role="row"
       aria-rowindex={1}
-      className={clsx('items-end border-b-2 border-ink pb-2 max-xl:sr-only xl:grid', headClass)}
+      className="items-end border-b-2 border-ink pb-2 max-xl:sr-only xl:grid xl:grid-cols-(--floor-columns) xl:gap-x-4 xl:px-3"
     >
       <span role="columnheader" className={heads}>
         Order

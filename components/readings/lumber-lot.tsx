@@ -51,6 +51,12 @@ export function LumberLot() {
   );
 }
 
+const boardFields = [
+  { name: 'thickness', label: 'Thickness', unit: undefined },
+  { name: 'width', label: 'Width', unit: 'in' },
+  { name: 'length', label: 'Length', unit: 'ft' },
+] as const;
+
 type BoardRowProps = {
   number: number;
   board: TypedBoard;
@@ -67,29 +73,17 @@ function BoardRow({ number, board, doubts, say }: BoardRowProps) {
           Board {number}
         </p>
         <div className="grid grid-cols-3 items-start gap-3">
-          <ReadingInput
-            label="Thickness"
-            inputMode="text"
-            value={board.thickness}
-            onType={(thickness) => say({ thickness })}
-            doubt={doubts.thickness}
-          />
-          <ReadingInput
-            label="Width"
-            unit="in"
-            inputMode="text"
-            value={board.width}
-            onType={(width) => say({ width })}
-            doubt={doubts.width}
-          />
-          <ReadingInput
-            label="Length"
-            unit="ft"
-            inputMode="text"
-            value={board.length}
-            onType={(length) => say({ length })}
-            doubt={doubts.length}
-          />
+          {boardFields.map(({ name, label, unit }) => (
+            <ReadingInput
+              key={name}
+              label={label}
+              unit={unit}
+              inputMode="text"
+              value={board[name]}
+              onType={(text) => say({ [name]: text })}
+              doubt={doubts[name]}
+            />
+          ))}
         </div>
       </fieldset>
     </li>

@@ -1,7 +1,7 @@
 import { isRefused } from '../craft/doubt';
 import type { BoothReading, ShownReading } from './reading';
 import { nothingRead, type PartRead, type TypedReadings } from './typed';
-import { airTrouble, airWords, readAir } from './air';
+import { airWords, readAir } from './air';
 
 type Parts = Pick<TypedReadings, 'temperature' | 'temperatureUnit' | 'humidity'>;
 
@@ -13,9 +13,6 @@ export function readBooth(typed: Parts): PartRead {
   const value: BoothReading = { kind: 'booth_air', ...air };
   return { reading: { value, itemKey: null }, shown: showBooth(value), doubts, missing };
 }
-
-/** Why the air of a booth cannot be meant, or null. */
-export const boothTrouble = (value: BoothReading) => airTrouble(value);
 
 /** "22 °C (72 °F), 48 %". What air a product may be put on in stands on its data sheet. */
 export function showBooth(value: BoothReading): ShownReading {

@@ -1,4 +1,5 @@
-import { boothTrouble, showBooth } from './booth';
+import { airTrouble } from './air';
+import { showBooth } from './booth';
 import { coatTrouble, showCoat } from './coat';
 import { colourTrouble, showColour } from './colour';
 import { lineOfSetup, lineTrouble, showLine, type MeasureLine } from './measure-line';
@@ -20,7 +21,7 @@ export function judgeReading({ value, itemKey }: NewReading, build: BenchBuild):
     case 'wood_room':
       return said(woodRoomTrouble(value), () => showWoodRoom(value));
     case 'booth_air':
-      return said(boothTrouble(value), () => showBooth(value));
+      return said(airTrouble(value), () => showBooth(value));
     case 'coat':
       return said(coatTrouble(value), () => showCoat(value, build.coats));
     case 'abrasives':
